@@ -1,0 +1,34 @@
+#include <fmt/format.h>
+
+#include <cstdio>
+#include <exception>
+
+#include "apps/commands.hpp"
+#include "core/error.hpp"
+
+namespace {
+
+int shown(const pilotis::Error& error) {
+  fmt::print(stderr, "pilotis: {}\n", error.what());
+  return error.kind() == pilotis::ErrorKind::input ? pilotis::wrong_input : pilotis::outside_failed;
+}
+
+}  // namespace
+
+int main(int argc, char** argv) {
+  int status = pilotis::all_hold;
+  CLI::App app{"Pilotis: how a multi-story frame moves when the ground shakes, and what that means.", "pilotis"};
+  app.set_version_flag("--version", "pilotis " PILOTIS_VERSION);
+  app.require_subcommand(1);
+  try {
+    app.parse(argc, argv);
+  } catch (const CLI::ParseError& e) {
+    return app.exit(e) == 0 ? pilotis::all_hold : pilotis::wrong_input;
+  } catch (const pilotis::Error& e) {
+    return shown(e);
+  } catch (const std::exception& e) {
+    fmt::print(stderr, "pilotis: {}\n", e.what());
+    return pilotis::outside_failed;
+  }
+  return status;
+}

@@ -1,0 +1,19 @@
+#include "core/laws/bouc_wen.hpp"
+
+#include <fmt/format.h>
+
+#include <cmath>
+
+#include "core/error.hpp"
+
+namespace pilotis {
+
+BoucWen BoucWen::make(std::span<const double> v) {
+  const BoucWen law{v[0], v[1], v[2], v[3], v[4], v[5], v[6]};
+  if (std::abs(law.gamma) > law.beta)
+    throw input_error("gamma", fmt::format("found {:g}", law.gamma),
+                      fmt::format("it must lie between -beta and beta, {:g}, or a loop could give energy back", law.beta));
+  return law;
+}
+
+}  // namespace pilotis

@@ -1,0 +1,63 @@
+// Limits against responses.
+#pragma once
+
+#include <string>
+#include <vector>
+
+#include "core/response/results.hpp"
+
+namespace pilotis {
+
+enum class Statistic { mean, max, median, percentile };
+
+// What the suite's peaks of one quantity may reach at most.
+struct Limit {
+  const Quantity* quantity = nullptr;  // a listed one, or residual_drift_quantity()
+  Statistic statistic = Statistic::max;
+  double percentile = 0;        // 0..100, for Statistic::percentile
+  double value = 0;             // SI, > 0; held against the magnitude of the peaks
+  std::string source;           // where the limit comes from, as the user states it
+  std::vector<double> factors;  // which factors it is for; empty: all of the study
+};
+
+// |residual drift| / height after the tail: not a peak, but limits may name it: "residual_drift_ratio".
+const Quantity& residual_drift_ratio();
+
+enum class Finding {
+  holds,
+  exceeded,
+  too_close,    // the value is within its step error of the limit, on either side
+  undetermined  // runs that did not converge leave it open
+};
+
+// One limit at one factor. "Place" is the story or floor (from 1) where the statistic is largest; 0 for whole-run quantities.
+struct Outcome {
+  int limit = 0;         // index into the limits
+  double factor = 1;
+  double value = 0;      // SI; infinity when collapsed runs decide it
+  double step_error = 0; // SI, of the statistic: mean of the errors for a mean, the governing run's otherwise; NaN: unknown
+  int place = 0;
+  std::string motion;    // with the largest peak at that place
+  double margin = 0;     // (limit - value) / limit
+  int runs = 0, collapsed = 0, not_converged = 0;  // all runs at that factor; those that collapsed; those not completed
+  bool exceeded = false; // the plain comparison value > limit
+  Finding finding = Finding::holds;
+};
+
+struct Verdict {
+  std::vector<Outcome> outcomes;
+  int runs = 0, collapsed = 0, not_converged = 0;
+  bool any_exceeded() const;
+};
+
+// A collapsed run counts as beyond every limit; a run that did not converge leaves a limit undetermined unless the
+// others already exceed it. Percentile: linear interpolation between order statistics (Hyndman & Fan 1996, type 7).
+Verdict judge(const StudyResults& results, const std::vector<Limit>& limits);
+
+// 0 all hold, 1 a limit is exceeded or a run collapsed, 3 a run was not completed.
+int exit_status(const Verdict& verdict);
+
+std::string_view statistic_name(Statistic statistic);
+std::string_view finding_name(Finding finding);
+
+}  // namespace pilotis

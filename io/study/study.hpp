@@ -1,0 +1,76 @@
+// The study file in memory. read_study() makes it from TOML; every number is SI by then.
+#pragma once
+
+#include <filesystem>
+#include <map>
+#include <optional>
+#include <span>
+#include <string>
+#include <vector>
+
+#include "core/building/stick.hpp"
+#include "core/motion/accelerogram.hpp"
+#include "core/parameter.hpp"
+#include "core/verdict/limit.hpp"
+
+namespace pilotis {
+
+// The units a study writes bare numbers in and screens show. Time is always seconds.
+struct StudyUnits {
+  std::string force = "N", length = "m";
+  std::string mass;  // empty: the consistent one, force s2/length
+  // SI factor of a bare number / of a shown number, and its name, e.g. "kN/m".
+  double factor(Dimension dimension) const;
+  std::string name(Dimension dimension) const;
+};
+
+// A scheme by name with its parameters (SI) in the order of the catalogue's Method::parameters, defaults filled in.
+struct SchemeChoice {
+  std::string name;
+  std::vector<double> values;
+};
+
+// Force on one floor over time, from a table in the study or a file.
+struct FloorForce {
+  int floor = 1;               // counted from 1
+  std::vector<double> times;   // s, rising, first 0 or later; the force is zero before the first and after the last
+  std::vector<double> forces;  // N, linear between
+};
+
+struct MarchSettings {
+  SchemeChoice scheme;
+  std::optional<double> step;          // s; empty: "auto"
+  double tail = 10;                    // s of free vibration after each motion
+  std::optional<double> duration;      // s; required without motions and floor forces
+  bool error_check = true;
+  double collapse_drift_ratio = 0.10;  // a run stops when a story passes it
+  double tolerance = 1e-9;             // Newton: largest out-of-balance force / largest load of the run
+  int halvings = 10;                   // of a step that does not converge, before the run is given up
+};
+
+struct KeepSettings {
+  std::vector<const Quantity*> histories;
+  int every = 1;  // keep every n-th step
+};
+
+struct Study {
+  std::filesystem::path file;
+  std::string text;  // the file as read
+  std::string title;
+  StudyUnits units;
+  Stick building;
+  std::vector<Motion> motions;     // loaded, in the order of the study, the study's own factors applied
+  std::vector<double> factors;     // at least one; {1} by default
+  std::vector<FloorForce> forces;
+  std::vector<double> initial_displacement, initial_velocity;  // m, m/s, [floor]; empty: at rest
+  MarchSettings march;
+  KeepSettings keep;
+  std::vector<Limit> limits;
+  std::vector<std::string> notes;  // what the reader assumed and the user should know, one line each
+};
+
+// Throws Error with file, line, key, what was found and what is allowed (with the nearest known key).
+// `schemes` is the catalogue a study may choose from. Motion files are relative to the study file.
+Study read_study(const std::filesystem::path& file, std::span<const Method> schemes);
+
+}  // namespace pilotis

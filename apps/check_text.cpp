@@ -145,6 +145,13 @@ std::string keep_text(const KeepSettings& keep) {
                      keep.every == 1 ? "step" : fmt::format("{} steps", keep.every));
 }
 
+std::string limit_text(const Limit& limit, const StudyUnits& units) {
+  const std::string text = with_unit(limit.value, limit.quantity->dimension, units);
+  return limit.quantity->dimension == Dimension::acceleration
+             ? fmt::format("{} ({:.6g} g)", text, limit.value / standard_gravity)
+             : text;
+}
+
 std::string limits_text(const Study& study) {
   if (study.limits.empty()) return "limits: none\n";
   TextTable table({{"quantity", Align::left},
@@ -153,8 +160,7 @@ std::string limits_text(const Study& study) {
                    {"at factors", Align::left},
                    {"source", Align::left}});
   for (const Limit& limit : study.limits)
-    table.add_row({std::string(limit.quantity->name), statistic_text(limit),
-                   with_unit(limit.value, limit.quantity->dimension, study.units),
+    table.add_row({std::string(limit.quantity->name), statistic_text(limit), limit_text(limit, study.units),
                    limit.factors.empty() ? "all" : fmt::format("{:g}", fmt::join(limit.factors, ", ")), limit.source});
   return fmt::format("limits: {}\n{}", study.limits.size(), table.text());
 }

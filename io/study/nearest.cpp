@@ -8,6 +8,15 @@
 
 namespace pilotis {
 
+namespace {
+
+// "stat" for "statistic", "maximum" for "max".
+bool one_starts_the_other(std::string_view a, std::string_view b) {
+  return std::min(a.size(), b.size()) >= 3 && (a.starts_with(b) || b.starts_with(a));
+}
+
+}  // namespace
+
 int edit_distance(std::string_view a, std::string_view b) {
   // rows[i][j]: distance of the first i letters of a and the first j of b.
   std::vector<std::vector<int>> rows(a.size() + 1, std::vector<int>(b.size() + 1));
@@ -27,6 +36,7 @@ std::string_view nearest(std::string_view name, std::span<const std::string_view
   std::string_view best;
   int least = 0;
   for (const std::string_view candidate : known) {
+    if (one_starts_the_other(name, candidate)) return candidate;
     const int distance = edit_distance(name, candidate);
     if (best.empty() || distance < least) {
       best = candidate;

@@ -11,7 +11,8 @@ namespace pilotis {
 // string alignment). Source: Damerau 1964; Levenshtein 1966.
 int edit_distance(std::string_view a, std::string_view b);
 
-// Empty when `known` is empty or nothing in it is at all alike (more than half of the letters differ).
+// The known name that starts with `name` or starts it, else the one at the least distance. Empty when `known` is empty
+// or nothing in it is at all alike (more than half of the letters differ).
 std::string_view nearest(std::string_view name, std::span<const std::string_view> known);
 
 // `did you mean "height"? allowed: label, height, weight`; without the question when nothing is alike.

@@ -36,14 +36,16 @@ std::string_view nearest(std::string_view name, std::span<const std::string_view
   std::string_view best;
   int least = 0;
   for (const std::string_view candidate : known) {
-    if (one_starts_the_other(name, candidate)) return candidate;
     const int distance = edit_distance(name, candidate);
     if (best.empty() || distance < least) {
       best = candidate;
       least = distance;
     }
   }
-  return 2 * least <= static_cast<int>(std::max(name.size(), best.size())) ? best : std::string_view{};
+  if (2 * least <= static_cast<int>(std::max(name.size(), best.size()))) return best;
+  const auto start =
+      std::find_if(known.begin(), known.end(), [&](std::string_view k) { return one_starts_the_other(name, k); });
+  return start == known.end() ? std::string_view{} : *start;
 }
 
 std::string did_you_mean(std::string_view name, std::span<const std::string_view> known) {

@@ -1,5 +1,6 @@
 """check_format.py CLANG_FORMAT ROOT: every .hpp and .cpp of the tree stands as clang-format would write it."""
 import pathlib
+import re
 import subprocess
 import sys
 
@@ -11,8 +12,12 @@ def badly_formatted(clang_format, root):
     files = [str(file) for file in source_files(root) if file.suffix in (".hpp", ".cpp")]
     if not files:
         sys.exit(f"no .hpp or .cpp under {root}")
-    command = [clang_format, "--dry-run", "-Werror", "--style=file"]
-    return [file for file in files if subprocess.run([*command, file], cwd=root, capture_output=True).returncode != 0]
+    checked = subprocess.run(
+        [clang_format, "--dry-run", "-Werror", "--style=file", *files], cwd=root, capture_output=True, text=True)
+    bad = sorted(set(re.findall(r"^(.+?):\d+:\d+: error:", checked.stderr, re.MULTILINE)))
+    if checked.returncode != 0 and not bad:
+        sys.exit(checked.stderr)
+    return bad
 
 
 def main(clang_format, root):

@@ -43,11 +43,17 @@ void check_refusal() {
   }
 }
 
+// The unit database is found at run time too: 1 kN/mm = 1e6 N/m.
+void check_units() {
+  expect(near(pilotis::si_factor("kN/mm", pilotis::Dimension::stiffness, "consumer"), 1e6), "1 kN/mm is 1e6 N/m");
+}
+
 }  // namespace
 
 int main() {
   check_bilinear();
   check_refusal();
+  check_units();
   expect(!pilotis::scheme_catalogue().empty(), "the schemes are listed");
   return failures == 0 ? 0 : 1;
 }

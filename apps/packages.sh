@@ -1,7 +1,7 @@
 # What Pilotis is built from and tested with, all from Debian 12. Sourced by apps/demo.sh and tests/run.sh.
 
 build_packages=(
-  g++ cmake ninja-build ccache pkg-config
+  g++ cmake ninja-build ccache
   libeigen3-dev libboost-dev libhdf5-dev libfmt-dev libtomlplusplus-dev libcli11-dev libudunits2-dev libssl-dev
   nlohmann-json3-dev
 )

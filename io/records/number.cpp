@@ -1,0 +1,74 @@
+#include "io/records/number.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <charconv>
+#include <cmath>
+#include <system_error>
+
+#include "core/error.hpp"
+#include "io/records/text.hpp"
+
+namespace pilotis {
+
+namespace {
+
+// As std::from_chars wants it: a point, an E, no plus in front. Empty when the decimal sign is the wrong one.
+std::string normal_notation(std::string_view token, char decimal_sign) {
+  if (decimal_sign == ',' && token.find('.') != std::string_view::npos) return {};
+  if (token.starts_with('+') && !token.substr(1).starts_with('-')) token.remove_prefix(1);
+  std::string text = lower_case(token);
+  if (text.find_first_of("0123456789") == std::string::npos) return text;  // perhaps "nan" or "inf"
+  std::replace(text.begin(), text.end(), 'd', 'e');
+  if (decimal_sign == ',') std::replace(text.begin(), text.end(), ',', '.');
+  return text;
+}
+
+}  // namespace
+
+ParsedNumber parse_number(std::string_view token, char decimal_sign) {
+  const std::string text = normal_notation(token, decimal_sign);
+  double value = 0;
+  const auto [end, error] = std::from_chars(text.data(), text.data() + text.size(), value);
+  if (error == std::errc::invalid_argument || end != text.data() + text.size()) return {};
+  if (error == std::errc::result_out_of_range) {
+    const bool tiny = text.find("e-") != std::string::npos;
+    return tiny ? ParsedNumber{ParsedNumber::Kind::number, 0} : ParsedNumber{ParsedNumber::Kind::not_finite, 0};
+  }
+  if (!std::isfinite(value)) return {ParsedNumber::Kind::not_finite, 0};
+  return {ParsedNumber::Kind::number, value};
+}
+
+double require_number(std::string_view token, const std::string& where, char decimal_sign) {
+  const ParsedNumber parsed = parse_number(token, decimal_sign);
+  if (parsed.kind == ParsedNumber::Kind::number) return parsed.value;
+  const std::string found = "found " + quoted(token);
+  if (parsed.kind == ParsedNumber::Kind::not_finite)
+    throw input_error(where, found + ", which is not a finite number", "every value must be finite");
+  throw input_error(where, found + " where a number is needed",
+                    fmt::format("a number such as 0{0}125 or -1{0}25E-02 is allowed here", decimal_sign));
+}
+
+Precision printed_precision(std::string_view token) {
+  const std::string text = lower_case(token);
+  const std::size_t mantissa_end = std::min(text.find_first_of("ed"), text.size());
+  Precision precision;
+  bool after_sign = false;
+  for (char c : text.substr(0, mantissa_end)) {
+    if (c == '.' || c == ',') after_sign = true;
+    if (c < '0' || c > '9') continue;
+    if (after_sign) ++precision.decimals;
+    if (c != '0' || precision.digits > 0) ++precision.digits;
+  }
+  if (mantissa_end < text.size()) {
+    std::size_t begin = mantissa_end + 1;
+    if (text.substr(begin).starts_with('+')) ++begin;
+    int exponent = 0;
+    std::from_chars(text.data() + begin, text.data() + text.size(), exponent);
+    precision.decimals -= exponent;
+  }
+  return precision;
+}
+
+}  // namespace pilotis

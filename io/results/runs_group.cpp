@@ -1,6 +1,8 @@
 // /motions and /runs: one value per motion, one value per run.
 #include <fmt/format.h>
 
+#include <functional>
+
 #include "core/error.hpp"
 #include "io/results/group_reader.hpp"
 #include "io/results/group_writer.hpp"

@@ -48,12 +48,29 @@ void check_units() {
   expect(near(pilotis::si_factor("kN/mm", pilotis::Dimension::stiffness, "consumer"), 1e6), "1 kN/mm is 1e6 N/m");
 }
 
+// Each of these pulls in what io is made of: TOML, HDF5, the digest and the record formats.
+template <class Read>
+void expect_refused(Read read, const char* what) {
+  try {
+    read();
+    expect(false, what);
+  } catch (const pilotis::Error&) {
+  }
+}
+void check_files() {
+  expect_refused([] { pilotis::read_study("gone.toml", pilotis::scheme_catalogue()); },
+                 "a study that is gone is refused");
+  expect_refused([] { pilotis::read_results("gone.h5"); }, "a result file that is gone is refused");
+  expect_refused([] { pilotis::read_record("gone.csv"); }, "a record that is gone is refused");
+}
+
 }  // namespace
 
 int main() {
   check_bilinear();
   check_refusal();
   check_units();
+  check_files();
   expect(!pilotis::scheme_catalogue().empty(), "the schemes are listed");
   return failures == 0 ? 0 : 1;
 }

@@ -79,7 +79,8 @@ def link_breaches(root, lines):
         room = rooms[name]
         if room is None:
             continue
-        for word in re.findall(r"[\w:.+-]+", libraries.replace("$<BUILD_INTERFACE:", " ").replace("$<LINK_ONLY:", " ")):
+        plain = re.sub(r"\$<(BUILD_INTERFACE|LINK_ONLY):", " ", libraries)
+        for word in sorted(set(re.findall(r"[\w:.+-]+", plain))):
             other = rooms.get(word)
             if other and other not in MAY_USE[room]:
                 breaches.append(f"target {name} of {room} links {word} of {other}")

@@ -20,6 +20,7 @@ int main(int argc, char** argv) {
   CLI::App app{"Pilotis: how a multi-story frame moves when the ground shakes, and what that means.", "pilotis"};
   app.set_version_flag("--version", "pilotis " PILOTIS_VERSION);
   app.require_subcommand(1);
+  pilotis::add_check(app, status);
   try {
     app.parse(argc, argv);
   } catch (const CLI::ParseError& e) {

@@ -57,8 +57,8 @@ struct DampingCheck {
   }
 
   void operator()(const RayleighByFactors& damping) const {
-    require(not_negative(damping.mass_factor), where + ".mass_factor", fmt::format("found {:g} 1/s", damping.mass_factor),
-            "it must be at least 0 1/s");
+    require(not_negative(damping.mass_factor), where + ".mass_factor",
+            fmt::format("found {:g} 1/s", damping.mass_factor), "it must be at least 0 1/s");
     require(not_negative(damping.stiffness_factor), where + ".stiffness_factor",
             fmt::format("found {:g} s", damping.stiffness_factor), "it must be at least 0 s");
   }

@@ -12,7 +12,8 @@ namespace {
 
 void validate_step(double step, const std::string& where) {
   if (!std::isfinite(step) || step <= 0)
-    throw input_error(where, fmt::format("found a time step of {:g} s", step), "it must be finite and greater than 0 s");
+    throw input_error(where, fmt::format("found a time step of {:g} s", step),
+                      "it must be finite and greater than 0 s");
 }
 
 void validate_first_sample(const Accelerogram& record, const std::string& where) {

@@ -43,7 +43,7 @@ ParsedNumber parse_number(std::string_view token, char decimal_sign) {
 double require_number(std::string_view token, const std::string& where, char decimal_sign) {
   const ParsedNumber parsed = parse_number(token, decimal_sign);
   if (parsed.kind == ParsedNumber::Kind::number) return parsed.value;
-  const std::string found = "found " + quoted(token);
+  const std::string found = "found " + in_quotes(token);
   if (parsed.kind == ParsedNumber::Kind::not_finite)
     throw input_error(where, found + ", which is not a finite number", "every value must be finite");
   throw input_error(where, found + " where a number is needed",

@@ -9,8 +9,12 @@ namespace pilotis {
 // Decimal notation with an optional sign, decimal sign and exponent (E or D, either case), e.g. "-.8075668E-03",
 // "+1.5d2", "3". A magnitude too small for a double is zero.
 struct ParsedNumber {
-  enum class Kind { number, not_finite, not_a_number } kind = Kind::not_a_number;  // not_finite: NaN, infinity, overflow
-  double value = 0;                                                                 // when it is a number
+  enum class Kind {
+    number,
+    not_finite,
+    not_a_number
+  } kind = Kind::not_a_number;  // not_finite: NaN, infinity, overflow
+  double value = 0;             // when it is a number
 };
 ParsedNumber parse_number(std::string_view token, char decimal_sign = '.');
 

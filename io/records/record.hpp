@@ -14,9 +14,9 @@ namespace pilotis {
 
 // What a study says about a file that the file may not say itself. Saying what the file says differently is an error.
 struct RecordHints {
-  std::optional<std::string> unit;         // acceleration unit by name, e.g. "g", "cm/s2"
-  std::optional<double> step;              // s
-  std::optional<double> first_sample_at;   // s
+  std::optional<std::string> unit;        // acceleration unit by name, e.g. "g", "cm/s2"
+  std::optional<double> step;             // s
+  std::optional<double> first_sample_at;  // s
 };
 
 // One component as read, in m/s2.

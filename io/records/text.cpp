@@ -31,7 +31,7 @@ std::vector<TextLine> lines_of(std::string_view content) {
   return lines;
 }
 
-std::string_view trimmed(std::string_view text) {
+std::string_view stripped(std::string_view text) {
   const std::size_t first = text.find_first_not_of(blanks);
   if (first == std::string_view::npos) return {};
   return text.substr(first, text.find_last_not_of(blanks) - first + 1);
@@ -60,7 +60,7 @@ std::vector<std::string_view> words_of(std::string_view text) {
 
 std::string at_line(const std::string& file, int line) { return fmt::format("{}:{}", file, line); }
 
-std::string quoted(std::string_view text) {
+std::string in_quotes(std::string_view text) {
   constexpr std::size_t most = 60;
   std::string clean(text.substr(0, most));
   for (char& c : clean)

@@ -17,8 +17,8 @@ struct TextLine {
 // (control-Z) ends the text.
 std::vector<TextLine> lines_of(std::string_view content);
 
-std::string_view trimmed(std::string_view text);  // without blanks and tabs at both ends
-std::string lower_case(std::string_view text);    // ASCII letters only
+std::string_view stripped(std::string_view text);            // without blanks and tabs at both ends
+std::string lower_case(std::string_view text);               // ASCII letters only
 bool holds(std::string_view text, std::string_view phrase);  // ignoring the case of ASCII letters
 
 // Pieces between blanks and tabs; never empty ones.
@@ -27,6 +27,6 @@ std::vector<std::string_view> words_of(std::string_view text);
 // "file:line", for messages.
 std::string at_line(const std::string& file, int line);
 // Found text in quotes, shortened and without control characters, for messages.
-std::string quoted(std::string_view text);
+std::string in_quotes(std::string_view text);
 
 }  // namespace pilotis

@@ -43,7 +43,8 @@ void add_stories(TableReader table, double gravity_value, std::vector<Story>& st
   story.label = table.text_or("label", "");
   story.height = table.quantity(height);
   story.mass = floor_mass(table, gravity_value);
-  story.spring = read_spring(table.at("spring", "give the spring of the story, such as { law = \"linear\", stiffness = 2e5 }"));
+  story.spring =
+      read_spring(table.at("spring", "give the spring of the story, such as { law = \"linear\", stiffness = 2e5 }"));
   story.dashpot = table.quantity(dashpot);
   const double repeat =
       table.quantity(whole_number("repeat", "how many equal stories stand on each other", 1, most_repeats, 1.0));

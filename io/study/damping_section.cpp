@@ -6,10 +6,11 @@ namespace pilotis {
 
 namespace {
 
-constexpr Parameter ratio{"ratio",      Dimension::none, "the damping ratio, a fraction of critical (5% is 0.05),", {}, 0.0, 1.0,
-                          true, false};
+constexpr Parameter ratio{
+    "ratio", Dimension::none, "the damping ratio, a fraction of critical (5% is 0.05),", {}, 0.0, 1.0, true, false};
 constexpr Parameter mass_factor{"mass_factor", Dimension::per_time, "the factor of the mass matrix", {}, 0.0};
-constexpr Parameter stiffness_factor{"stiffness_factor", Dimension::time, "the factor of the stiffness matrix", {}, 0.0};
+constexpr Parameter stiffness_factor{
+    "stiffness_factor", Dimension::time, "the factor of the stiffness matrix", {}, 0.0};
 constexpr std::array<std::string_view, 3> kinds{"rayleigh", "modal", "none"};
 
 const char* const ratio_wanted = "give the damping ratio, such as 0.05";

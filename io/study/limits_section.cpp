@@ -58,8 +58,7 @@ std::vector<double> read_limit_factors(const ValueReader& value, const std::vect
   std::vector<double> chosen;
   for (const ValueReader& item : value.items()) {
     const double wanted = item.quantity(factor);
-    const auto found =
-        std::find_if(factors.begin(), factors.end(), [&](double f) { return same_factor(wanted, f); });
+    const auto found = std::find_if(factors.begin(), factors.end(), [&](double f) { return same_factor(wanted, f); });
     if (found == factors.end())
       throw item.wrong(fmt::format("found {:g}, which is not a factor of this study", wanted),
                        fmt::format("allowed: {}", fmt::join(factors, ", ")));
@@ -108,7 +107,8 @@ KeepSettings read_keep(TableReader table) {
   table.known_keys({"histories", "every"});
   KeepSettings keep;
   keep.histories = read_histories(table.at("histories", "say \"all\", \"none\" or a list of quantities"));
-  keep.every = static_cast<int>(table.quantity(whole_number("every", "how many steps apart instants are kept", 1, 1e6, 1.0)));
+  keep.every =
+      static_cast<int>(table.quantity(whole_number("every", "how many steps apart instants are kept", 1, 1e6, 1.0)));
   return keep;
 }
 

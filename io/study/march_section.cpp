@@ -48,7 +48,8 @@ MarchSettings default_march(std::span<const Method> schemes) {
 }
 
 MarchSettings read_march(TableReader table, std::span<const Method> schemes) {
-  table.known_keys({"scheme", "step", "tail", "duration", "error_check", "collapse_drift_ratio", "tolerance", "halvings"});
+  table.known_keys(
+      {"scheme", "step", "tail", "duration", "error_check", "collapse_drift_ratio", "tolerance", "halvings"});
   MarchSettings march = default_march(schemes);
   if (const auto scheme = table.find("scheme")) march.scheme = read_scheme(*scheme, schemes);
   march.step = read_step(table);
@@ -57,9 +58,9 @@ MarchSettings read_march(TableReader table, std::span<const Method> schemes) {
   if (march.duration && table.has("tail"))
     throw table.at("duration", "").wrong("found both duration and tail", "the one sets the end of a run, or the other");
   march.error_check = table.flag_or("error_check", march.error_check);
-  march.collapse_drift_ratio = table.quantity({"collapse_drift_ratio", Dimension::none,
-                                               "the drift ratio at which a story counts as collapsed",
-                                               march.collapse_drift_ratio, 0.0, 1e300, false});
+  march.collapse_drift_ratio =
+      table.quantity({"collapse_drift_ratio", Dimension::none, "the drift ratio at which a story counts as collapsed",
+                      march.collapse_drift_ratio, 0.0, 1e300, false});
   march.tolerance = table.quantity({"tolerance", Dimension::none, "the out-of-balance force over the largest load",
                                     march.tolerance, 0.0, 1.0, false, false});
   march.halvings = static_cast<int>(table.quantity(

@@ -1,5 +1,5 @@
-// One reader for each section of a study file; study.cpp calls them in order. Each throws Error (input) that names file,
-// line, key, what was found and what is allowed.
+// One reader for each section of a study file; study.cpp calls them in order. Each throws Error (input) that names
+// file, line, key, what was found and what is allowed.
 #pragma once
 
 #include <filesystem>
@@ -34,8 +34,8 @@ TableReader suite_table(const ValueReader& value);
 // The [[force]] tables.
 std::vector<FloorForce> read_forces(const TableReader& root, int floors, const std::filesystem::path& folder);
 
-// Times (s) and forces (N, with `factor_to_si`) from two columns of numbers; blank lines and lines that start with # are
-// passed over. Throws Error with the file and its line.
+// Times (s) and forces (N, with `factor_to_si`) from two columns of numbers; blank lines and lines that start with #
+// are passed over. Throws Error with the file and its line.
 FloorForce read_force_file(const std::filesystem::path& file, double factor_to_si);
 // Times not negative and rising, at least two; throws Error at `where`.
 void require_rising(const FloorForce& force, const std::string& where);

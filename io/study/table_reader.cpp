@@ -57,7 +57,9 @@ ValueReader TableReader::at(std::string_view key, const std::string& meaning) co
   return *value;
 }
 
-std::string TableReader::text(std::string_view key, const std::string& meaning) const { return at(key, meaning).text(); }
+std::string TableReader::text(std::string_view key, const std::string& meaning) const {
+  return at(key, meaning).text();
+}
 
 std::string TableReader::text_or(std::string_view key, const std::string& otherwise) const {
   const auto value = find(key);

@@ -39,11 +39,12 @@ class ValueReader {
 
   std::string text() const;  // not empty
   bool flag() const;
-  // SI. A bare number is in the study's unit (seconds for a time); text carries its own unit. Within the parameter's range.
+  // SI. A bare number is in the study's unit (seconds for a time); text carries its own unit. Within the parameter's
+  // range.
   double quantity(const Parameter& parameter) const;
   // One of `allowed`; the nearest is named when it is none of them.
   std::string choice(std::string_view thing, std::span<const std::string_view> allowed) const;
-  std::vector<ValueReader> items() const;        // of a list
+  std::vector<ValueReader> items() const;                            // of a list
   std::vector<double> quantities(const Parameter& parameter) const;  // of a list
 
  private:
@@ -60,8 +61,8 @@ class TableReader {
   // Throws Error when the value is not a table.
   explicit TableReader(const ValueReader& value);
 
-  // The keys this table may have; throws Error at the first other key, naming the nearest. Call it before reading, again
-  // when what a key says narrows the choice.
+  // The keys this table may have; throws Error at the first other key, naming the nearest. Call it before reading,
+  // again when what a key says narrows the choice.
   void known_keys(std::span<const std::string_view> keys);
   void known_keys(std::initializer_list<std::string_view> keys) { known_keys(std::span(keys.begin(), keys.size())); }
 

@@ -1,10 +1,10 @@
 #include "io/study/toml_tree.hpp"
 
 #include <fmt/format.h>
+#include <toml++/toml.h>
 
 #include <algorithm>
 #include <sstream>
-#include <toml++/toml.h>
 
 #include "core/error.hpp"
 
@@ -30,7 +30,8 @@ void convert_date(const toml::node& from, Node& to) {
   to.kind = NodeKind::date;
   std::ostringstream text;
   from.visit([&text](const auto& value) {
-    if constexpr (toml::is_date<decltype(value)> || toml::is_time<decltype(value)> || toml::is_date_time<decltype(value)>)
+    if constexpr (toml::is_date<decltype(value)> || toml::is_time<decltype(value)> ||
+                  toml::is_date_time<decltype(value)>)
       text << value.get();
   });
   to.text = text.str();
@@ -76,7 +77,8 @@ Node parse_toml(const std::string& content, const std::string& file) {
   } catch (const toml::parse_error& e) {
     std::string problem(e.description());
     // The library shows a line end as an escape.
-    if (const auto at = problem.find("saw '\\n'"); at != std::string::npos) problem.replace(at, 8, "found the end of the line");
+    if (const auto at = problem.find("saw '\\n'"); at != std::string::npos)
+      problem.replace(at, 8, "found the end of the line");
     const bool twice = problem.find("cannot redefine") != std::string::npos;
     throw input_error(fmt::format("{}:{}", file, line_of(e.source())), problem,
                       twice ? "give each key and each table once" : "the file must be TOML (toml.io, version 1.0)");
@@ -85,13 +87,20 @@ Node parse_toml(const std::string& content, const std::string& file) {
 
 std::string described(const Node& node) {
   switch (node.kind) {
-    case NodeKind::text: return fmt::format("the text \"{}\"", node.text);
-    case NodeKind::whole: return fmt::format("the number {}", node.whole);
-    case NodeKind::real: return fmt::format("the number {}", node.real);
-    case NodeKind::flag: return node.flag ? "true" : "false";
-    case NodeKind::date: return fmt::format("the date or time {}", node.text);
-    case NodeKind::array: return fmt::format("a list of {} values", node.items.size());
-    case NodeKind::table: return "a table";
+    case NodeKind::text:
+      return fmt::format("the text \"{}\"", node.text);
+    case NodeKind::whole:
+      return fmt::format("the number {}", node.whole);
+    case NodeKind::real:
+      return fmt::format("the number {}", node.real);
+    case NodeKind::flag:
+      return node.flag ? "true" : "false";
+    case NodeKind::date:
+      return fmt::format("the date or time {}", node.text);
+    case NodeKind::array:
+      return fmt::format("a list of {} values", node.items.size());
+    case NodeKind::table:
+      return "a table";
   }
   return "nothing";
 }

@@ -18,17 +18,28 @@ std::string consistent_mass(const StudyUnits& units) { return fmt::format("{} s2
 
 std::string StudyUnits::name(Dimension dimension) const {
   switch (dimension) {
-    case Dimension::none: return "1";
-    case Dimension::length: return length;
-    case Dimension::time: return "s";
-    case Dimension::mass: return mass.empty() ? consistent_mass(*this) : mass;
-    case Dimension::force: return force;
-    case Dimension::stiffness: return fmt::format("{}/{}", force, length);
-    case Dimension::dashpot: return fmt::format("{} s/{}", force, length);
-    case Dimension::velocity: return fmt::format("{}/s", length);
-    case Dimension::acceleration: return fmt::format("{}/s2", length);
-    case Dimension::moment: return fmt::format("{} {}", force, length);
-    case Dimension::per_time: return "1/s";
+    case Dimension::none:
+      return "1";
+    case Dimension::length:
+      return length;
+    case Dimension::time:
+      return "s";
+    case Dimension::mass:
+      return mass.empty() ? consistent_mass(*this) : mass;
+    case Dimension::force:
+      return force;
+    case Dimension::stiffness:
+      return fmt::format("{}/{}", force, length);
+    case Dimension::dashpot:
+      return fmt::format("{} s/{}", force, length);
+    case Dimension::velocity:
+      return fmt::format("{}/s", length);
+    case Dimension::acceleration:
+      return fmt::format("{}/s2", length);
+    case Dimension::moment:
+      return fmt::format("{} {}", force, length);
+    case Dimension::per_time:
+      return "1/s";
   }
   return "1";
 }
@@ -39,16 +50,21 @@ double StudyUnits::factor(Dimension dimension) const {
   switch (dimension) {
     case Dimension::none:
     case Dimension::time:
-    case Dimension::per_time: return 1;
+    case Dimension::per_time:
+      return 1;
     case Dimension::mass:
       return mass.empty() ? force_factor() / length_factor() : si_factor(mass, Dimension::mass, "units.mass");
-    case Dimension::force: return force_factor();
+    case Dimension::force:
+      return force_factor();
     case Dimension::stiffness:
-    case Dimension::dashpot: return force_factor() / length_factor();
+    case Dimension::dashpot:
+      return force_factor() / length_factor();
     case Dimension::length:
     case Dimension::velocity:
-    case Dimension::acceleration: return length_factor();
-    case Dimension::moment: return force_factor() * length_factor();
+    case Dimension::acceleration:
+      return length_factor();
+    case Dimension::moment:
+      return force_factor() * length_factor();
   }
   return 1;
 }

@@ -86,10 +86,17 @@ bool ValueReader::flag() const {
 double ValueReader::quantity(const Parameter& parameter) const {
   double value = 0;
   switch (node_->kind) {
-    case NodeKind::whole: value = static_cast<double>(node_->whole) * source_->units.factor(parameter.dimension); break;
-    case NodeKind::real: value = node_->real * source_->units.factor(parameter.dimension); break;
-    case NodeKind::text: value = from_text(*this, parameter); break;
-    default: throw wrong_type(needed_quantity(*this, parameter));
+    case NodeKind::whole:
+      value = static_cast<double>(node_->whole) * source_->units.factor(parameter.dimension);
+      break;
+    case NodeKind::real:
+      value = node_->real * source_->units.factor(parameter.dimension);
+      break;
+    case NodeKind::text:
+      value = from_text(*this, parameter);
+      break;
+    default:
+      throw wrong_type(needed_quantity(*this, parameter));
   }
   try {
     require_allowed(parameter, value, where());

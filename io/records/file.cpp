@@ -1,0 +1,79 @@
+#include "io/records/file.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cerrno>
+#include <cstdint>
+#include <cstring>
+#include <fstream>
+
+#include "core/error.hpp"
+
+namespace pilotis {
+
+namespace fs = std::filesystem;
+
+namespace {
+
+constexpr std::uintmax_t most_bytes = std::uintmax_t{1}
+                                      << 30;  // hours of shaking at 1000 samples a second are far less
+constexpr const char* allowed = "the path of a text file with one accelerogram is needed";
+
+void require_ordinary_file(const fs::path& file) {
+  std::error_code trouble;
+  const fs::file_status status = fs::status(file, trouble);
+  if (trouble == std::errc::permission_denied)
+    throw outside_error(file.string(), "this program may not look at the file", "give it permission to read");
+  if (status.type() == fs::file_type::not_found) throw input_error(file.string(), "there is no such file", allowed);
+  if (trouble) throw outside_error(file.string(), "it cannot be looked at: " + trouble.message(), "check the disk");
+  if (fs::is_directory(status)) throw input_error(file.string(), "this is a folder, not a file", allowed);
+  if (!fs::is_regular_file(status)) throw input_error(file.string(), "this is not an ordinary file", allowed);
+}
+
+void require_sensible_size(const fs::path& file) {
+  std::error_code trouble;
+  const std::uintmax_t bytes = fs::file_size(file, trouble);
+  if (trouble) throw outside_error(file.string(), "it cannot be looked at: " + trouble.message(), "check the disk");
+  if (bytes == 0)
+    throw input_error(file.string(), "the file is empty (0 bytes)", "a record needs at least two samples");
+  if (bytes > most_bytes)
+    throw input_error(file.string(), fmt::format("the file has {} bytes", bytes),
+                      fmt::format("a record of one component has at most {}", most_bytes));
+}
+
+bool is_control(char c) {
+  constexpr std::string_view allowed_in_text = "\t\n\r\f\v\x1A";
+  return static_cast<unsigned char>(c) < ' ' && allowed_in_text.find(c) == std::string_view::npos;
+}
+
+}  // namespace
+
+std::string content_of(const fs::path& file) {
+  require_ordinary_file(file);
+  require_sensible_size(file);
+  errno = 0;
+  std::ifstream stream(file, std::ios::binary);
+  if (!stream)
+    throw outside_error(file.string(), fmt::format("it cannot be opened: {}", std::strerror(errno)),
+                        "check that this program may read it");
+  std::string content(fs::file_size(file), '\0');
+  stream.read(content.data(), static_cast<std::streamsize>(content.size()));
+  if (stream.bad()) throw outside_error(file.string(), "reading it failed", "check the disk");
+  content.resize(static_cast<std::size_t>(stream.gcount()));
+  return content;
+}
+
+void require_text(std::string_view content, const std::string& where) {
+  if (content.starts_with("\xFF\xFE") || content.starts_with("\xFE\xFF"))
+    throw input_error(where, "found UTF-16 text", "save the file as UTF-8 or plain ASCII text");
+  const auto found = std::find_if(content.begin(), content.end(), is_control);
+  if (found == content.end()) return;
+  const auto line = 1 + std::count(content.begin(), found, '\n');
+  throw input_error(fmt::format("{}:{}", where, line),
+                    fmt::format("found binary content (byte 0x{:02X} at offset {})", static_cast<unsigned char>(*found),
+                                found - content.begin()),
+                    "a record must be text: export it as two columns, time and acceleration, with their units");
+}
+
+}  // namespace pilotis

@@ -1,0 +1,146 @@
+#include "io/records/table.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <array>
+
+#include "core/error.hpp"
+
+namespace pilotis {
+
+namespace {
+
+constexpr std::string_view comment_marks = "#%*|/";
+constexpr std::string_view separators = " \t,;";
+
+// NaN and overflow count: such a line is a row, and a bad one.
+bool is_numeric(std::string_view token, char decimal_sign = '.') {
+  return parse_number(token, decimal_sign).kind != ParsedNumber::Kind::not_a_number;
+}
+
+bool starts_with_number(std::string_view line) {
+  const std::size_t begin = line.find_first_not_of(separators);
+  if (begin == std::string_view::npos) return false;
+  return is_numeric(line.substr(begin, line.find_first_of(separators, begin) - begin));
+}
+
+std::string_view without_marks(std::string_view comment) {
+  const std::size_t begin = comment.find_first_not_of(comment_marks);
+  return begin == std::string_view::npos ? std::string_view{} : stripped(comment.substr(begin));
+}
+
+bool may_be_decimal(char separator, char sign) { return sign == '.' || separator == ';' || separator == '\t'; }
+
+// All cells are numbers, or blank between separators that can leave a blank.
+bool splits_into_numbers(std::string_view line, char separator) {
+  for (std::string_view cell : cells_of(line, separator)) {
+    const bool blank_cell = cell.empty() && separator != '\t';
+    const bool with_comma = may_be_decimal(separator, ',') && is_numeric(cell, ',');
+    if (!blank_cell && !is_numeric(cell) && !with_comma) return false;
+  }
+  return true;
+}
+
+char separator_of(std::string_view line) {
+  const std::string_view inside = stripped(line);
+  for (char candidate : {';', '\t', ',', ' '})
+    if (inside.find(candidate) != std::string_view::npos && splits_into_numbers(line, candidate)) return candidate;
+  for (char candidate : {';', ',', '\t'})
+    if (inside.find(candidate) != std::string_view::npos) return candidate;
+  return ' ';
+}
+
+// The decimal sign of the whole file: that of the first cell that has one.
+char decimal_sign_of(const std::vector<TextLine>& rows, char separator) {
+  if (!may_be_decimal(separator, ',')) return '.';
+  for (const TextLine& row : rows) {
+    const std::size_t found = row.text.find_first_of(".,");
+    if (found != std::string_view::npos) return row.text[found];
+  }
+  return '.';
+}
+
+std::string_view unquoted(std::string_view cell) {
+  if (cell.size() >= 2 && cell.front() == '"' && cell.back() == '"') cell = stripped(cell.substr(1, cell.size() - 2));
+  return cell;
+}
+
+void require_cells(const std::vector<std::string_view>& cells, const TextLine& row, std::size_t columns,
+                   const std::string& file) {
+  const std::string where = at_line(file, row.number);
+  if (stripped(row.text).empty())
+    throw input_error(where, "found a blank line between the samples", "every row must hold its sample");
+  for (std::size_t i = 0; i < cells.size(); ++i)
+    if (cells[i].empty())
+      throw input_error(where, fmt::format("cell {} of {} is blank in {}", i + 1, cells.size(), in_quotes(row.text)),
+                        "every cell must hold a number; a row must not end with a separator");
+  if (cells.size() != columns)
+    throw input_error(where, fmt::format("found {} value(s) in {}", cells.size(), in_quotes(row.text)),
+                      fmt::format("every row must have as many as the first, {}", columns));
+}
+
+void widen(Precision& finest, std::string_view cell) {
+  const Precision here = printed_precision(cell);
+  finest.decimals = std::max(finest.decimals, here.decimals);
+  finest.digits = std::max(finest.digits, here.digits);
+}
+
+}  // namespace
+
+std::vector<std::string_view> cells_of(std::string_view line, char separator) {
+  if (separator == ' ') return words_of(line);
+  std::vector<std::string_view> cells;
+  for (std::size_t begin = 0; begin <= line.size();) {
+    const std::size_t end = std::min(line.find(separator, begin), line.size());
+    cells.push_back(unquoted(stripped(line.substr(begin, end - begin))));
+    begin = end + 1;
+  }
+  return cells;
+}
+
+PlainText sorted_lines(std::string_view content, const std::string& file) {
+  PlainText sorted;
+  const std::vector<TextLine> lines = lines_of(content);
+  for (const TextLine& line : lines) {
+    const std::string_view text = stripped(line.text);
+    const bool is_comment = !text.empty() && comment_marks.find(text.front()) != std::string_view::npos;
+    if (is_comment)
+      sorted.comments.push_back({line.number, without_marks(text)});
+    else if (!sorted.rows.empty() || starts_with_number(text))
+      sorted.rows.push_back(line);
+    else if (!text.empty())
+      sorted.headings.push_back({line.number, text});
+  }
+  while (!sorted.rows.empty() && stripped(sorted.rows.back().text).empty()) sorted.rows.pop_back();
+  if (!sorted.rows.empty()) return sorted;
+  if (!sorted.headings.empty())
+    throw input_error(
+        at_line(file, sorted.headings.front().number),
+        fmt::format("found {} and no row of numbers in the whole file", in_quotes(sorted.headings[0].text)),
+        "a record in plain text is rows of numbers: samples, or time and sample");
+  throw input_error(
+      at_line(file, std::max(1, static_cast<int>(lines.size()))),
+      fmt::format("the file ends without a number: {} comment line(s) and nothing else", sorted.comments.size()),
+      "a record needs at least two samples");
+}
+
+Table read_table(const std::vector<TextLine>& rows, const std::string& file) {
+  Table table;
+  table.separator = separator_of(rows.front().text);
+  table.columns = cells_of(rows.front().text, table.separator).size();
+  table.finest.resize(table.columns, Precision{-400, 0});
+  const char decimal_sign = decimal_sign_of(rows, table.separator);
+  for (const TextLine& row : rows) {
+    const std::vector<std::string_view> cells = cells_of(row.text, table.separator);
+    require_cells(cells, row, table.columns, file);
+    for (std::size_t i = 0; i < cells.size(); ++i) {
+      table.values.push_back(require_number(cells[i], at_line(file, row.number), decimal_sign));
+      widen(table.finest[i], cells[i]);
+    }
+    table.lines.push_back(row.number);
+  }
+  return table;
+}
+
+}  // namespace pilotis

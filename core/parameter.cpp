@@ -27,7 +27,7 @@ std::string allowed_range(const Parameter& p) {
   std::string text;
   if (std::isfinite(p.least))
     text = fmt::format("{} {}", p.least_allowed ? "at least" : "greater than", with_unit(p.least, p.dimension));
-  if (std::isfinite(p.most))
+  if (p.most < 1e300)  // 1e300 only keeps infinity out
     text += fmt::format("{}{} {}", text.empty() ? "" : " and ", p.most_allowed ? "at most" : "less than",
                         with_unit(p.most, p.dimension));
   return text;

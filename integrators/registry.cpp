@@ -1,34 +1,66 @@
-#include <array>
+#include <fmt/format.h>
+#include <fmt/ranges.h>
 
+#include <array>
+#include <vector>
+
+#include "core/error.hpp"
 #include "integrators/catalogue.hpp"
+#include "integrators/hht_alpha.hpp"
+#include "integrators/modal_superposition.hpp"
+#include "integrators/newmark.hpp"
+#include "integrators/piecewise_exact.hpp"
+#include "integrators/runge_kutta.hpp"
 
 namespace pilotis {
 
 namespace {
 
-constexpr std::array newmark_parameters{
-    Parameter{"beta", Dimension::none, "Newmark's beta", 0.25, 0.0, 0.5},
-    Parameter{"gamma", Dimension::none, "Newmark's gamma", 0.5, 0.5, 1.0}};
-constexpr std::array hht_parameters{
-    Parameter{"alpha", Dimension::none, "alpha of Hilber, Hughes and Taylor", -0.05, -1.0 / 3.0, 0.0}};
-constexpr std::array tolerance_parameters{
-    Parameter{"rtol", Dimension::none, "the relative tolerance of a step", 1e-6, 1e-14, 0.1},
-    Parameter{"atol", Dimension::none, "the absolute tolerance of a step (m and m/s)", 1e-9, 1e-16, 1.0}};
-constexpr std::array modal_parameters{
-    Parameter{"modes", Dimension::none, "the number of modes kept (0: all)", 0.0, 0.0, 1e6, true, true, true}};
+using Values = std::span<const double>;
+using Made = std::shared_ptr<const Scheme>;
 
-constexpr std::array catalogue{
-    Method{"newmark", "Newmark beta, gamma; average acceleration unless given", newmark_parameters},
-    Method{"average_acceleration", "Newmark, beta = 1/4, gamma = 1/2", {}},
-    Method{"linear_acceleration", "Newmark, beta = 1/6, gamma = 1/2", {}},
-    Method{"hht_alpha", "Hilber-Hughes-Taylor, second order with numerical damping", hht_parameters},
-    Method{"dormand_prince", "adaptive Runge-Kutta 5(4)", tolerance_parameters},
-    Method{"fehlberg", "adaptive Runge-Kutta 7(8)", tolerance_parameters},
-    Method{"piecewise_exact", "exact for linear buildings and piecewise-linear loads", {}},
-    Method{"modal", "modal superposition, each mode marched exactly", modal_parameters}};
+struct Entry {
+  Method method;
+  Made (*make)(Values);
+};
+
+Made average_acceleration(Values) { return std::make_shared<Newmark>(0.25, 0.5, Newmark::average.name); }
+Made linear_acceleration(Values) { return std::make_shared<Newmark>(1.0 / 6, 0.5, Newmark::linear.name); }
+Made dormand_prince(Values v) {
+  return std::make_shared<RungeKutta>(RungeKutta::Pair::dormand_prince, v[0], v[1]);
+}
+Made fehlberg(Values v) { return std::make_shared<RungeKutta>(RungeKutta::Pair::fehlberg, v[0], v[1]); }
+
+// A new scheme: its pair of files in this folder, one line here.
+constexpr std::array entries{Entry{Newmark::method, &Newmark::make},
+                             Entry{Newmark::average, &average_acceleration},
+                             Entry{Newmark::linear, &linear_acceleration},
+                             Entry{HhtAlpha::method, &HhtAlpha::make},
+                             Entry{RungeKutta::dormand_prince, &dormand_prince},
+                             Entry{RungeKutta::fehlberg, &fehlberg},
+                             Entry{PiecewiseExact::method, &PiecewiseExact::make},
+                             Entry{ModalSuperposition::method, &ModalSuperposition::make}};
+
+constexpr auto methods = [] {
+  std::array<Method, entries.size()> list{};
+  for (std::size_t i = 0; i < entries.size(); ++i) list[i] = entries[i].method;
+  return list;
+}();
 
 }  // namespace
 
-std::span<const Method> scheme_catalogue() { return catalogue; }
+std::span<const Method> scheme_catalogue() { return methods; }
+
+std::shared_ptr<const Scheme> make_scheme(std::string_view name, std::span<const double> values, const std::string& where) {
+  std::vector<std::string_view> known;
+  for (const Entry& entry : entries) {
+    known.push_back(entry.method.name);
+    if (entry.method.name != name) continue;
+    for (std::size_t i = 0; i < values.size(); ++i)
+      require_allowed(entry.method.parameters[i], values[i], fmt::format("{}.{}", where, entry.method.parameters[i].key));
+    return entry.make(values);
+  }
+  throw input_error(where, fmt::format("there is no scheme \"{}\"", name), fmt::format("one of {}", fmt::join(known, ", ")));
+}
 
 }  // namespace pilotis

@@ -34,8 +34,8 @@ struct RayleighByFactors {
   double stiffness_factor = 0;  // s
 };
 
-// C = sum over modes of 2 zeta_j omega_j / M_j (M phi_j)(M phi_j)^T, modes of the building without P-Delta.
-// One ratio: every mode has it. Several: modes 1, 2, ...; modes beyond the list are undamped.
+// C = sum over modes of 2 zeta_j omega_j / M_j (M phi_j)(M phi_j)^T, modes of the building as it stands, P-Delta
+// included. One ratio: every mode has it. Several: modes 1, 2, ...; modes beyond the list are undamped.
 struct ModalDamping {
   std::vector<double> ratios;  // fraction of critical, >= 0
 };

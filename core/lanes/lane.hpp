@@ -4,6 +4,7 @@
 
 #include <cmath>
 #include <cstdint>
+#include <type_traits>
 
 namespace pilotis {
 
@@ -72,6 +73,15 @@ template <class M>
 bool any(const M& mask) {
   std::int64_t bits = 0;
   for (unsigned i = 0; i < sizeof(M) / sizeof(std::int64_t); ++i) bits |= mask[i];
+  return bits != 0;
+}
+
+inline bool all(bool mask) { return mask; }
+template <class M>
+  requires(!std::is_same_v<M, bool>)
+bool all(const M& mask) {
+  std::int64_t bits = -1;
+  for (unsigned i = 0; i < sizeof(M) / sizeof(std::int64_t); ++i) bits &= mask[i];
   return bits != 0;
 }
 

@@ -10,6 +10,7 @@
 
 #include "core/building/stick.hpp"
 #include "core/motion/accelerogram.hpp"
+#include "core/motion/floor_force.hpp"
 #include "core/parameter.hpp"
 #include "core/verdict/limit.hpp"
 
@@ -30,18 +31,11 @@ struct SchemeChoice {
   std::vector<double> values;
 };
 
-// Force on one floor over time, from a table in the study or a file.
-struct FloorForce {
-  int floor = 1;               // counted from 1
-  std::vector<double> times;   // s, rising, first 0 or later; the force is zero before the first and after the last
-  std::vector<double> forces;  // N, linear between
-};
-
 struct MarchSettings {
   SchemeChoice scheme;
-  std::optional<double> step;          // s; empty: "auto"
-  double tail = 10;                    // s of free vibration after each motion
-  std::optional<double> duration;      // s; required without motions and floor forces
+  std::optional<double> step;      // s; empty: "auto"
+  double tail = 10;                // s of free vibration after each motion
+  std::optional<double> duration;  // s; required without motions and floor forces
   bool error_check = true;
   double collapse_drift_ratio = 0.10;  // a run stops when a story passes it
   double tolerance = 1e-9;             // Newton: largest out-of-balance force / largest load of the run
@@ -59,8 +53,8 @@ struct Study {
   std::string title;
   StudyUnits units;
   Stick building;
-  std::vector<Motion> motions;     // loaded, in the order of the study, the study's own factors applied
-  std::vector<double> factors;     // at least one; {1} by default
+  std::vector<Motion> motions;  // loaded, in the order of the study, the study's own factors applied
+  std::vector<double> factors;  // at least one; {1} by default
   std::vector<FloorForce> forces;
   std::vector<double> initial_displacement, initial_velocity;  // m, m/s, [floor]; empty: at rest
   MarchSettings march;

@@ -1,0 +1,124 @@
+#include "apps/check_show.hpp"
+#include "core/laws/law_values.hpp"
+#include "integrators/catalogue.hpp"
+
+namespace pilotis {
+
+namespace {
+
+using nlohmann::ordered_json;
+
+ordered_json parameters_json(std::span<const Parameter> parameters, const std::vector<double>& values) {
+  ordered_json json = ordered_json::object();
+  for (std::size_t i = 0; i < values.size(); ++i)
+    json[std::string(parameters[i].key)] = {{"value", values[i]}, {"unit", si_unit(parameters[i].dimension)}};
+  return json;
+}
+
+ordered_json stories_json(const Stick& stick) {
+  ordered_json list = ordered_json::array();
+  for (const Story& story : stick.stories) {
+    const Method& method = law_method(story.spring);
+    list.push_back({{"label", story.label},
+                    {"height_m", story.height},
+                    {"weight_N", story.mass * stick.gravity},
+                    {"mass_kg", story.mass},
+                    {"dashpot_N_s_per_m", story.dashpot},
+                    {"law", method.name},
+                    {"parameters", parameters_json(method.parameters, law_values(story.spring))}});
+  }
+  return list;
+}
+
+void add_record(const Accelerogram& record, ordered_json& json) {
+  const PeakSample peak = peak_of(record);
+  json["samples"] = record.samples.size();
+  json["step_s"] = record.step;
+  json["first_sample_at_s"] = record.first_sample_at;
+  json["last_sample_at_s"] = record.duration();
+  json["peak_m_per_s2"] = peak.value;
+  json["peak_at_s"] = peak.time;
+}
+
+ordered_json motions_json(const Study& study) {
+  ordered_json list = ordered_json::array();
+  for (const Motion& motion : study.motions) {
+    ordered_json json = {{"name", motion.name},         {"file", motion.file},     {"format", motion.format},
+                         {"unit_in_file", motion.unit}, {"factor", motion.factor}, {"digest", motion.digest}};
+    add_record(motion.record, json);
+    list.push_back(json);
+  }
+  return list;
+}
+
+ordered_json loads_json(const Study& study) {
+  ordered_json forces = ordered_json::array();
+  for (const FloorForce& force : study.forces)
+    forces.push_back({{"floor", force.floor}, {"times_s", force.times}, {"forces_N", force.forces}});
+  return {{"forces", forces},
+          {"initial_displacement_m", study.initial_displacement},
+          {"initial_velocity_m_per_s", study.initial_velocity}};
+}
+
+ordered_json march_json(const MarchSettings& march) {
+  ordered_json json = {{"scheme", march.scheme.name}};
+  for (const Method& method : scheme_catalogue())
+    if (method.name == march.scheme.name) json["parameters"] = parameters_json(method.parameters, march.scheme.values);
+  json["step_s"] = march.step ? ordered_json(*march.step) : ordered_json("auto");
+  if (march.duration)
+    json["duration_s"] = *march.duration;
+  else
+    json["tail_s"] = march.tail;
+  json["error_check"] = march.error_check;
+  json["collapse_drift_ratio"] = march.collapse_drift_ratio;
+  json["tolerance"] = march.tolerance;
+  json["halvings"] = march.halvings;
+  return json;
+}
+
+ordered_json limits_json(const Study& study) {
+  ordered_json list = ordered_json::array();
+  for (const Limit& limit : study.limits)
+    list.push_back({{"quantity", limit.quantity->name},
+                    {"statistic", statistic_text(limit)},
+                    {"value", limit.value},
+                    {"unit", si_unit(limit.quantity->dimension)},
+                    {"factors", limit.factors.empty() ? study.factors : limit.factors},
+                    {"source", limit.source}});
+  return list;
+}
+
+}  // namespace
+
+nlohmann::ordered_json study_json(const Study& study) {
+  ordered_json histories = ordered_json::array();
+  for (const Quantity* quantity : study.keep.histories) histories.push_back(quantity->name);
+  return {{"file", study.file.string()},
+          {"kind", "study"},
+          {"title", study.title},
+          {"units",
+           {{"force", study.units.force}, {"length", study.units.length}, {"mass", study.units.name(Dimension::mass)}}},
+          {"building",
+           {{"kind", "stick"},
+            {"damping", damping_text(study.building.damping)},
+            {"p_delta", study.building.p_delta},
+            {"gravity_m_per_s2", study.building.gravity},
+            {"stories", stories_json(study.building)}}},
+          {"motions", motions_json(study)},
+          {"factors", study.factors},
+          {"loads", loads_json(study)},
+          {"march", march_json(study.march)},
+          {"keep", {{"histories", histories}, {"every", study.keep.every}}},
+          {"limits", limits_json(study)},
+          {"runs", run_count(study)},
+          {"notes", study.notes}};
+}
+
+nlohmann::ordered_json record_json(const std::string& file, const RecordFile& record) {
+  ordered_json json = {{"file", file}, {"kind", "record"}, {"format", record.format}, {"unit_in_file", record.unit}};
+  add_record(record.record, json);
+  json["notes"] = record.notes;
+  return json;
+}
+
+}  // namespace pilotis

@@ -1,0 +1,74 @@
+// The effective solve a scheme asks for: (c_m M + c_c C + c_k K_tangent) x = b, with C's low-rank part by the
+// Sherman-Morrison-Woodbury identity, so the band stays narrow. Over the lane scalar; allocates only when made.
+#pragma once
+
+#include <vector>
+
+#include "core/system/kernel.hpp"
+
+namespace pilotis {
+
+template <class R>
+class EffectiveSolve {
+ public:
+  explicit EffectiveSolve(const System& system)
+      : band_(system.stiffness.entries.size()),
+        solved_(system.modal_damping.weight.size() * system.freedoms),
+        small_(system.modal_damping.weight.size() * system.modal_damping.weight.size()),
+        amount_(system.modal_damping.weight.size()) {}
+
+  // `tangent` [element]; a linear system is factored again only when a coefficient changes.
+  void factor(const System& system, double c_m, double c_c, double c_k, const R* tangent) noexcept {
+    if (system.is_linear() && c_m == c_m_ && c_c == c_c_ && c_k == c_k_) return;
+    c_m_ = c_m, c_c_ = c_c, c_k_ = c_k;
+    effective_band(system, c_m, c_c, c_k, tangent, band_.data());
+    band_factor(band_.data(), system.freedoms, system.half);
+    if (!amount_.empty()) factor_low_rank(system);
+  }
+
+  // x holds b on entry, [freedom].
+  void solve(const System& system, R* x) const noexcept {
+    band_solve(band_.data(), system.freedoms, system.half, x);
+    if (!amount_.empty()) correct(system, x);
+  }
+
+ private:
+  int rank() const { return static_cast<int>(amount_.size()); }
+
+  // S = (c_c weight)^-1 + W^T A^-1 W, Cholesky-like LDL^T kept as a full band of half width rank - 1.
+  void factor_low_rank(const System& system) noexcept {
+    const int n = system.freedoms, r = rank();
+    for (int j = 0; j < r; ++j) {
+      R* column = &solved_[std::size_t(j) * n];
+      for (int i = 0; i < n; ++i) column[i] = splat<R>(system.modal_damping.columns[j][i]);
+      band_solve(band_.data(), n, system.half, column);
+    }
+    for (int j = 0; j < r; ++j) {
+      for (int k = j; k < r; ++k) small_[std::size_t(j) * r + (k - j)] = product(system, k, &solved_[std::size_t(j) * n]);
+      small_[std::size_t(j) * r] += 1.0 / (c_c_ * system.modal_damping.weight[j]);
+    }
+    band_factor(small_.data(), r, r - 1);
+  }
+
+  void correct(const System& system, R* x) const noexcept {
+    const int n = system.freedoms, r = rank();
+    for (int j = 0; j < r; ++j) amount_[j] = product(system, j, x);
+    band_solve(small_.data(), r, r - 1, amount_.data());
+    for (int j = 0; j < r; ++j)
+      for (int i = 0; i < n; ++i) x[i] -= solved_[std::size_t(j) * n + i] * amount_[j];
+  }
+
+  R product(const System& system, int j, const R* x) const noexcept {
+    R sum = splat<R>(0);
+    for (int i = 0; i < system.freedoms; ++i) sum += system.modal_damping.columns[j][i] * x[i];
+    return sum;
+  }
+
+  double c_m_ = 0, c_c_ = 0, c_k_ = 0;
+  std::vector<R> band_;
+  std::vector<R> solved_;          // A^-1 W, [rank][freedom]
+  std::vector<R> small_;           // factors of S
+  mutable std::vector<R> amount_;  // scratch, [rank]
+};
+
+}  // namespace pilotis

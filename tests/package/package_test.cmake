@@ -1,0 +1,36 @@
+# Installs the build to a new prefix, moves the prefix, and configures, builds and runs the consumer against it.
+# Run with: cmake -D BUILD=... -D SOURCE=... -D WORK=... -D COMPILER=... -D FLAGS=... -D CONFIG=... -P package_test.cmake
+function(run)
+  execute_process(COMMAND ${ARGV} RESULT_VARIABLE status OUTPUT_VARIABLE output ERROR_VARIABLE output)
+  if(NOT status EQUAL 0)
+    list(JOIN ARGV " " command)
+    message(FATAL_ERROR "${command}\n${output}\nended with status ${status}")
+  endif()
+endfunction()
+
+# An installed file that names the build or source tree works on this machine only.
+function(expect_no_word_of_the_tree prefix)
+  file(GLOB_RECURSE files ${prefix}/lib/*.cmake ${prefix}/include/*.hpp)
+  if(NOT files)
+    message(FATAL_ERROR "nothing was installed under ${prefix}")
+  endif()
+  foreach(file IN LISTS files)
+    file(READ ${file} text)
+    foreach(tree IN ITEMS ${BUILD} ${SOURCE})
+      string(FIND "${text}" "${tree}/" place)
+      if(NOT place EQUAL -1)
+        message(FATAL_ERROR "${file} names ${tree}")
+      endif()
+    endforeach()
+  endforeach()
+endfunction()
+
+file(REMOVE_RECURSE ${WORK})
+run(${CMAKE_COMMAND} --install ${BUILD} --config ${CONFIG} --prefix ${WORK}/first)
+file(RENAME ${WORK}/first ${WORK}/prefix)
+expect_no_word_of_the_tree(${WORK}/prefix)
+run(${WORK}/prefix/bin/pilotis --version)
+run(${CMAKE_COMMAND} -G Ninja -S ${SOURCE}/tests/package/consumer -B ${WORK}/build -DCMAKE_PREFIX_PATH=${WORK}/prefix
+  -DCMAKE_CXX_COMPILER=${COMPILER} -DCMAKE_CXX_FLAGS=${FLAGS} -DCMAKE_BUILD_TYPE=${CONFIG})
+run(${CMAKE_COMMAND} --build ${WORK}/build)
+run(${WORK}/build/consumer)

@@ -21,6 +21,8 @@ int main(int argc, char** argv) {
   app.set_version_flag("--version", "pilotis " PILOTIS_VERSION);
   app.require_subcommand(1);
   pilotis::add_check(app, status);
+  pilotis::add_verdict(app, status);
+  pilotis::add_export(app, status);
   try {
     app.parse(argc, argv);
   } catch (const CLI::ParseError& e) {

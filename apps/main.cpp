@@ -20,9 +20,10 @@ int main(int argc, char** argv) {
   CLI::App app{"Pilotis: how a multi-story frame moves when the ground shakes, and what that means.", "pilotis"};
   app.set_version_flag("--version", "pilotis " PILOTIS_VERSION);
   app.require_subcommand(1);
-  pilotis::add_synth(app, status);
   pilotis::add_check(app, status);
+  pilotis::add_run(app, status);
   pilotis::add_modes(app, status);
+  pilotis::add_synth(app, status);
   pilotis::add_verdict(app, status);
   pilotis::add_export(app, status);
   try {

@@ -4,14 +4,15 @@
 #include <charconv>
 #include <cmath>
 #include <cstdio>
+#include <filesystem>
 #include <map>
 #include <memory>
 
 #include "apps/commands.hpp"
-#include "apps/write_file.hpp"
 #include "core/error.hpp"
 #include "core/motion/synthetic/registry.hpp"
 #include "core/units/units.hpp"
+#include "io/whole_file.hpp"
 
 namespace pilotis {
 
@@ -89,6 +90,20 @@ std::string csv_of(const Accelerogram& record, const std::string& command, std::
   return text;
 }
 
+void write_csv(const std::filesystem::path& file, const std::string& csv) {
+  const std::filesystem::path folder = file.has_parent_path() ? file.parent_path() : ".";
+  std::error_code ignored;
+  if (!file.has_filename() || std::filesystem::is_directory(file, ignored))
+    throw input_error("synth --output", fmt::format("found \"{}\", a folder", file.string()),
+                      "the name of a file to write is needed");
+  if (!std::filesystem::is_directory(folder, ignored))
+    throw input_error("synth --output", fmt::format("found \"{}\"", file.string()),
+                      fmt::format("there is no folder \"{}\": make it first", folder.string()));
+  WholeFile whole(file);
+  whole.write(csv);
+  whole.commit();
+}
+
 void synthesize(const Method& method, const SynthOptions& options) {
   const SyntheticGrid grid{options.seed, quantity(options.step, Dimension::time, "synth --step"),
                            quantity(options.duration, Dimension::time, "synth --duration")};
@@ -99,7 +114,7 @@ void synthesize(const Method& method, const SynthOptions& options) {
     fmt::print("{}", csv);
     return;
   }
-  write_whole(options.output, csv);
+  write_csv(options.output, csv);
   fmt::print(stderr, "{}: {} samples every {} s, peak {:.{}f} m/s2\n", options.output, record.samples.size(),
              record.step, peak_of(record).value, sample_decimals);
 }

@@ -23,6 +23,8 @@ int main(int argc, char** argv) {
   pilotis::add_synth(app, status);
   pilotis::add_check(app, status);
   pilotis::add_modes(app, status);
+  pilotis::add_verdict(app, status);
+  pilotis::add_export(app, status);
   try {
     app.parse(argc, argv);
   } catch (const CLI::ParseError& e) {

@@ -1,0 +1,28 @@
+// What the screen can show.
+#pragma once
+
+#include <cstdio>
+#include <string>
+
+namespace pilotis {
+
+struct ScreenStyle {
+  int width = 100;      // columns
+  bool color = false;
+  bool unicode = true;  // bars and marks beyond ASCII
+};
+
+// The environment variables a screen is judged by; empty where unset.
+struct ScreenEnvironment {
+  std::string no_color, term, locale;
+};
+ScreenEnvironment screen_environment();
+
+// Color only on a terminal, never with NO_COLOR set to anything (no-color.org) or TERM=dumb; unicode where the locale is
+// UTF-8; `columns` is the terminal's width, 0 where unknown: then 100.
+ScreenStyle style_for(bool is_terminal, int columns, const ScreenEnvironment& environment);
+
+// For a stream of this process.
+ScreenStyle screen_style(std::FILE* stream);
+
+}  // namespace pilotis

@@ -129,11 +129,17 @@ std::string help_of(const Parameter& parameter) {
   return range.empty() ? text : fmt::format("{}; {}", text, range);
 }
 
+// For the command line's own checks: empty when it is one.
+std::string whole_number(const std::string& text) {
+  const bool digits = !text.empty() && text.find_first_not_of("0123456789") == std::string::npos;
+  return digits ? "" : fmt::format("found \"{}\"; a whole number from 0 is needed", text);
+}
+
 void add_kind(CLI::App& synth, const Method& method) {
   auto options = std::make_shared<SynthOptions>();
   CLI::App* kind = synth.add_subcommand(std::string(method.name), std::string(method.summary));
   kind->add_option("--seed", options->seed, "the same seed gives the same motion on every machine [1]")
-      ->check(CLI::NonNegativeNumber);
+      ->check(whole_number);
   kind->add_option("--step", options->step, "time step, e.g. \"0.005 s\"; a bare number is in s [0.01 s]");
   kind->add_option("--duration", options->duration, "a whole number of steps; a bare number is in s [20 s]");
   kind->add_option("-o,--output", options->output, "CSV file to write, - for standard output")->required();

@@ -4,14 +4,15 @@
 #include <charconv>
 #include <cmath>
 #include <cstdio>
+#include <filesystem>
 #include <map>
 #include <memory>
 
 #include "apps/commands.hpp"
-#include "apps/write_file.hpp"
 #include "core/error.hpp"
 #include "core/motion/synthetic/registry.hpp"
 #include "core/units/units.hpp"
+#include "io/whole_file.hpp"
 
 namespace pilotis {
 
@@ -89,6 +90,20 @@ std::string csv_of(const Accelerogram& record, const std::string& command, std::
   return text;
 }
 
+void write_csv(const std::filesystem::path& file, const std::string& csv) {
+  const std::filesystem::path folder = file.has_parent_path() ? file.parent_path() : ".";
+  std::error_code ignored;
+  if (!file.has_filename() || std::filesystem::is_directory(file, ignored))
+    throw input_error("synth --output", fmt::format("found \"{}\", a folder", file.string()),
+                      "the name of a file to write is needed");
+  if (!std::filesystem::is_directory(folder, ignored))
+    throw input_error("synth --output", fmt::format("found \"{}\"", file.string()),
+                      fmt::format("there is no folder \"{}\": make it first", folder.string()));
+  WholeFile whole(file);
+  whole.write(csv);
+  whole.commit();
+}
+
 void synthesize(const Method& method, const SynthOptions& options) {
   const SyntheticGrid grid{options.seed, quantity(options.step, Dimension::time, "synth --step"),
                            quantity(options.duration, Dimension::time, "synth --duration")};
@@ -99,7 +114,7 @@ void synthesize(const Method& method, const SynthOptions& options) {
     fmt::print("{}", csv);
     return;
   }
-  write_whole(options.output, csv);
+  write_csv(options.output, csv);
   fmt::print(stderr, "{}: {} samples every {} s, peak {:.{}f} m/s2\n", options.output, record.samples.size(),
              record.step, peak_of(record).value, sample_decimals);
 }
@@ -114,11 +129,17 @@ std::string help_of(const Parameter& parameter) {
   return range.empty() ? text : fmt::format("{}; {}", text, range);
 }
 
+// For the command line's own checks: empty when it is one.
+std::string whole_number(const std::string& text) {
+  const bool digits = !text.empty() && text.find_first_not_of("0123456789") == std::string::npos;
+  return digits ? "" : fmt::format("found \"{}\"; a whole number from 0 is needed", text);
+}
+
 void add_kind(CLI::App& synth, const Method& method) {
   auto options = std::make_shared<SynthOptions>();
   CLI::App* kind = synth.add_subcommand(std::string(method.name), std::string(method.summary));
   kind->add_option("--seed", options->seed, "the same seed gives the same motion on every machine [1]")
-      ->check(CLI::NonNegativeNumber);
+      ->check(whole_number);
   kind->add_option("--step", options->step, "time step, e.g. \"0.005 s\"; a bare number is in s [0.01 s]");
   kind->add_option("--duration", options->duration, "a whole number of steps; a bare number is in s [20 s]");
   kind->add_option("-o,--output", options->output, "CSV file to write, - for standard output")->required();

@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "apps/check_show.hpp"
+#include "apps/engine.hpp"
 #include "apps/text_table.hpp"
 #include "core/laws/law_values.hpp"
 #include "integrators/catalogue.hpp"
@@ -166,10 +167,6 @@ std::string limits_text(const Study& study) {
 }
 
 }  // namespace
-
-long run_count(const Study& study) {
-  return static_cast<long>(std::max<std::size_t>(study.motions.size(), 1) * study.factors.size());
-}
 
 std::string statistic_text(const Limit& limit) {
   if (limit.statistic != Statistic::percentile) return std::string(statistic_name(limit.statistic));

@@ -1,12 +1,12 @@
 // `pilotis export`: parts of a result file as CSV.
 #include <fmt/format.h>
 
-#include <cstdio>
 #include <memory>
 #include <optional>
 
 #include "apps/commands.hpp"
 #include "apps/export_tables.hpp"
+#include "apps/terminal.hpp"
 #include "core/error.hpp"
 #include "io/whole_file.hpp"
 
@@ -33,19 +33,12 @@ class Output {
   explicit Output(const std::string& file) {
     if (!file.empty()) file_.emplace(file);
   }
-  void write(const std::string& text) {
-    if (file_) return file_->write(text);
-    if (std::fwrite(text.data(), 1, text.size(), stdout) != text.size()) fail();
-  }
+  void write(const std::string& text) { file_ ? file_->write(text) : print_out(text); }
   void finish() {
-    if (file_) return file_->commit();
-    if (std::fflush(stdout) != 0) fail();
+    if (file_) file_->commit();
   }
 
  private:
-  [[noreturn]] static void fail() {
-    throw outside_error("standard output", "cannot be written", "check that what reads it still runs and that the disk has room");
-  }
   std::optional<WholeFile> file_;
 };
 
@@ -104,7 +97,8 @@ void add_export(CLI::App& app, int& status) {
   command->add_option("file", options->file, "result file (HDF5) that `pilotis run` wrote")->required();
   CLI::Option_group* group = command->add_option_group("part", "what to write");
   for (const auto& [name, meaning] : parts)
-    group->add_flag_callback(name, [options, name = std::string(name)] { options->part = name; }, meaning);
+    group->add_flag_callback(
+        name, [options, name = std::string(name)] { options->part = name; }, meaning);
   group->require_option(1);
   command->add_option("--run", options->run, "only this run, counted from 0")->check(CLI::NonNegativeNumber);
   command->add_option("-o,--output", options->output, "file to write; standard output without it");

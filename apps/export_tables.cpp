@@ -49,8 +49,9 @@ void add_modes(std::string& text, const BuildingSummary& building, const TableUn
     const Mode& mode = building.modes[m];
     text += fmt::format("period,,,{},,{},s\n", m + 1, cell(mode.period));
     text += fmt::format("participation,,,{},,{},1\n", m + 1, cell(mode.participation));
-    text += fmt::format("effective_mass,,,{},,{},{}\n", m + 1, cell(mode.effective_mass / units.factor(Dimension::mass)),
-                        csv_cell(units.name(Dimension::mass)));
+    text +=
+        fmt::format("effective_mass,,,{},,{},{}\n", m + 1, cell(mode.effective_mass / units.factor(Dimension::mass)),
+                    csv_cell(units.name(Dimension::mass)));
     text += fmt::format("damping_ratio,,,{},,{},1\n", m + 1, cell(mode.damping_ratio));
     for (std::size_t floor = 0; floor < mode.shape.size(); ++floor)
       text += fmt::format("shape,floor,{},{},,{},1\n", floor + 1, m + 1, cell(mode.shape[floor]));
@@ -80,8 +81,8 @@ std::string peaks_csv(const StoredStudy& stored, const TableUnits& units, int ru
 std::string residuals_csv(const StoredStudy& stored, const TableUnits& units, int run) {
   const std::string unit = units.name(Dimension::length);
   const double factor = units.factor(Dimension::length);
-  std::string text = fmt::format("{0},story,drift [{1}],drift_swing [{1}],drift_step_error [{1}],drift_ratio [1]\n",
-                                 run_header, unit);
+  std::string text =
+      fmt::format("{0},story,drift [{1}],drift_swing [{1}],drift_step_error [{1}],drift_ratio [1]\n", run_header, unit);
   const auto& heights = stored.results.building.heights;
   for (std::size_t i = 0; i < stored.results.runs.size(); ++i) {
     const RunResult& one = stored.results.runs[i];
@@ -99,7 +100,8 @@ std::string runs_csv(const StoredStudy& stored, const TableUnits& units, int run
   const std::string unit = units.name(Dimension::moment);
   std::string text = fmt::format(
       "{0},status_note,scheme,step [s],step_choice,time_reached [s],energy_error [1],energy_input [{1}],"
-      "energy_damping [{1}],energy_absorbed [{1}],wall_time [s]\n", run_header, unit);
+      "energy_damping [{1}],energy_absorbed [{1}],wall_time [s]\n",
+      run_header, unit);
   for (std::size_t i = 0; i < stored.results.runs.size(); ++i) {
     const RunResult& one = stored.results.runs[i];
     if (!wanted(i, run)) continue;
@@ -112,7 +114,8 @@ std::string runs_csv(const StoredStudy& stored, const TableUnits& units, int run
 }
 
 std::string motions_csv(const StoredStudy& stored, const TableUnits& units) {
-  std::string text = fmt::format("motion,name,file,digest,step [s],samples,peak [{}]\n", units.name(Dimension::acceleration));
+  std::string text =
+      fmt::format("motion,name,file,digest,step [s],samples,peak [{}]\n", units.name(Dimension::acceleration));
   const auto& motions = stored.results.motions;
   for (std::size_t i = 0; i < motions.size(); ++i)
     text += fmt::format("{},{},{},{},{},{},{}\n", i, csv_cell(motions[i].name), csv_cell(motions[i].file),
@@ -126,7 +129,8 @@ std::string building_csv(const StoredStudy& stored, const TableUnits& units) {
   std::string text = "property,per,number,mode,label,value,unit\n";
   for (std::size_t i = 0; i < building.heights.size(); ++i)
     text += fmt::format("height,story,{},,{},{},{}\n", i + 1, csv_cell(building.labels.at(i)),
-                        cell(building.heights[i] / units.factor(Dimension::length)), csv_cell(units.name(Dimension::length)));
+                        cell(building.heights[i] / units.factor(Dimension::length)),
+                        csv_cell(units.name(Dimension::length)));
   for (std::size_t i = 0; i < building.masses.size(); ++i)
     text += fmt::format("mass,floor,{},,,{},{}\n", i + 1, cell(building.masses[i] / units.factor(Dimension::mass)),
                         csv_cell(units.name(Dimension::mass)));

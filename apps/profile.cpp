@@ -30,21 +30,27 @@ std::string building_line(const StoredStudy& stored, const ProfileFacts& facts, 
   return line;
 }
 
-std::string runs_line(const Verdict& verdict, const StudyResults& results, const Signs& signs) {
+std::string runs_line(const Verdict& verdict) {
   const int done = verdict.runs - verdict.collapsed - verdict.not_converged;
   std::string line = fmt::format("{} runs: {} done", verdict.runs, done);
   if (verdict.collapsed > 0) line += fmt::format(", {} collapsed", verdict.collapsed);
   if (verdict.not_converged > 0) line += fmt::format(", {} not converged", verdict.not_converged);
-  if (!results.runs.empty()) line += signs.separator + results.runs.front().scheme;
+  return line;
+}
+
+// How it was marched; of the first run where runs differ.
+std::string march_line(const StudyResults& results, const Signs& signs) {
+  if (results.runs.empty()) return "";
   double least = INFINITY, most = 0, energy = 0;
   for (const RunResult& run : results.runs) {
     least = std::min(least, run.step);
     most = std::max(most, run.step);
     energy = std::fmax(energy, run.energy_error);
   }
-  if (results.runs.empty()) return line;
-  line += least == most ? fmt::format(", step {:g} s", least) : fmt::format(", steps {:g} to {:g} s", least, most);
-  return line + fmt::format("{}energy error up to {:.1g}", signs.separator, energy);
+  const std::string steps =
+      least == most ? fmt::format("step {:g} s", least) : fmt::format("steps {:g} to {:g} s", least, most);
+  return fmt::format("{}{}{}{}energy error up to {:.1g} of the input", results.runs.front().scheme, signs.separator,
+                     steps, signs.separator, energy);
 }
 
 std::string factor_title(const FactorFacts& facts, const ScreenStyle& style) {
@@ -52,12 +58,16 @@ std::string factor_title(const FactorFacts& facts, const ScreenStyle& style) {
   std::string text = painted(fmt::format("Ground motion {} {:g}", signs.times, facts.factor), Tone::strong, style);
   std::string rest = fmt::format("{}{} motion{}", signs.separator, facts.runs, facts.runs == 1 ? "" : "s");
   if (facts.limit)
-    rest += fmt::format("{}limit {} {:g} % on the {} drift ratio", signs.separator, signs.mark, facts.limit->value * 100,
-                        shown_statistic(*facts.limit));
+    rest += fmt::format("{}{} {} drift ratio, {} largest, {} limit {:g} %", signs.separator, signs.bar,
+                        shown_statistic(*facts.limit), signs.light_bar, signs.mark, facts.limit->value * 100);
+  else
+    rest += fmt::format("{}{} largest drift ratio, no limit on it", signs.separator, signs.bar);
   text += painted(rest, Tone::quiet, style) + "\n";
   if (facts.done < facts.runs)
-    text += painted(fmt::format("{} of {} runs lasted to the end; \"largest\" and the columns right of it are of those",
-                                facts.done, facts.runs), Tone::warning, style) + "\n";
+    text += painted(fmt::format("{} of {} runs lasted to the end; all columns{} are of those", facts.done, facts.runs,
+                                facts.limit ? fmt::format(" but the {}", shown_statistic(*facts.limit)) : ""),
+                    Tone::warning, style) +
+            "\n";
   return text;
 }
 
@@ -96,9 +106,11 @@ std::string factor_summary(const FactorFacts& facts, const ProfileFacts& buildin
   std::string text = painted(head, Tone::quiet, style) + "\n";
   text += summary_line("base shear", facts.base_shear, *find_quantity("base_shear"), units, style);
   text += ratio_line("base shear over weight", facts.base_shear, building.weight, 0.01, "%", 1, style);
-  text += summary_line("roof displacement", facts.roof_displacement, *find_quantity("floor_displacement"), units, style);
+  text +=
+      summary_line("roof displacement", facts.roof_displacement, *find_quantity("floor_displacement"), units, style);
   text += ratio_line("roof drift (over height)", facts.roof_displacement, building.height, 0.01, "%", 2, style);
-  text += summary_line("floor acceleration", facts.floor_acceleration, *find_quantity("floor_acceleration"), units, style);
+  text +=
+      summary_line("floor acceleration", facts.floor_acceleration, *find_quantity("floor_acceleration"), units, style);
   return text;
 }
 
@@ -108,7 +120,10 @@ std::string profile_text(const StoredStudy& stored, const Verdict& verdict, cons
   const auto width = static_cast<std::size_t>(style.width);
   std::string text = painted(clipped(stored.title, width, style), Tone::strong, style) + "\n";
   text += clipped(building_line(stored, facts, signs), width, style) + "\n";
-  text += clipped(runs_line(verdict, stored.results, signs), width, style) + "\n\n";
+  text += clipped(march_line(stored.results, signs), width, style) + "\n";
+  text +=
+      painted(runs_line(verdict), verdict.collapsed + verdict.not_converged > 0 ? Tone::warning : Tone::plain, style) +
+      "\n\n";
   const double scale = bar_scale(facts);
   for (const FactorFacts& factor : facts.factors) {
     text += factor_title(factor, style) + "\n" + story_table(factor, scale, stored.units, style) + "\n";

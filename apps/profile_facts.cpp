@@ -67,7 +67,8 @@ StoryFacts story_facts(const StudyResults& results, const Runs& runs, const Runs
 }
 
 int count_of(const Runs& runs, RunStatus status) {
-  return static_cast<int>(std::count_if(runs.begin(), runs.end(), [=](const RunResult* r) { return r->status == status; }));
+  return static_cast<int>(
+      std::count_if(runs.begin(), runs.end(), [=](const RunResult* r) { return r->status == status; }));
 }
 
 FactorFacts factor_facts(const StoredStudy& stored, double factor) {

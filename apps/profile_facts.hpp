@@ -23,8 +23,9 @@ struct StoryFacts {
   int story = 1;
   std::string label;
   Largest drift_ratio, residual_drift_ratio, ductility, story_shear;
-  double statistic = 0;   // the named limit's statistic of the drift ratio at this story; infinite with collapsed runs; NaN: none
-  double margin = 0;      // (limit - statistic) / limit; NaN: no limit
+  double statistic =
+      0;  // the named limit's statistic of the drift ratio at this story; infinite with collapsed runs; NaN: none
+  double margin = 0;  // (limit - statistic) / limit; NaN: no limit
 };
 
 struct FactorFacts {

@@ -15,50 +15,66 @@ constexpr double percent = 0.01;
 
 // Widths in columns. The free room is shared between label, bar and motion.
 struct Widths {
-  std::size_t number = 3, statistic = 8, largest = 9, error = 8, margin = 8, residual = 10, ductility = 10, shear = 9;
+  std::size_t number = 3, statistic = 7, largest = 8, error = 7, margin = 8, residual = 9, ductility = 8, shear = 8;
   std::size_t label = 0, bar = 0, motion = 0;
 };
 
+constexpr std::size_t gaps = 1 + 2 + 2;  // before the label, before the bar, before the motion
+
 Widths widths_for(const ScreenStyle& style, bool has_limit) {
   Widths widths;
-  if (style.width < 96) {
-    widths.statistic = widths.margin = widths.error = 7;
-    widths.largest = 8, widths.residual = 9, widths.ductility = 7, widths.shear = 8;
-  }
+  if (style.width < 96) widths.residual = widths.margin = widths.shear = 7, widths.ductility = widths.error = 6;
   if (!has_limit) widths.statistic = widths.margin = 0;
-  const std::size_t gaps = 1 + 2 + 2;  // before the label and on both sides of the bar
   const std::size_t fixed = widths.number + widths.statistic + widths.largest + widths.error + widths.margin +
                             widths.residual + widths.ductility + widths.shear + gaps;
   const std::size_t room = static_cast<std::size_t>(std::clamp(style.width, 80, 132)) - fixed;
-  widths.label = room < 24 ? 0 : std::min<std::size_t>(room / 4, 16);
-  widths.motion = std::min<std::size_t>(room * 2 / 5, 18);
+  widths.label = room < 26 ? 0 : std::min<std::size_t>(room / 4, 16);
+  widths.motion = std::min<std::size_t>(room / 3, 18);
   widths.bar = std::min<std::size_t>(room - widths.label - widths.motion, 40);
   return widths;
 }
 
-std::size_t cells(double value, double scale, std::size_t width) {
-  const double cell = std::round(value / scale * static_cast<double>(width));
-  return static_cast<std::size_t>(std::clamp(cell, 0.0, static_cast<double>(width)));
+// Where things end on the bar, in half cells.
+struct BarEnds {
+  std::size_t strong = 0, light = 0, mark = 0;
+  bool cut = false, exceeded = false;
+};
+
+std::size_t half_cells(double value, double scale, std::size_t width) {
+  const double halves = std::round(value / scale * 2 * static_cast<double>(width));
+  return std::isfinite(halves) ? static_cast<std::size_t>(std::clamp(halves, 0.0, 2.0 * static_cast<double>(width)))
+                               : 0;
 }
 
-// Strong up to the statistic (all of it without one), light up to the largest, a mark at the limit.
-std::string bar_text(const StoryFacts& story, const Limit* limit, double scale, std::size_t width,
-                     const ScreenStyle& style) {
+BarEnds ends_of(const StoryFacts& story, const Limit* limit, double scale, std::size_t width) {
+  const double statistic = limit ? story.statistic : story.drift_ratio.value;
+  BarEnds ends;
+  ends.strong = half_cells(statistic, scale, width);  // none when it is infinite: the light bar then shows the rest
+  ends.light = half_cells(story.drift_ratio.value, scale, width);
+  ends.mark = limit ? std::max<std::size_t>(half_cells(limit->value, scale, width), 2) / 2 - 1 : width;
+  ends.exceeded = limit && statistic > limit->value;
+  ends.cut = story.drift_ratio.value > scale * 1.0001;
+  return ends;
+}
+
+// One cell of the bar: strong up to the statistic, light from there to the largest, a mark at the limit.
+std::string cell_text(std::size_t i, std::size_t width, const BarEnds& ends, const ScreenStyle& style) {
   const Signs signs(style);
-  const double strong_to = limit ? story.statistic : story.drift_ratio.value;
-  const std::size_t strong = std::isnan(strong_to) ? 0 : cells(strong_to, scale, width);
-  const std::size_t light = std::isnan(story.drift_ratio.value) ? 0 : cells(story.drift_ratio.value, scale, width);
-  const std::size_t mark = limit ? std::max<std::size_t>(cells(limit->value, scale, width), 1) - 1 : width;
-  const bool exceeded = limit && strong_to > limit->value;
-  const bool cut = std::fmax(strong_to, story.drift_ratio.value) > scale * 1.0001;
+  const Tone strong = ends.exceeded ? Tone::bad : Tone::good, light = ends.exceeded ? Tone::bad : Tone::quiet;
+  const std::size_t first_half = 2 * i + 1, whole = 2 * i + 2;
+  if (i == ends.mark) return painted(signs.mark, ends.exceeded ? Tone::bad : Tone::plain, style);
+  if (ends.cut && i + 1 == width) return painted(signs.beyond, light, style);
+  if (ends.strong >= whole) return painted(signs.bar, strong, style);
+  if (ends.strong >= first_half)
+    return painted(ends.light >= whole ? signs.half_to_light : signs.half_bar, strong, style);
+  if (ends.light >= whole) return painted(signs.light_bar, light, style);
+  if (ends.light >= first_half) return painted(signs.half_light, light, style);
+  return " ";
+}
+
+std::string bar_text(const BarEnds& ends, std::size_t width, const ScreenStyle& style) {
   std::string text;
-  for (std::size_t i = 0; i < width; ++i) {
-    if (i == mark) text += painted(signs.mark, exceeded ? Tone::bad : Tone::plain, style);
-    else if (cut && i + 1 == width) text += painted(signs.beyond, exceeded ? Tone::bad : Tone::quiet, style);
-    else if (i < strong) text += painted(signs.bar, exceeded ? Tone::bad : Tone::good, style);
-    else if (i < light) text += painted(signs.light_bar, Tone::quiet, style);
-    else text += " ";
-  }
+  for (std::size_t i = 0; i < width; ++i) text += cell_text(i, width, ends, style);
   return text;
 }
 
@@ -79,21 +95,22 @@ Decimals decimals_of(const FactorFacts& facts, const ShownUnit& force) {
           decimals_for(shear / force.factor)};
 }
 
-// The statistic and the largest are one number where the limit is on the largest.
-bool shows_statistic(const Limit* limit) { return limit != nullptr; }
-
 std::string story_line(const StoryFacts& story, const Limit* limit, double scale, const Widths& widths,
                        const Decimals& decimals, const ShownUnit& force, const ScreenStyle& style) {
   const Signs signs(style);
   const Largest& drift = story.drift_ratio;
   std::string line = right(std::to_string(story.story), widths.number) + " ";
   if (widths.label > 0) line += left(clipped(story.label, widths.label - 1, style), widths.label);
-  if (shows_statistic(limit))
-    line += painted(right(number_text(story.statistic / percent, decimals.drift, signs), widths.statistic), Tone::strong, style);
+  if (limit)
+    line += painted(right(number_text(story.statistic / percent, decimals.drift, signs), widths.statistic),
+                    Tone::strong, style);
   line += right(number_text(drift.value / percent, decimals.drift, signs), widths.largest);
-  line += painted(right(error_text(drift.step_error / percent, decimals.drift), widths.error), Tone::quiet, style);
-  line += "  " + bar_text(story, limit, scale, widths.bar, style);
-  if (limit) line += right(number_text(std::round(story.margin * 100), 0, signs), widths.margin);
+  line += painted(right(error_text(drift.step_error / percent, decimals.drift + 1), widths.error), Tone::quiet, style);
+  line += "  " + bar_text(ends_of(story, limit, scale, widths.bar), widths.bar, style);
+  if (limit && std::isinf(story.margin))
+    line += right("none", widths.margin);
+  else if (limit)
+    line += right(number_text(std::round(story.margin * 100), 0, signs), widths.margin);
   line += "  " + left(clipped(drift.motion, widths.motion, style), widths.motion);
   line += right(number_text(story.residual_drift_ratio.value / percent, decimals.residual, signs), widths.residual);
   line += right(number_text(story.ductility.value, decimals.ductility, signs), widths.ductility);
@@ -110,17 +127,21 @@ std::string heading_statistic(const Limit& limit) {
 std::string heading(const Limit* limit, const Widths& widths, const ShownUnit& force, const ScreenStyle& style) {
   const Signs signs(style);
   const std::size_t front = widths.number + 1 + widths.label;
-  const std::string bar_title = limit ? "" : "largest";
-  std::string first = left(" story", front), second = left("", front);
-  if (limit) first += right(heading_statistic(*limit), widths.statistic), second += right("%", widths.statistic);
-  first += right("largest", widths.largest) + right(signs.plus_minus + "step", widths.error);
-  second += right("%", widths.largest) + right("%", widths.error);
-  first += "  " + left("drift ratio", widths.bar), second += left("", widths.bar + 2);
+  const std::size_t drift = widths.statistic + widths.largest + widths.error;
+  const bool narrow = widths.residual < 9, short_motion = widths.motion < 11;
+  std::string first =
+      left(widths.label > 0 ? " story" : " no.", front) + right("drift ratio, %", drift) + left("", widths.bar + 2);
+  std::string second = left("", front);
+  if (limit) second += right(heading_statistic(*limit), widths.statistic);
+  second +=
+      right("largest", widths.largest) + right(signs.plus_minus + "step", widths.error) + left("", widths.bar + 2);
   if (limit) first += right("margin", widths.margin), second += right("%", widths.margin);
-  first += "  " + left("motion", widths.motion), second += "  " + left("", widths.motion);
-  first += right("residual", widths.residual) + right(widths.ductility < 10 ? "duct." : "ductility", widths.ductility) +
-           right("shear", widths.shear);
-  second += right("%", widths.residual) + right("-", widths.ductility) + right(force.unit, widths.shear);
+  first += "  " + left(short_motion ? "motion" : "motion with", widths.motion) +
+           right(narrow ? "resid." : "residual", widths.residual) +
+           right(narrow ? "duct." : "ductil.", widths.ductility) + right("shear", widths.shear);
+  second += "  " + left(short_motion ? "" : "the largest", widths.motion) +
+            right(narrow ? "%" : "drift, %", widths.residual) + right("1", widths.ductility) +
+            right(force.unit, widths.shear);
   return painted(first, Tone::quiet, style) + "\n" + painted(second, Tone::quiet, style) + "\n";
 }
 

@@ -19,10 +19,14 @@ struct Word {
 
 Word word_of(const Outcome& outcome) {
   switch (outcome.finding) {
-    case Finding::holds: return {"HOLDS", Tone::good};
-    case Finding::exceeded: return {"EXCEEDED", Tone::bad};
-    case Finding::too_close: return {"TOO CLOSE", Tone::warning};
-    case Finding::undetermined: return {"UNDETERMINED", Tone::warning};
+    case Finding::holds:
+      return {"HOLDS", Tone::good};
+    case Finding::exceeded:
+      return {"EXCEEDED", Tone::bad};
+    case Finding::too_close:
+      return {"TOO CLOSE", Tone::warning};
+    case Finding::undetermined:
+      return {"UNDETERMINED", Tone::warning};
   }
   return {"", Tone::plain};
 }
@@ -32,7 +36,7 @@ std::string value_text(const Outcome& outcome, const ShownUnit& shown, int decim
   if (std::isnan(outcome.value)) return "no value";
   if (std::isinf(outcome.value)) return "beyond (collapse)";
   return fmt::format("{} {} {} {}", number_text(outcome.value / shown.factor, decimals, signs), signs.plus_minus,
-                     error_text(outcome.step_error / shown.factor, decimals), shown.unit);
+                     error_text(outcome.step_error / shown.factor, decimals + (shown.unit == "%")), shown.unit);
 }
 
 std::string place_text(const Outcome& outcome, const Limit& limit) {
@@ -44,14 +48,13 @@ std::string place_text(const Outcome& outcome, const Limit& limit) {
 std::string reason_text(const Outcome& outcome) {
   if (outcome.runs == 0) return "no run at this factor";
   std::string text;
+  const auto add = [&text](const std::string& part) { text += (text.empty() ? "" : "; ") + part; };
   if (outcome.collapsed > 0)
-    text = fmt::format("{} of {} runs collapsed and count as beyond the limit", outcome.collapsed, outcome.runs);
-  if (outcome.not_converged > 0)
-    text += fmt::format("{}{} of {} runs did not converge; the value is of the others", text.empty() ? "" : "; ",
-                        outcome.not_converged, outcome.runs);
+    add(fmt::format("{} of {} runs collapsed, which is beyond any limit", outcome.collapsed, outcome.runs));
+  if (outcome.not_converged > 0) add(fmt::format("{} did not converge and is left out", outcome.not_converged));
   if (outcome.finding == Finding::too_close)
-    text += fmt::format("{}{} the limit by less than the step error: take a smaller step", text.empty() ? "" : "; ",
-                        outcome.exceeded ? "above" : "below");
+    add(fmt::format("{} the limit by less than the step error: take a smaller step",
+                    outcome.exceeded ? "above" : "below"));
   return text;
 }
 
@@ -59,7 +62,8 @@ int decimals_of(const Limit& limit, const ShownUnit& shown) {
   return shown.unit == "%" ? (limit.value < 0.001 ? 4 : 2) : decimals_for(limit.value / shown.factor);
 }
 
-std::string outcome_line(const Outcome& outcome, const Limit& limit, const StudyUnits& units, const ScreenStyle& style) {
+std::string outcome_line(const Outcome& outcome, const Limit& limit, const StudyUnits& units,
+                         const ScreenStyle& style) {
   const Signs signs(style);
   const ShownUnit shown = shown_unit(*limit.quantity, units);
   const Word word = word_of(outcome);
@@ -72,27 +76,31 @@ std::string outcome_line(const Outcome& outcome, const Limit& limit, const Study
   const std::size_t used = 4 + 14 + 8 + 22 + 14 + 10;
   line += clipped(outcome.motion, static_cast<std::size_t>(style.width) - used, style) + "\n";
   const std::string reason = reason_text(outcome);
-  if (!reason.empty()) line += std::string(18, ' ') + painted(clipped(reason, style.width - 18, style), Tone::quiet, style) + "\n";
+  if (!reason.empty())
+    line += std::string(18, ' ') + painted(clipped(reason, style.width - 18, style), Tone::quiet, style) + "\n";
   return line;
 }
 
 std::string limit_line(const Limit& limit, const StudyUnits& units, const ScreenStyle& style) {
   const Signs signs(style);
   const ShownUnit shown = shown_unit(*limit.quantity, units);
-  const std::string what = fmt::format("  {} {} {} {} {}", shown_statistic(limit), shown_name(*limit.quantity), signs.at_most,
-                                       number_text(limit.value / shown.factor, decimals_of(limit, shown), signs), shown.unit);
+  const std::string what =
+      fmt::format("  {} {} {} {} {}", shown_statistic(limit), shown_name(*limit.quantity), signs.at_most,
+                  number_text(limit.value / shown.factor, decimals_of(limit, shown), signs), shown.unit);
   const std::string source = limit.source.empty() ? "  (no source stated)" : "  (" + limit.source + ")";
   const auto room = static_cast<std::size_t>(style.width) - std::min<std::size_t>(columns_of(what), style.width);
   return painted(what, Tone::strong, style) + painted(clipped(source, room, style), Tone::quiet, style) + "\n";
 }
 
-std::string runs_with(const StudyResults& results, RunStatus status, const std::string& title, const ScreenStyle& style) {
+std::string runs_with(const StudyResults& results, RunStatus status, const std::string& title,
+                      const ScreenStyle& style) {
   const Signs signs(style);
   std::string text;
   for (std::size_t i = 0; i < results.runs.size(); ++i) {
     const RunResult& run = results.runs[i];
     if (run.status != status) continue;
-    const std::string line = fmt::format("  run {}  {} {} {:g}  {}", i, run.motion, signs.times, run.factor, run.status_note);
+    const std::string line =
+        fmt::format("  run {}  {} {} {:g}  {}", i, run.motion, signs.times, run.factor, run.status_note);
     text += clipped(line, style.width, style) + "\n";
   }
   return text.empty() ? "" : painted(title, Tone::bad, style) + "\n" + text + "\n";
@@ -141,7 +149,8 @@ std::string verdict_text(const StoredStudy& stored, const Verdict& verdict, cons
   for (std::size_t i = 0; i < stored.limits.size(); ++i) {
     text += limit_line(stored.limits[i], stored.units, style);
     for (const Outcome& outcome : verdict.outcomes)
-      if (static_cast<std::size_t>(outcome.limit) == i) text += outcome_line(outcome, stored.limits[i], stored.units, style);
+      if (static_cast<std::size_t>(outcome.limit) == i)
+        text += outcome_line(outcome, stored.limits[i], stored.units, style);
   }
   text += "\n" + runs_with(stored.results, RunStatus::collapsed, "Collapsed", style);
   text += runs_with(stored.results, RunStatus::not_converged, "Not converged", style);

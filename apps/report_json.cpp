@@ -32,9 +32,12 @@ Json story(const StoryFacts& facts) {
 }
 
 Json factor(const FactorFacts& facts) {
-  Json json{{"factor", facts.factor},        {"runs", facts.runs},
-            {"done", facts.done},            {"collapsed", facts.collapsed},
-            {"not_converged", facts.not_converged}, {"stories", Json::array()}};
+  Json json{{"factor", facts.factor},
+            {"runs", facts.runs},
+            {"done", facts.done},
+            {"collapsed", facts.collapsed},
+            {"not_converged", facts.not_converged},
+            {"stories", Json::array()}};
   for (const StoryFacts& one : facts.stories) json["stories"].push_back(story(one));
   json["base_shear"] = largest(facts.base_shear, nullptr);
   json["roof_displacement"] = largest(facts.roof_displacement, "floor");
@@ -46,8 +49,11 @@ Json factor(const FactorFacts& facts) {
 Json building(const BuildingSummary& summary, const ProfileFacts& facts) {
   Json periods = Json::array();
   for (const Mode& mode : summary.modes) periods.push_back(number(mode.period));
-  return {{"title", summary.title},   {"stories", summary.heights.size()}, {"height", facts.height},
-          {"weight", facts.weight},   {"periods", periods}};
+  return {{"title", summary.title},
+          {"stories", summary.heights.size()},
+          {"height", facts.height},
+          {"weight", facts.weight},
+          {"periods", periods}};
 }
 
 Json limit(const Limit& one) {
@@ -83,15 +89,20 @@ Json ended_early(const std::vector<RunResult>& runs) {
   for (std::size_t i = 0; i < runs.size(); ++i) {
     const RunResult& run = runs[i];
     if (run.status == RunStatus::done) continue;
-    list.push_back({{"run", i}, {"motion", run.motion}, {"factor", run.factor}, {"status", status_name(run.status)},
-                    {"time_reached", number(run.time_reached)}, {"note", run.status_note}});
+    list.push_back({{"run", i},
+                    {"motion", run.motion},
+                    {"factor", run.factor},
+                    {"status", status_name(run.status)},
+                    {"time_reached", number(run.time_reached)},
+                    {"note", run.status_note}});
   }
   return list;
 }
 
 Json units() {
   Json json;
-  for (const char* name : {"drift_ratio", "story_shear", "base_shear", "overturning_moment", "ductility", "floor_acceleration"})
+  for (const char* name :
+       {"drift_ratio", "story_shear", "base_shear", "overturning_moment", "ductility", "floor_acceleration"})
     json[name] = si_unit(find_quantity(name)->dimension);
   json["residual_drift_ratio"] = "1";
   json["roof_displacement"] = json["height"] = "m";

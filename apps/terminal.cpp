@@ -7,6 +7,8 @@
 #include <cctype>
 #include <cstdlib>
 
+#include "core/error.hpp"
+
 namespace pilotis {
 
 namespace {
@@ -48,6 +50,12 @@ ScreenStyle screen_style(std::FILE* stream) {
   winsize size{};
   const int columns = is_terminal && ::ioctl(file, TIOCGWINSZ, &size) == 0 ? size.ws_col : 0;
   return style_for(is_terminal, columns, screen_environment());
+}
+
+void print_out(std::string_view text) {
+  if (std::fwrite(text.data(), 1, text.size(), stdout) != text.size() || std::fflush(stdout) != 0)
+    throw outside_error("standard output", "cannot be written",
+                        "check that the disk has room and that the program it is piped to still runs");
 }
 
 }  // namespace pilotis

@@ -14,12 +14,18 @@ bool starts_character(char c) { return (static_cast<unsigned char>(c) & 0xC0) !=
 // ANSI escape sequences (ECMA-48, select graphic rendition); the eight basic colors, which every scheme keeps legible.
 const char* escape_of(Tone tone) {
   switch (tone) {
-    case Tone::plain: return "";
-    case Tone::strong: return "\x1b[1m";
-    case Tone::quiet: return "\x1b[2m";
-    case Tone::good: return "\x1b[32m";
-    case Tone::warning: return "\x1b[33m";
-    case Tone::bad: return "\x1b[1;31m";
+    case Tone::plain:
+      return "";
+    case Tone::strong:
+      return "\x1b[1m";
+    case Tone::quiet:
+      return "\x1b[2m";
+    case Tone::good:
+      return "\x1b[32m";
+    case Tone::warning:
+      return "\x1b[33m";
+    case Tone::bad:
+      return "\x1b[1;31m";
   }
   return "";
 }
@@ -27,10 +33,14 @@ const char* escape_of(Tone tone) {
 const char* ordinal_ending(int n) {
   if (n % 100 >= 11 && n % 100 <= 13) return "th";
   switch (n % 10) {
-    case 1: return "st";
-    case 2: return "nd";
-    case 3: return "rd";
-    default: return "th";
+    case 1:
+      return "st";
+    case 2:
+      return "nd";
+    case 3:
+      return "rd";
+    default:
+      return "th";
   }
 }
 
@@ -67,9 +77,11 @@ Signs::Signs(const ScreenStyle& style) {
   if (style.unicode) {
     plus_minus = "±", times = "×", at_most = "≤", infinity = "∞", separator = " · ";
     bar = "━", light_bar = "─", mark = "┃", beyond = "▶";
+    half_bar = "╸", half_light = "╴", half_to_light = "╾";
   } else {
     plus_minus = "+-", times = "x", at_most = "<=", infinity = "inf", separator = ", ";
     bar = "=", light_bar = "-", mark = "|", beyond = ">";
+    half_bar = half_to_light = "-", half_light = " ";
   }
 }
 
@@ -108,8 +120,8 @@ std::string shown_statistic(const Limit& limit) {
   if (limit.statistic == Statistic::max) return "largest";
   if (limit.statistic != Statistic::percentile) return std::string(statistic_name(limit.statistic));
   const int whole = static_cast<int>(limit.percentile);
-  if (whole == limit.percentile) return fmt::format("{}{} percentile", whole, ordinal_ending(whole));
-  return fmt::format("{}th percentile", limit.percentile);
+  if (whole == limit.percentile) return fmt::format("{}{}-percentile", whole, ordinal_ending(whole));
+  return fmt::format("{}th-percentile", limit.percentile);
 }
 
 }  // namespace pilotis

@@ -26,6 +26,7 @@ std::string painted(const std::string& text, Tone tone, const ScreenStyle& style
 struct Signs {
   explicit Signs(const ScreenStyle& style);
   std::string plus_minus, times, at_most, infinity, separator, bar, light_bar, mark, beyond;
+  std::string half_bar, half_light, half_to_light;  // the left half of a cell; strong left and light right
 };
 
 // `decimals` places; "inf" sign for infinity, "-" for NaN.
@@ -44,7 +45,7 @@ struct ShownUnit {
 ShownUnit shown_unit(const Quantity& quantity, const StudyUnits& units);
 // "drift ratio" for "drift_ratio".
 std::string shown_name(const Quantity& quantity);
-// "mean", "largest", "median", "84th percentile".
+// "mean", "largest", "median", "84th-percentile".
 std::string shown_statistic(const Limit& limit);
 
 }  // namespace pilotis

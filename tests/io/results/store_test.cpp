@@ -51,8 +51,10 @@ void expect_same(const RunResult& a, const RunResult& b) {
   EXPECT_EQ(a.step_choice, b.step_choice);
   EXPECT_EQ(a.status, b.status);
   EXPECT_EQ(a.status_note, b.status_note);
-  expect_same({a.factor, a.step, a.time_reached, a.energy_error, a.energy_input, a.energy_damping, a.energy_absorbed, a.wall_time},
-              {b.factor, b.step, b.time_reached, b.energy_error, b.energy_input, b.energy_damping, b.energy_absorbed, b.wall_time},
+  expect_same({a.factor, a.step, a.time_reached, a.energy_error, a.energy_input, a.energy_damping, a.energy_absorbed,
+               a.wall_time},
+              {b.factor, b.step, b.time_reached, b.energy_error, b.energy_input, b.energy_damping, b.energy_absorbed,
+               b.wall_time},
               "numbers of the run");
   expect_same(a.residual_drift, b.residual_drift, "residual drift");
   expect_same(a.residual_swing, b.residual_swing, "residual swing");
@@ -114,7 +116,8 @@ TEST_F(Store, GivesBackWhatWasWritten) {
   EXPECT_EQ(found.results.motions[3].digest, stored.results.motions[3].digest);
   EXPECT_EQ(found.results.motions[3].samples, 3200);
   ASSERT_EQ(found.results.runs.size(), stored.results.runs.size());
-  for (std::size_t i = 0; i < found.results.runs.size(); ++i) expect_same(found.results.runs[i], stored.results.runs[i]);
+  for (std::size_t i = 0; i < found.results.runs.size(); ++i)
+    expect_same(found.results.runs[i], stored.results.runs[i]);
   ASSERT_EQ(found.limits.size(), stored.limits.size());
   for (std::size_t i = 0; i < found.limits.size(); ++i) expect_same(found.limits[i], stored.limits[i]);
 }
@@ -178,7 +181,8 @@ std::string message_of(ErrorKind kind, Act act) {
 }
 
 TEST_F(Store, MissingFolder) {
-  const auto message = message_of(ErrorKind::outside, [&] { write(folder_ / "none" / "a.h5", invented::calm_study()); });
+  const auto message =
+      message_of(ErrorKind::outside, [&] { write(folder_ / "none" / "a.h5", invented::calm_study()); });
   EXPECT_NE(message.find("none/a.h5"), std::string::npos) << message;
   EXPECT_NE(message.find("No such file or directory"), std::string::npos) << message;
 }

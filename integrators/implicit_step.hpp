@@ -50,17 +50,16 @@ template <class R>
 R out_of_balance(const System& system, const ImplicitCoefficients& c, const R* before, const R* after,
                  ImplicitWorkspace<R>& w) noexcept {
   const double weight = 1 + c.alpha;
-  R largest = splat<R>(0), farthest = splat<R>(0);
+  R largest = splat<R>(0), farthest = splat<R>(0), poison = splat<R>(0);
   for (int i = 0; i < system.freedoms; ++i) {
     R r = weight * (after[i] - w.internal[i]) - system.mass[i] * w.a[i];
     if (c.alpha != 0) r -= c.alpha * (before[i] - w.internal_before[i]);
     w.residual[i] = r;
-    // Written so that a NaN stays: it must never pass for converged.
-    const R size = lane_abs<R>(r);
-    largest = select(size <= largest, largest, size);
+    largest = lane_max<R>(largest, lane_abs<R>(r));
+    poison += r - r;  // 0, or NaN from the first residual that is not finite: it must never pass for converged
     farthest = lane_max<R>(farthest, lane_abs<R>(w.u[i]));
   }
-  return largest - 16 * std::numeric_limits<double>::epsilon() * w.stiffest * farthest;
+  return largest + poison - 16 * std::numeric_limits<double>::epsilon() * w.stiffest * farthest;
 }
 
 // Loads [freedom] at both ends. `tolerance` in N. Gives the lanes that have converged; `state` moves on when all have and

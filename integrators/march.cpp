@@ -15,6 +15,12 @@ bool all_finite(const State<double>& state) noexcept {
   return std::isfinite(sum);
 }
 
+bool all_finite(const std::vector<double>& before, const std::vector<double>& after) noexcept {
+  double sum = 0;
+  for (std::size_t i = 0; i < before.size(); ++i) sum += std::abs(before[i]) + std::abs(after[i]);
+  return std::isfinite(sum);
+}
+
 // Shows accepted states to the observers.
 class Gallery {
  public:
@@ -69,7 +75,6 @@ MarchEnd march(const System& system, const Load& load, Stepper& stepper, const M
   if (state.step == 0 && state.fraction == 0 && !gallery.show(state, 0)) return {MarchEnding::stopped, 0};
   double share = 1;  // of a whole step to try next
   while (state.step < span.end) {
-    if (state.fraction == 0) share = 1;
     share = std::min(share, 1 - state.fraction);
     const double time = time_of(state, span.dt);
     load.at(time, before.data());
@@ -79,10 +84,11 @@ MarchEnd march(const System& system, const Load& load, Stepper& stepper, const M
       share /= 2;
       continue;
     }
-    if (result.status != StepStatus::done) return {MarchEnding::not_converged, time};
+    if (result.status != StepStatus::done)
+      return {all_finite(before, after) ? MarchEnding::not_converged : MarchEnding::not_finite, time};
     if (!all_finite(state)) return {MarchEnding::not_finite, time};
     advance_clock(state, result.share * share);
-    if (result.share < 1) share = 1;
+    if (result.share < 1 || state.fraction == 0) share = 1;
     if (!gallery.show(state, time_of(state, span.dt))) return {MarchEnding::stopped, time_of(state, span.dt)};
   }
   return {MarchEnding::done, time_of(state, span.dt)};

@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <numbers>
 
 #include "integrators/implicit_stepper.hpp"
 
@@ -27,9 +28,9 @@ Traits Newmark::traits() const {
   } else {
     traits.spectral_radius = std::numeric_limits<double>::infinity();
   }
-  // 0.2 % of period, and 0.2 % of amplitude a radian from numerical damping; never more than 0.3 rad.
+  // 0.2 % of period, and 0.2 % of amplitude a cycle: pi (gamma - 1/2) omega dt; never more than 0.3 rad.
   const double period = std::sqrt(0.002 / std::max(std::abs(beta / 2 - 1.0 / 24), 1e-3));
-  const double damping = gamma > 0.5 ? 0.004 / (gamma - 0.5) : 1.0;
+  const double damping = gamma > 0.5 ? 0.002 / (std::numbers::pi * (gamma - 0.5)) : 1.0;
   traits.accurate_omega_dt = std::min({period, damping, 0.3});
   return traits;
 }

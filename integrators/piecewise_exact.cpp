@@ -45,7 +45,7 @@ Traits PiecewiseExact::traits() const {
   traits.order = 0;
   traits.implicit = false;
   traits.linear_only = true;
-  traits.spectral_radius = 0;
+  traits.spectral_radius = 1;
   traits.accurate_omega_dt = 0.126;  // a peak between two samples is missed by at most 0.2 %: (omega dt)^2 / 8
   return traits;
 }

@@ -7,8 +7,11 @@ namespace pilotis {
 
 namespace {
 
+// A grid time n dt may miss the ends of the table by rounding; a whole step must not lose its load for that.
 double table_value(const std::vector<double>& times, const std::vector<double>& values, double t) {
-  if (times.empty() || t < times.front() || t > times.back()) return 0;
+  const double rounding = 1e-11 * std::max(1.0, t);
+  if (times.empty() || t < times.front() - rounding || t > times.back() + rounding) return 0;
+  t = std::clamp(t, times.front(), times.back());
   const auto next = std::upper_bound(times.begin(), times.end(), t);
   if (next == times.end()) return values.back();
   const std::size_t i = next - times.begin();

@@ -47,6 +47,9 @@ struct BoucWen {
 
   // Throws Error (input) when |gamma| > beta.
   static BoucWen make(std::span<const double> values);
+  std::array<double, 7> values() const {
+    return {stiffness, yield_shear, post_yield_ratio, exponent, beta, gamma, A};
+  }
 };
 
 namespace bouc_wen {

@@ -8,9 +8,31 @@
 
 namespace pilotis {
 
-// W doubles side by side, W a power of two: GCC/Clang vector extension, so + - * / work as they stand.
+// GCC/Clang vector extensions of fixed width. Written out one by one: GCC drops a vector attribute that depends on a
+// template parameter when the type is handed on to another template.
+namespace lanes {
 template <int W>
-using Pack [[gnu::vector_size(W * sizeof(double))]] = double;
+struct Vectors;
+template <>
+struct Vectors<2> {
+  using Values [[gnu::vector_size(16)]] = double;
+  using Bits [[gnu::vector_size(16)]] = std::int64_t;
+};
+template <>
+struct Vectors<4> {
+  using Values [[gnu::vector_size(32)]] = double;
+  using Bits [[gnu::vector_size(32)]] = std::int64_t;
+};
+template <>
+struct Vectors<8> {
+  using Values [[gnu::vector_size(64)]] = double;
+  using Bits [[gnu::vector_size(64)]] = std::int64_t;
+};
+}  // namespace lanes
+
+// W doubles side by side, W = 2, 4 or 8: + - * / and comparisons work as they stand.
+template <int W>
+using Pack = typename lanes::Vectors<W>::Values;
 
 // What a comparison of two R gives, and how many runs an R carries.
 template <class R>
@@ -25,7 +47,7 @@ struct LaneTraits<double> {
 template <int W>
 struct PackTraits {
   static constexpr int width = W;
-  using Mask [[gnu::vector_size(W * sizeof(std::int64_t))]] = std::int64_t;
+  using Mask = typename lanes::Vectors<W>::Bits;
 };
 
 template <>

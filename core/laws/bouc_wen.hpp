@@ -6,8 +6,8 @@
 // initial stiffness is k and |z| tends to 1; otherwise the initial stiffness is (r + (1 - r) A) k and z tends to
 // (A / (beta + gamma))^(1/n).
 // The rule does not depend on the rate, so z is a function of the path of d alone. It is integrated along d from the
-// committed state by the classical fourth-order Runge-Kutta method in strides of a quarter u_y, the last one shorter:
-// force and tangent are continuous in d.
+// committed state by the classical fourth-order Runge-Kutta method, in strides that depend on the committed state alone
+// (see longest_stride), the last one cut short: force and tangent are continuous in d.
 // Sources: Bouc 1967; Wen, "Method for random vibration of hysteretic systems", J. Eng. Mech. 102 (1976) 249; Erlicher &
 // Point, "Thermodynamic admissibility of Bouc-Wen type hysteresis models", C. R. Mecanique 332 (2004) 51.
 #pragma once
@@ -35,6 +35,7 @@ struct BoucWen {
   double post_yield_ratio;  // -
   double exponent;          // n, -
   double beta, gamma, A;    // -
+  double loading_rate;      // -, set by make(): |d(dz/dx)/dz| at the ultimate z, x = d / u_y: n (beta + gamma) z_u^(n-1)
 
   template <class R>
   struct Memory {
@@ -81,7 +82,20 @@ Slope<R> stride(const BoucWen& law, const R& z, const R& h, const R& direction) 
   return {z + h / 6.0 * sum, sum / 6.0 + h / 6.0 * (2.0 * k2_h + 2.0 * k3_h + k4_h)};
 }
 
-inline constexpr double longest_stride = 0.25;  // in u_y
+// The longest stride from z, in u_y: a quarter of the length over which z closes in on its course (the method is stable
+// and accurate there); while |z| falls, no further than to z = 0, where dz/dx has a kink. dz/dx is at least A on the way.
+template <class R>
+R longest_stride(const BoucWen& law, const R& z, const R& direction) {
+  const double n = law.exponent;
+  const R size = lane_abs<R>(z);
+  const R unloading_rate = n * (law.beta - law.gamma) * (n == 1.0 ? splat<R>(1) : lane_power<R>(size, n - 1));
+  const R to_zero = lane_max<R>(size / law.A, splat<R>(1e-6));
+  const R loading = splat<R>(0.25 / law.loading_rate);  // infinite when gamma = -beta: then dz/dx = A
+  return select(direction * z < 0.0, lane_min<R>(0.25 / unloading_rate, to_zero), loading);
+}
+
+// More strides than it takes from one ultimate value to the other, to 1e-17, for n up to 20.
+inline constexpr int most_strides = 400;
 
 }  // namespace bouc_wen
 
@@ -92,15 +106,16 @@ Reply<R> reply(const BoucWen& law, const R& deformation, const R&, const BoucWen
   R left = (deformation - committed.deformation) / u_y;  // what is still to walk
   const R direction = lane_sign<R>(left);
   R z = committed.z;
-  auto long_way = lane_abs<R>(left) > bouc_wen::longest_stride;
-  // Bounded: far beyond saturation nothing changes any more.
-  for (int i = 0; i < 400 && any(long_way); ++i) {
-    const R h = select(long_way, R(bouc_wen::longest_stride * direction), splat<R>(0));
+  R longest = bouc_wen::longest_stride(law, z, direction);
+  auto long_way = lane_abs<R>(left) > longest;
+  for (int i = 0; i < bouc_wen::most_strides && any(long_way); ++i) {
+    const R h = select(long_way, R(longest * direction), splat<R>(0));
     z = bouc_wen::stride(law, z, h, direction).value;
     left = left - h;
-    long_way = lane_abs<R>(left) > bouc_wen::longest_stride;
+    longest = bouc_wen::longest_stride(law, z, direction);
+    long_way = lane_abs<R>(left) > longest;
   }
-  left = lane_min<R>(lane_max<R>(left, splat<R>(-bouc_wen::longest_stride)), splat<R>(bouc_wen::longest_stride));
+  left = lane_min<R>(lane_max<R>(left, R(-longest)), longest);
   const auto last = bouc_wen::stride(law, z, left, direction);
   trial.z = last.value;
   trial.deformation = deformation;

@@ -64,15 +64,9 @@ using Mask = typename LaneTraits<R>::Mask;
 inline double& lane(double& x, int) { return x; }
 inline double lane(const double& x, int) { return x; }
 template <class P>
-  requires(LaneTraits<P>::width > 1)
-double lane(const P& x, int i) {
-  return x[i];
-}
+requires(LaneTraits<P>::width > 1) double lane(const P& x, int i) { return x[i]; }
 template <class P>
-  requires(LaneTraits<P>::width > 1)
-void set_lane(P& x, int i, double value) {
-  x[i] = value;
-}
+requires(LaneTraits<P>::width > 1) void set_lane(P& x, int i, double value) { x[i] = value; }
 inline void set_lane(double& x, int, double value) { x = value; }
 
 // The same number in every lane.
@@ -84,15 +78,13 @@ R splat(double x) {
 // where ? yes : no, lane by lane.
 inline double select(bool where, double yes, double no) { return where ? yes : no; }
 template <class R>
-  requires(LaneTraits<R>::width > 1)
-R select(const Mask<R>& where, const R& yes, const R& no) {
+requires(LaneTraits<R>::width > 1) R select(const Mask<R>& where, const R& yes, const R& no) {
   return where ? yes : no;
 }
 
 inline bool any(bool mask) { return mask; }
 template <class M>
-  requires(!std::is_same_v<M, bool>)
-bool any(const M& mask) {
+requires(!std::is_same_v<M, bool>) bool any(const M& mask) {
   std::int64_t bits = 0;
   for (unsigned i = 0; i < sizeof(M) / sizeof(std::int64_t); ++i) bits |= mask[i];
   return bits != 0;
@@ -100,8 +92,7 @@ bool any(const M& mask) {
 
 inline bool all(bool mask) { return mask; }
 template <class M>
-  requires(!std::is_same_v<M, bool>)
-bool all(const M& mask) {
+requires(!std::is_same_v<M, bool>) bool all(const M& mask) {
   std::int64_t bits = -1;
   for (unsigned i = 0; i < sizeof(M) / sizeof(std::int64_t); ++i) bits &= mask[i];
   return bits != 0;

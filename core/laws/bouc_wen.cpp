@@ -11,8 +11,9 @@ namespace pilotis {
 BoucWen BoucWen::make(std::span<const double> v) {
   BoucWen law{v[0], v[1], v[2], v[3], v[4], v[5], v[6], 0};
   if (std::abs(law.gamma) > law.beta)
-    throw input_error("gamma", fmt::format("found {:g}", law.gamma),
-                      fmt::format("it must lie between -beta and beta, {:g}, or a loop could give energy back", law.beta));
+    throw input_error(
+        "gamma", fmt::format("found {:g}", law.gamma),
+        fmt::format("it must lie between -beta and beta, {:g}, or a loop could give energy back", law.beta));
   // z_u = (A / (beta + gamma))^(1/n), put so that gamma = -beta gives a rate of 0.
   const double n = law.exponent;
   law.loading_rate = n * std::pow(law.beta + law.gamma, 1 / n) * std::pow(law.A, 1 - 1 / n);

@@ -8,8 +8,8 @@
 // The rule does not depend on the rate, so z is a function of the path of d alone. It is integrated along d from the
 // committed state by the classical fourth-order Runge-Kutta method, in strides that depend on the committed state alone
 // (see longest_stride), the last one cut short: force and tangent are continuous in d.
-// Sources: Bouc 1967; Wen, "Method for random vibration of hysteretic systems", J. Eng. Mech. 102 (1976) 249; Erlicher &
-// Point, "Thermodynamic admissibility of Bouc-Wen type hysteresis models", C. R. Mecanique 332 (2004) 51.
+// Sources: Bouc 1967; Wen, "Method for random vibration of hysteretic systems", J. Eng. Mech. 102 (1976) 249; Erlicher
+// & Point, "Thermodynamic admissibility of Bouc-Wen type hysteresis models", C. R. Mecanique 332 (2004) 51.
 #pragma once
 
 #include <array>
@@ -35,7 +35,7 @@ struct BoucWen {
   double post_yield_ratio;  // -
   double exponent;          // n, -
   double beta, gamma, A;    // -
-  double loading_rate;      // -, set by make(): |d(dz/dx)/dz| at the ultimate z, x = d / u_y: n (beta + gamma) z_u^(n-1)
+  double loading_rate;  // -, set by make(): |d(dz/dx)/dz| at the ultimate z, x = d / u_y: n (beta + gamma) z_u^(n-1)
 
   template <class R>
   struct Memory {
@@ -83,7 +83,8 @@ Slope<R> stride(const BoucWen& law, const R& z, const R& h, const R& direction) 
 }
 
 // The longest stride from z, in u_y: a quarter of the length over which z closes in on its course (the method is stable
-// and accurate there); while |z| falls, no further than to z = 0, where dz/dx has a kink. dz/dx is at least A on the way.
+// and accurate there); while |z| falls, no further than to z = 0, where dz/dx has a kink. dz/dx is at least A on the
+// way.
 template <class R>
 R longest_stride(const BoucWen& law, const R& z, const R& direction) {
   const double n = law.exponent;

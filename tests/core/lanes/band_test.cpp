@@ -1,6 +1,7 @@
-// Band matrices: the factors over packs have the scalar's bits; the solution is Eigen's dense one (Eigen 3.4, the outside
-// reference). Tolerance: LDL^T of a positive definite matrix of order n has a backward error of about n eps |A| (Higham,
-// Accuracy and Stability of Numerical Algorithms, ch. 10, from memory), so x is off by at most n eps cond(A) |x|.
+// Band matrices: the factors over packs have the scalar's bits; the solution is Eigen's dense one (Eigen 3.4, the
+// outside reference). Tolerance: LDL^T of a positive definite matrix of order n has a backward error of about n eps |A|
+// (Higham, Accuracy and Stability of Numerical Algorithms, ch. 10, from memory), so x is off by at most n eps cond(A)
+// |x|.
 #include "core/system/band.hpp"
 
 #include <gtest/gtest.h>

@@ -18,7 +18,8 @@ bool same(double a, double b) { return std::memcmp(&a, &b, sizeof a) == 0; }
 
 // Fields of a pack's memory stand one after the other, each with all its lanes.
 template <class L, int W>
-bool lane_remembers(const typename L::template Memory<Pack<W>>& pack, int i, const typename L::template Memory<double>& one) {
+bool lane_remembers(const typename L::template Memory<Pack<W>>& pack, int i,
+                    const typename L::template Memory<double>& one) {
   if constexpr (std::is_empty_v<typename L::template Memory<double>>) return true;
   constexpr std::size_t fields = sizeof(one) / sizeof(double);
   std::vector<double> wide(fields * W), narrow(fields);

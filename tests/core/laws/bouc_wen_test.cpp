@@ -25,7 +25,8 @@ Walker<BoucWen> spring(const Shape& s, double r = 0) {
 // the curvature of n = 2. The factor 4 is for the latter and for strides not aligned with the worst case.
 constexpr double stride_error = 4 * 0.25 * 0.25 * 0.25 * 0.25 / 120 / 2.718;
 
-const Shape first_order[] = {{1, 0.5, 0.5, 1}, {1, 0.9, 0.1, 1}, {1, 0.8, -0.3, 2}, {1, 100, 100, 1}, {1, 0.01, 0.01, 5}};
+const Shape first_order[] = {
+    {1, 0.5, 0.5, 1}, {1, 0.9, 0.1, 1}, {1, 0.8, -0.3, 2}, {1, 100, 100, 1}, {1, 0.01, 0.01, 5}};
 const Shape second_order[] = {{2, 0.5, 0.5, 1}, {2, 0.7, -0.2, 3}, {2, 100, 90, 0.5}, {2, 0.05, 0, 1}};
 
 TEST(BoucWenSpring, LoadsAlongTheExponentialForN1) {
@@ -45,7 +46,8 @@ TEST(BoucWenSpring, LoadsAlongTheHyperbolicTangentForN2) {
     const double ultimate = std::sqrt(s.A / (s.beta + s.gamma)), rate = std::sqrt(s.A * (s.beta + s.gamma));
     for (const double rate_x : {0.01, 0.1, 0.7, 2.0, 5.0, 40.0}) {
       const double z = ultimate * std::tanh(rate_x);
-      EXPECT_NEAR(spring(s).peek(rate_x / rate * u_y).force / f_y, z, stride_error * ultimate) << s.beta << " " << rate_x;
+      EXPECT_NEAR(spring(s).peek(rate_x / rate * u_y).force / f_y, z, stride_error * ultimate)
+          << s.beta << " " << rate_x;
     }
   }
 }
@@ -84,7 +86,8 @@ TEST(BoucWenSpring, UnloadsWithTheSlopeOfTheEquation) {
 // Wen 1976: |z| tends to (A / (beta + gamma))^(1/n). Sharp knees and fast rates included: the equation is stiff there.
 TEST(BoucWenSpring, TendsToItsUltimateValueOnBothSides) {
   for (const double n : {1.0, 1.5, 2.0, 5.0, 20.0})
-    for (const Shape& s : {Shape{n, 0.5, 0.5, 1}, Shape{n, 2, -1, 3}, Shape{n, 100, 100, 1}, Shape{n, 0.01, 0.005, 50}}) {
+    for (const Shape& s :
+         {Shape{n, 0.5, 0.5, 1}, Shape{n, 2, -1, 3}, Shape{n, 100, 100, 1}, Shape{n, 0.01, 0.005, 50}}) {
       const double ultimate = std::pow(s.A / (s.beta + s.gamma), 1 / n);
       const double far = 100 * ultimate / s.A * u_y;  // many times the length of the rise
       Walker<BoucWen> w = spring(s);

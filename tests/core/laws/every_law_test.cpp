@@ -76,8 +76,8 @@ TYPED_TEST(EveryLaw, RemainsFinite) {
       RC_ASSERT(std::isfinite(answer.force));
       RC_ASSERT(std::isfinite(answer.tangent));
       // None of the rules is ever stiffer than its initial slope on the way out, so none carries more than this.
-      RC_ASSERT(std::abs(answer.force) <=
-                (1 + rounding) * 2 * std::max(initial_stiffness(law), law.stiffness) * (std::abs(turn) + 1e3 * scale_of(law)));
+      RC_ASSERT(std::abs(answer.force) <= (1 + rounding) * 2 * std::max(initial_stiffness(law), law.stiffness) *
+                                              (std::abs(turn) + 1e3 * scale_of(law)));
     }
   }));
 }
@@ -103,8 +103,8 @@ TYPED_TEST(EveryLaw, HasTheSlopeOfItsForceAsTangent) {
   }));
 }
 
-// Tolerance of both energy checks: the trapezoid rule's error falls by four when the parts are halved (at a corner, too,
-// and always with the same sign), so twice the change covers what is left; and rounding of every term of the sum.
+// Tolerance of both energy checks: the trapezoid rule's error falls by four when the parts are halved (at a corner,
+// too, and always with the same sign), so twice the change covers what is left; and rounding of every term of the sum.
 TYPED_TEST(EveryLaw, GivesNoEnergyBackAroundALoop) {
   EXPECT_TRUE(rc::check("work from the virgin state back to no deformation is at least 0", [] {
     const TypeParam law = drawn_law<TypeParam>(Reach::moderate);

@@ -29,11 +29,13 @@ std::vector<double> fair_values(const Method& method) {
 void expect_taken(const Method& method, std::size_t i, double value) {
   std::vector<double> values = fair_values(method);
   values[i] = value;
-  EXPECT_NO_THROW(make_law(method.name, values, "spring")) << method.name << "." << method.parameters[i].key << " = " << value;
+  EXPECT_NO_THROW(make_law(method.name, values, "spring"))
+      << method.name << "." << method.parameters[i].key << " = " << value;
 }
 
 // Key in the place, value in the problem, range in the remedy.
-void expect_refused(const Method& method, std::size_t i, double value, const std::string& found, const std::string& range) {
+void expect_refused(const Method& method, std::size_t i, double value, const std::string& found,
+                    const std::string& range) {
   std::vector<double> values = fair_values(method);
   values[i] = value;
   const std::string key(method.parameters[i].key);
@@ -57,7 +59,8 @@ std::string printed(double value) {
 double beyond(double bound, double direction) { return bound + direction * std::max(1.0, std::abs(bound)) * 0.25; }
 
 TEST(Refusals, FairValuesAreTaken) {
-  for (const Method& method : law_catalogue()) EXPECT_NO_THROW(make_law(method.name, fair_values(method), "spring")) << method.name;
+  for (const Method& method : law_catalogue())
+    EXPECT_NO_THROW(make_law(method.name, fair_values(method), "spring")) << method.name;
 }
 
 TEST(Refusals, EveryLowerBoundHolds) {
@@ -124,7 +127,8 @@ TEST(Refusals, TrilinearSoftensAfterItYields) {
 TEST(Refusals, BoucWenGammaLiesBetweenMinusBetaAndBeta) {
   const Method& method = BoucWen::method;  // beta 0.5
   for (const double gamma : {-0.5, 0.0, 0.5}) expect_taken(method, 5, gamma);
-  for (const double gamma : {-0.51, 0.51}) expect_refused(method, 5, gamma, printed(gamma), "between -beta and beta, 0.5");
+  for (const double gamma : {-0.51, 0.51})
+    expect_refused(method, 5, gamma, printed(gamma), "between -beta and beta, 0.5");
 }
 
 }  // namespace

@@ -53,8 +53,8 @@ TEST_P(TrilinearSpring, ReversesAlongTheSkeletonEnlargedTwice) {
   }
   const double d1 = 0.007, f1 = s.go(d1).force;
   for (const double d : {0.0075, 0.012, 0.018}) EXPECT_NEAR(s.peek(d).force, f1 + 2 * skeleton((d - d1) / 2, r), tiny);
-  EXPECT_NEAR(s.go(d0).force, f0, tiny);                      // the inner loop closes
-  EXPECT_NEAR(s.go(0.025).force, skeleton(0.025, r), tiny);   // and the skeleton goes on
+  EXPECT_NEAR(s.go(d0).force, f0, tiny);                     // the inner loop closes
+  EXPECT_NEAR(s.go(0.025).force, skeleton(0.025, r), tiny);  // and the skeleton goes on
   EXPECT_NEAR(s.go(-0.025).force, skeleton(-0.025, r), tiny);
 }
 

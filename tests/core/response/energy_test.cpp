@@ -1,6 +1,6 @@
 // The energy balance fed with exact solutions, so that what is left over is its own summing. Free vibration of a damped
-// oscillator: u = e^(-zeta w t) (cos wd t + zeta w / wd sin wd t), u(0) = 1 m, v(0) = 0 (Chopra, ch. 2; from memory, and
-// checked by substitution).
+// oscillator: u = e^(-zeta w t) (cos wd t + zeta w / wd sin wd t), u(0) = 1 m, v(0) = 0 (Chopra, ch. 2; from memory,
+// and checked by substitution).
 #include "core/response/energy.hpp"
 
 #include <gtest/gtest.h>
@@ -58,8 +58,8 @@ TEST(EnergyWatch, DampedFreeVibrationFromTheClosedForm) {
     EXPECT_NEAR(watch.now().kinetic, kinetic, 1e-13 * start);
     EXPECT_NEAR(watch.now().elastic, elastic, 1e-13 * start);
     EXPECT_EQ(watch.now().absorbed, 0);
-    // Trapezoid rule: dt^2/12 times the change of the slope of the power c v^2, which is at most c (2 v a) <= 2 c w^3, at
-    // both ends; force times displacement increment adds dt^2/12 of the integral of c a^2 <= c w^4 T.
+    // Trapezoid rule: dt^2/12 times the change of the slope of the power c v^2, which is at most c (2 v a) <= 2 c w^3,
+    // at both ends; force times displacement increment adds dt^2/12 of the integral of c a^2 <= c w^4 T.
     const double c = 2 * zeta * omega * mass;
     const double second = dt * dt / 12 * c * (4 * std::pow(omega, 3) + std::pow(omega, 4) * duration);
     // Corrected: dt^4/720 times the change of the third derivative of c v^2, at most 8 c w^5 at each end.
@@ -80,8 +80,8 @@ TEST(EnergyWatch, OrderOfTheWorkRules) {
   }
 }
 
-// Undamped, the ground accelerates by a constant a0 from rest: u = -a0/w^2 (1 - cos w t), and the input is -m a0 u. With a
-// constant load both rules have the input right: the trapezoid exactly, the corrected one to fourth order.
+// Undamped, the ground accelerates by a constant a0 from rest: u = -a0/w^2 (1 - cos w t), and the input is -m a0 u.
+// With a constant load both rules have the input right: the trapezoid exactly, the corrected one to fourth order.
 TEST(EnergyWatch, InputOfASuddenConstantGroundAcceleration) {
   const System system = assemble(linear_stick({mass}, {stiffness}));
   const double a0 = 2.0, duration = 1.1;
@@ -100,7 +100,8 @@ TEST(EnergyWatch, InputOfASuddenConstantGroundAcceleration) {
     }
     const double input = -mass * a0 * state.u[0], dt = duration / steps;
     // Fourth order: dt^4/720 times twice the third derivative of the power m a0 v, m a0^2 w^2.
-    const double tolerance = 1e-12 * input + (rule == WorkRule::corrected ? std::pow(dt, 4) / 360 * mass * a0 * a0 * omega * omega : 0);
+    const double tolerance =
+        1e-12 * input + (rule == WorkRule::corrected ? std::pow(dt, 4) / 360 * mass * a0 * a0 * omega * omega : 0);
     EXPECT_NEAR(watch.now().input, input, tolerance);
     EXPECT_NEAR(watch.now().kinetic + watch.now().elastic, input, 1e-12 * input);
     EXPECT_EQ(watch.now().damping, 0);
@@ -126,11 +127,12 @@ TEST(EnergyWatch, InputOfARampToFourthOrder) {
       stage.show(watch, state, t);
     }
     const double t = duration;
-    const double input = q * q / stiffness *
-                         (t * t / 2 - t * std::sin(omega * t) / omega - (std::cos(omega * t) - 1) / (omega * omega));
+    const double input =
+        q * q / stiffness * (t * t / 2 - t * std::sin(omega * t) / omega - (std::cos(omega * t) - 1) / (omega * omega));
     misses.push_back(std::abs(watch.now().input - input));
     // dt^4/720 times the change of the third derivative of q t v: at most 2 q^2/k (3 w + t w^2).
-    EXPECT_LE(misses.back(), std::pow(duration / steps, 4) / 720 * 2 * q * q / stiffness * (3 * omega + t * omega * omega));
+    EXPECT_LE(misses.back(),
+              std::pow(duration / steps, 4) / 720 * 2 * q * q / stiffness * (3 * omega + t * omega * omega));
   }
   EXPECT_NEAR(std::log2(misses[0] / misses[1]), 4, 0.15);
 }
@@ -148,7 +150,8 @@ TEST(EnergyWatch, AbsorbedIsTheAreaOfTheLoops) {
   auto& memory = std::get<std::vector<Bilinear::Memory<double>>>(state.memory)[0];
   const auto push_to = [&](double d) {
     auto trial = memory;
-    const double force = reply<double>(std::get<ElementGroup<Bilinear>>(system.groups).laws[0], d, 0.0, memory, trial).force;
+    const double force =
+        reply<double>(std::get<ElementGroup<Bilinear>>(system.groups).laws[0], d, 0.0, memory, trial).force;
     memory = trial;
     state.u[0] = d;
     watch.see({0, true, state, &force, 0, nullptr, &still, &still});

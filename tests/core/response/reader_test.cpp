@@ -1,5 +1,5 @@
-// Every quantity of a hand-made state of three stories, worked out on paper (the numbers stand beside the checks); and the
-// balance of story shear with inertia and floor forces above (d'Alembert).
+// Every quantity of a hand-made state of three stories, worked out on paper (the numbers stand beside the checks); and
+// the balance of story shear with inertia and floor forces above (d'Alembert).
 #include "core/response/reader.hpp"
 
 #include <gtest/gtest.h>
@@ -60,7 +60,7 @@ class HandMadeState : public ::testing::Test {
   }
   const System system = assemble(three_stories());
   State<double> state = state_at_rest<double>(system);
-  const Accelerogram ground{1.0, 0.0, {0.5, 0.5}};       // m/s2
+  const Accelerogram ground{1.0, 0.0, {0.5, 0.5}};                   // m/s2
   const Load load{system, &ground, 1.0, {{3, {0, 1}, {7e3, 7e3}}}};  // 7 kN on floor 3
 };
 
@@ -104,13 +104,14 @@ TEST_F(HandMadeState, ForcesRememberTheCommittedSlip) {
   EXPECT_NEAR(r.of("story_shear_spring")[1], 8e3 + 2.88e4, 1e-8);
 }
 
-// Without P-Delta, whatever the damping: shear of story i = sum over floors above of floor force less mass times absolute
-// acceleration.
+// Without P-Delta, whatever the damping: shear of story i = sum over floors above of floor force less mass times
+// absolute acceleration.
 TEST(StoryShear, BalancesInertiaAndFloorForcesAbove) {
   std::mt19937 dice(31);
   std::uniform_real_distribution<double> move(-0.02, 0.02);
   const Accelerogram ground{1.0, 0.0, {1.7, -0.6}};
-  for (const Damping& damping : {Damping{NoDamping{}}, Damping{RayleighByFactors{0.3, 0.001}}, Damping{ModalDamping{{0.05}}}})
+  for (const Damping& damping :
+       {Damping{NoDamping{}}, Damping{RayleighByFactors{0.3, 0.001}}, Damping{ModalDamping{{0.05}}}})
     for (int n = 1; n <= 10; ++n) {
       Stick stick = random_stick(n, dice);
       stick.damping = damping;

@@ -47,8 +47,8 @@ TEST(PeakWatch, KeepsTheLargestMagnitudeWithItsSignAndTime) {
   EXPECT_EQ(peak_of(watch, screen, "drift", 1).value, 0);
 }
 
-// Offset plus sine over one whole period: the mean is the offset and half the range the amplitude. Over a whole period the
-// trapezoid rule on equal steps is exact for a sine; the peak of 200 samples is low by at most (pi/200)^2/2.
+// Offset plus sine over one whole period: the mean is the offset and half the range the amplitude. Over a whole period
+// the trapezoid rule on equal steps is exact for a sine; the peak of 200 samples is low by at most (pi/200)^2/2.
 TEST(ResidualWatch, MeanOfAnOffsetPlusASineIsTheOffset) {
   Screen screen(2);
   const double period = 0.8, from = 2.0, offset = -0.013, amplitude = 0.05;

@@ -1,5 +1,5 @@
-// Damping matrices by their definition: Rayleigh zeta = a0/(2 omega) + a1 omega/2, modal damping the asked ratio in each
-// mode (Chopra, Dynamics of Structures, ch. 11; from memory).
+// Damping matrices by their definition: Rayleigh zeta = a0/(2 omega) + a1 omega/2, modal damping the asked ratio in
+// each mode (Chopra, Dynamics of Structures, ch. 11; from memory).
 #include <gtest/gtest.h>
 
 #include <numbers>
@@ -70,8 +70,8 @@ TEST(RayleighDamping, AddsToTheDashpots) {
 
 TEST(RayleighDamping, AModeTheBuildingLacksIsAnError) {
   Stick stick = linear_stick({1e4, 1e4}, {1e7, 1e7});
-  for (const RayleighByModes modes : {RayleighByModes{0.05, 0.05, 1, 3}, RayleighByModes{0.05, 0.05, 2, 2},
-                                      RayleighByModes{0.05, 0.05, 0, 1}}) {
+  for (const RayleighByModes modes :
+       {RayleighByModes{0.05, 0.05, 1, 3}, RayleighByModes{0.05, 0.05, 2, 2}, RayleighByModes{0.05, 0.05, 0, 1}}) {
     stick.damping = modes;
     EXPECT_THROW(assemble(stick), Error) << modes.first << " " << modes.second;
   }
@@ -116,9 +116,9 @@ TEST(ModalDampingMatrix, ForceIsTheFullMatrixTimesVelocity) {
   }
 }
 
-// (c_m M + c_c C + c_k K_t) x = b against a dense solve with the full C, tangents drawn at random. Each solve errs by about
-// n eps times the condition (Higham, from memory); the low-rank correction passes through the band part, whose condition
-// therefore counts as well.
+// (c_m M + c_c C + c_k K_t) x = b against a dense solve with the full C, tangents drawn at random. Each solve errs by
+// about n eps times the condition (Higham, from memory); the low-rank correction passes through the band part, whose
+// condition therefore counts as well.
 double condition(const Eigen::MatrixXd& a) {
   const Eigen::VectorXd values = a.selfadjointView<Eigen::Lower>().eigenvalues();
   return values.cwiseAbs().maxCoeff() / values.cwiseAbs().minCoeff();
@@ -136,7 +136,8 @@ TEST(EffectiveSolve, AgreesWithADenseSolve) {
   std::mt19937 dice(27);
   std::uniform_real_distribution<double> share(-0.02, 1), entry(-1e5, 1e5);
   for (int n = 1; n <= 16; ++n)
-    for (const Damping& damping : {Damping{NoDamping{}}, Damping{ModalDamping{{0.05}}}, Damping{ModalDamping{{0.3, 0.02}}}}) {
+    for (const Damping& damping :
+         {Damping{NoDamping{}}, Damping{ModalDamping{{0.05}}}, Damping{ModalDamping{{0.3, 0.02}}}}) {
       Stick stick = random_stick(n, dice);
       stick.damping = damping;
       if (n < 2 && std::holds_alternative<ModalDamping>(damping)) stick.damping = ModalDamping{{0.3}};
@@ -149,7 +150,8 @@ TEST(EffectiveSolve, AgreesWithADenseSolve) {
       EffectiveSolve<double> solve(system);
       solve.factor(system, c_m, c_c, c_k, tangent.data());
       solve.solve(system, x.data());
-      const Eigen::MatrixXd band = c_m * mass_matrix(system) + c_c * dense(system.damping) + c_k * tangent_stiffness(system, tangent);
+      const Eigen::MatrixXd band =
+          c_m * mass_matrix(system) + c_c * dense(system.damping) + c_k * tangent_stiffness(system, tangent);
       const Eigen::MatrixXd full = band + c_c * (dense_damping(system) - dense(system.damping));
       const Eigen::VectorXd expected = full.ldlt().solve(b);
       const double tolerance = 8 * n * 2.3e-16 * (condition(full) + condition(band)) * expected.norm();

@@ -1,5 +1,6 @@
-// The load over time, by hand. What a record does before its first and after its last sample is a convention of ours (see
-// core/motion/accelerogram.hpp); PUBLISHED B states the first sample of El Centro at one step, the ground at rest at 0.
+// The load over time, by hand. What a record does before its first and after its last sample is a convention of ours
+// (see core/motion/accelerogram.hpp); PUBLISHED B states the first sample of El Centro at one step, the ground at rest
+// at 0.
 #include "core/system/load.hpp"
 
 #include <gtest/gtest.h>
@@ -71,7 +72,7 @@ TEST(Load, FloorForcesAreTables) {
     EXPECT_EQ(p[0], 0);
     return p[1];
   };
-  EXPECT_EQ(roof(0.999), 0);        // zero before the first time,
+  EXPECT_EQ(roof(0.999), 0);           // zero before the first time,
   EXPECT_NEAR(roof(1.0), 100, 1e-11);  // where it is a sudden push
   EXPECT_NEAR(roof(1.5), 200, 1e-11);
   EXPECT_NEAR(roof(3.0), 100, 1e-11);

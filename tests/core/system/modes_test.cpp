@@ -1,4 +1,6 @@
 // Periods, shapes and effective masses against published values and closed forms, and against Eigen's general solver.
+#include "core/system/modes.hpp"
+
 #include <gtest/gtest.h>
 
 #include <cmath>
@@ -6,7 +8,6 @@
 
 #include "core/error.hpp"
 #include "core/system/assemble_stick.hpp"
-#include "core/system/modes.hpp"
 #include "tests/core/system/sticks.hpp"
 
 namespace pilotis {
@@ -41,11 +42,12 @@ TEST(FiveEqualStories, EffectiveMassesArePublished) {
   for (int j = 0; j < 5; ++j) EXPECT_NEAR(modes[j].effective_mass / m, printed[j], half_digit[j]) << j;
 }
 
-// PUBLISHED G: Clough & Penzien, MDOF free-vibration example (from memory; recomputed). Top down 1.0, 1.5, 2.0 kip s2/in.
+// PUBLISHED G: Clough & Penzien, MDOF free-vibration example (from memory; recomputed). Top down 1.0, 1.5, 2.0 kip
+// s2/in.
 TEST(ThreeStories, FrequenciesAndShapeArePublished) {
   const double unit = kip_per_inch;  // 1 kip s2/in in kg
-  const std::vector<Mode> modes = modes_of(assemble(
-      linear_stick({2.0 * unit, 1.5 * unit, 1.0 * unit}, {1800 * unit, 1200 * unit, 600 * unit})));
+  const std::vector<Mode> modes =
+      modes_of(assemble(linear_stick({2.0 * unit, 1.5 * unit, 1.0 * unit}, {1800 * unit, 1200 * unit, 600 * unit})));
   const double printed[] = {14.52, 31.05, 46.10};
   for (int j = 0; j < 3; ++j) EXPECT_NEAR(2 * pi / modes[j].period, printed[j], 0.005) << j;
   EXPECT_NEAR(modes[0].shape[2], 1.0, 1e-14);
@@ -53,8 +55,8 @@ TEST(ThreeStories, FrequenciesAndShapeArePublished) {
   EXPECT_NEAR(modes[0].shape[0], 0.302, 0.0005);
 }
 
-// PUBLISHED H: omega_j = 2 sqrt(k/m) sin((2j-1) pi / (2(2n+1))); the shape of floor i is sin((2j-1) pi i / (2n+1)) up to
-// scale (the same closed form). A symmetric eigenvalue is off by at most a few n eps |K/M| = 4 n eps k/m absolutely.
+// PUBLISHED H: omega_j = 2 sqrt(k/m) sin((2j-1) pi / (2(2n+1))); the shape of floor i is sin((2j-1) pi i / (2n+1)) up
+// to scale (the same closed form). A symmetric eigenvalue is off by at most a few n eps |K/M| = 4 n eps k/m absolutely.
 TEST(EqualStories, ClosedFormForOneToThirtyStories) {
   const double m = 2.5e4, k = 4e7;
   for (int n = 1; n <= 30; ++n) {
@@ -93,7 +95,8 @@ TEST(RandomSticks, AgreeWithEigensGeneralSolver) {
     const Eigen::MatrixXd stiffness = dense(initial_stiffness(system));
     const Eigen::GeneralizedSelfAdjointEigenSolver<Eigen::MatrixXd> other(stiffness, mass);
     const double largest = other.eigenvalues().maxCoeff();
-    const double tolerance = 40 * n * 2.3e-16 * 10;  // and up to 10 for the condition of M, whose entries differ so much
+    const double tolerance =
+        40 * n * 2.3e-16 * 10;  // and up to 10 for the condition of M, whose entries differ so much
     for (int j = 0; j < n; ++j) {
       const double omega = 2 * pi / modes[j].period;
       EXPECT_NEAR(omega * omega, other.eigenvalues()[j], tolerance * largest);

@@ -1,5 +1,6 @@
-// A stick as matrices. PUBLISHED I (common practice, no source): for two stories K = [[k1+k2, -k2], [-k2, k2]], C of the
-// same shape from the dashpots. P-Delta: -P/h in each story (Clough & Penzien, linear geometric stiffness; from memory).
+// A stick as matrices. PUBLISHED I (common practice, no source): for two stories K = [[k1+k2, -k2], [-k2, k2]], C of
+// the same shape from the dashpots. P-Delta: -P/h in each story (Clough & Penzien, linear geometric stiffness; from
+// memory).
 #include <gtest/gtest.h>
 
 #include "core/error.hpp"
@@ -54,7 +55,8 @@ TEST(OneStory, IsDiagonal) {
   EXPECT_EQ(system.stiffness.at(0, 0), 4e6);
 }
 
-// Internal forces are C v + K u + sum B^T f, on random sticks; the expected ones from dense matrices and drifts by hand.
+// Internal forces are C v + K u + sum B^T f, on random sticks; the expected ones from dense matrices and drifts by
+// hand.
 TEST(RandomSticks, InternalForcesAndTangentBand) {
   std::mt19937 dice(5);
   std::uniform_real_distribution<double> move(-0.05, 0.05);

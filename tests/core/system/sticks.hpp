@@ -14,7 +14,8 @@ inline Story linear_story(double mass, double stiffness, double height = 3.0, do
 }
 
 // Counted from the ground up: kg, N/m.
-inline Stick linear_stick(const std::vector<double>& masses, const std::vector<double>& stiffnesses, double height = 3.0) {
+inline Stick linear_stick(const std::vector<double>& masses, const std::vector<double>& stiffnesses,
+                          double height = 3.0) {
   Stick stick;
   for (std::size_t i = 0; i < masses.size(); ++i)
     stick.stories.push_back(linear_story(masses[i], stiffnesses[i], height));

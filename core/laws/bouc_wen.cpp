@@ -14,6 +14,12 @@ BoucWen BoucWen::make(std::span<const double> v) {
     throw input_error(
         "gamma", fmt::format("found {:g}", law.gamma),
         fmt::format("it must lie between -beta and beta, {:g}, or a loop could give energy back", law.beta));
+  const double r = law.post_yield_ratio, least_A = -r / (1 - r);
+  if (law.A <= least_A)
+    throw input_error("A", fmt::format("found {:g}", law.A),
+                      fmt::format("with a post_yield_ratio of {:g} it must be greater than {:g}, or the initial "
+                                  "stiffness is not positive",
+                                  r, least_A));
   // z_u = (A / (beta + gamma))^(1/n), put so that gamma = -beta gives a rate of 0.
   const double n = law.exponent;
   law.loading_rate = n * std::pow(law.beta + law.gamma, 1 / n) * std::pow(law.A, 1 - 1 / n);

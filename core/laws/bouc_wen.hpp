@@ -5,11 +5,10 @@
 // (outside this a closed loop can give energy back: Erlicher & Point 2004), A > 0. With A = 1 and beta + gamma = 1 the
 // initial stiffness is k and |z| tends to 1; otherwise the initial stiffness is (r + (1 - r) A) k and z tends to
 // (A / (beta + gamma))^(1/n).
-// The rule does not depend on the rate, so z is a function of the path of d alone. It is integrated along d from the
-// committed state by the classical fourth-order Runge-Kutta method, in strides that depend on the committed state alone
-// (see longest_stride), the last one cut short: force and tangent are continuous in d.
-// Sources: Bouc 1967; Wen, "Method for random vibration of hysteretic systems", J. Eng. Mech. 102 (1976) 249; Erlicher
-// & Point, "Thermodynamic admissibility of Bouc-Wen type hysteresis models", C. R. Mecanique 332 (2004) 51.
+// z is a function of the path of d alone. It is integrated along d by the classical fourth-order Runge-Kutta method, in
+// strides set by the committed state (see longest_stride), the last one cut short: force and tangent are continuous in
+// d. Sources: Bouc 1967; Wen, "Method for random vibration of hysteretic systems", J. Eng. Mech. 102 (1976) 249;
+// Erlicher & Point, "Thermodynamic admissibility of Bouc-Wen type hysteresis models", C. R. Mecanique 332 (2004) 51.
 #pragma once
 
 #include <array>
@@ -45,7 +44,7 @@ struct BoucWen {
 
   double yield_deformation() const { return yield_shear / stiffness; }  // m
 
-  // Throws Error (input) when |gamma| > beta.
+  // Throws Error (input) when |gamma| > beta or the initial stiffness, (r + (1 - r) A) k, is not positive.
   static BoucWen make(std::span<const double> values);
   std::array<double, 7> values() const {
     return {stiffness, yield_shear, post_yield_ratio, exponent, beta, gamma, A};
@@ -64,11 +63,9 @@ struct Slope {
 template <class R>
 Slope<R> slope(const BoucWen& law, const R& z, const R& direction) {
   const R size = lane_abs<R>(z);
-  const R lower = lane_power<R>(size, law.exponent - 1 > 0 ? law.exponent - 1 : 1);  // |z|^(n-1); n = 1: see next line
-  const R power = law.exponent == 1.0 ? size : R(lower * size);
+  const R lower = law.exponent == 1.0 ? splat<R>(1) : lane_power<R>(size, law.exponent - 1);  // |z|^(n-1)
   const R weight = law.gamma + law.beta * direction * lane_sign<R>(z);
-  const R lower_or_one = law.exponent == 1.0 ? splat<R>(1) : lower;
-  return {law.A - power * weight, -law.exponent * lower_or_one * weight * lane_sign<R>(z)};
+  return {law.A - lower * size * weight, -law.exponent * lower * weight * lane_sign<R>(z)};
 }
 
 // One Runge-Kutta step of z over h (in x, signed) and dz/dh at its end.
@@ -85,9 +82,8 @@ Slope<R> stride(const BoucWen& law, const R& z, const R& h, const R& direction) 
   return {z + h / 6.0 * sum, sum / 6.0 + h / 6.0 * (2.0 * k2_h + 2.0 * k3_h + k4_h)};
 }
 
-// The longest stride from z, in u_y: a quarter of the length over which z closes in on its course (the method is stable
-// and accurate there); while |z| falls, no further than to z = 0, where dz/dx has a kink. dz/dx is at least A on the
-// way.
+// The longest stride from z, in u_y: a quarter of the length over which z closes in on its course, where the method is
+// stable and accurate; while |z| falls (dz/dx >= A then) at most to z = 0, where dz/dx has a kink.
 template <class R>
 R longest_stride(const BoucWen& law, const R& z, const R& direction) {
   const double n = law.exponent;

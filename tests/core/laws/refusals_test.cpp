@@ -131,5 +131,22 @@ TEST(Refusals, BoucWenGammaLiesBetweenMinusBetaAndBeta) {
     expect_refused(method, 5, gamma, printed(gamma), "between -beta and beta, 0.5");
 }
 
+// By hand: r + (1 - r) A > 0, so A > 1/3 for r = -0.5.
+TEST(Refusals, BoucWenStartsWithAPositiveStiffness) {
+  std::vector<double> values = fair_values(BoucWen::method);
+  values[2] = -0.5;
+  values[6] = 0.34;
+  EXPECT_NO_THROW(make_law("bouc_wen", values, "spring"));
+  values[6] = 0.33;
+  try {
+    make_law("bouc_wen", values, "spring");
+    FAIL();
+  } catch (const Error& e) {
+    EXPECT_EQ(e.where(), "spring.A");
+    EXPECT_NE(e.problem().find("0.33"), std::string::npos) << e.what();
+    EXPECT_NE(e.remedy().find("greater than 0.333333"), std::string::npos) << e.what();
+  }
+}
+
 }  // namespace
 }  // namespace pilotis

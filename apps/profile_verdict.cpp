@@ -50,8 +50,8 @@ std::string reason_text(const Outcome& outcome) {
   std::string text;
   const auto add = [&text](const std::string& part) { text += (text.empty() ? "" : "; ") + part; };
   if (outcome.collapsed > 0)
-    add(fmt::format("{} of {} runs collapsed, which is beyond any limit", outcome.collapsed, outcome.runs));
-  if (outcome.not_converged > 0) add(fmt::format("{} did not converge and is left out", outcome.not_converged));
+    add(fmt::format("{} of {} runs collapsed (beyond any limit)", outcome.collapsed, outcome.runs));
+  if (outcome.not_converged > 0) add(fmt::format("{} not converged (left out)", outcome.not_converged));
   if (outcome.finding == Finding::too_close)
     add(fmt::format("{} the limit by less than the step error: take a smaller step",
                     outcome.exceeded ? "above" : "below"));
@@ -69,15 +69,15 @@ std::string outcome_line(const Outcome& outcome, const Limit& limit, const Study
   const Word word = word_of(outcome);
   const bool has_margin = std::isfinite(outcome.margin);
   const std::string margin = has_margin ? fmt::format("margin {:.0f} %", outcome.margin * 100) : "";
-  std::string line = "    " + painted(left(word.text, 14), word.tone, style);
-  line += left(fmt::format("{} {:g}", signs.times, outcome.factor), 8);
-  line += left(value_text(outcome, shown, decimals_of(limit, shown), signs), 22) + left(margin, 14);
-  line += left(place_text(outcome, limit), 10);
-  const std::size_t used = 4 + 14 + 8 + 22 + 14 + 10;
-  line += clipped(outcome.motion, static_cast<std::size_t>(style.width) - used, style) + "\n";
+  std::string rest = left(fmt::format("{} {:g} ", signs.times, outcome.factor), 7);
+  rest += left(value_text(outcome, shown, decimals_of(limit, shown), signs) + "  ", 20) + left(margin + " ", 13);
+  rest += left(place_text(outcome, limit), 9) + outcome.motion;
+  const std::string word_cell = left(word.text, 13);
+  const std::size_t room = static_cast<std::size_t>(style.width) - 4 - columns_of(word_cell);
+  std::string line = "    " + painted(word_cell, word.tone, style) + clipped(rest, room, style) + "\n";
   const std::string reason = reason_text(outcome);
   if (!reason.empty())
-    line += std::string(18, ' ') + painted(clipped(reason, style.width - 18, style), Tone::quiet, style) + "\n";
+    line += std::string(6, ' ') + painted(clipped(reason, style.width - 6, style), Tone::quiet, style) + "\n";
   return line;
 }
 
@@ -92,18 +92,26 @@ std::string limit_line(const Limit& limit, const StudyUnits& units, const Screen
   return painted(what, Tone::strong, style) + painted(clipped(source, room, style), Tone::quiet, style) + "\n";
 }
 
+// On one line where that is wide enough, the note on a second where not.
+std::string run_text(std::size_t number, const RunResult& run, const ScreenStyle& style) {
+  const Signs signs(style);
+  const auto width = static_cast<std::size_t>(style.width);
+  const std::string who = fmt::format("  run {}  {} {} {:g}", number, run.motion, signs.times, run.factor);
+  if (columns_of(who) + 2 + columns_of(run.status_note) <= width) return who + "  " + run.status_note + "\n";
+  return clipped(who, width, style) + "\n" + clipped("      " + run.status_note, width, style) + "\n";
+}
+
+// The first of them by name; how many more there are.
 std::string runs_with(const StudyResults& results, RunStatus status, const std::string& title,
                       const ScreenStyle& style) {
-  const Signs signs(style);
+  constexpr int most = 20;
   std::string text;
-  for (std::size_t i = 0; i < results.runs.size(); ++i) {
-    const RunResult& run = results.runs[i];
-    if (run.status != status) continue;
-    const std::string line =
-        fmt::format("  run {}  {} {} {:g}  {}", i, run.motion, signs.times, run.factor, run.status_note);
-    text += clipped(line, style.width, style) + "\n";
-  }
-  return text.empty() ? "" : painted(title, Tone::bad, style) + "\n" + text + "\n";
+  int found = 0;
+  for (std::size_t i = 0; i < results.runs.size(); ++i)
+    if (results.runs[i].status == status && ++found <= most) text += run_text(i, results.runs[i], style);
+  if (found == 0) return "";
+  if (found > most) text += fmt::format("  and {} more: `pilotis export FILE.h5 --runs` lists all\n", found - most);
+  return painted(title, Tone::bad, style) + "\n" + text + "\n";
 }
 
 std::string counted(int number, const char* one, const char* several) {

@@ -92,15 +92,19 @@ double error_multiple(const System& system, const Traits& traits) {
   return system.is_linear() && traits.order == 2 ? 4.0 / 3 : 2.0;
 }
 
-// What each peak of one quantity, bottom to top, changed by in the check, as a share of itself: the largest of its own and
-// its neighbors' shares.
+// What each peak of one quantity, bottom to top, changed by in the check, as a share of itself: the largest share of
+// three adjacent places, itself among them.
 std::vector<double> pooled_shares(const Peak* peaks, const Peak* finer, std::size_t count) {
   std::vector<double> own(count), pooled(count);
   for (std::size_t i = 0; i < count; ++i) {
     const double size = std::abs(peaks[i].value);
     own[i] = size > 0 ? std::abs(size - std::abs(finer[i].value)) / size : 0;
   }
-  for (std::size_t i = 0; i < count; ++i) pooled[i] = std::max({own[i], own[i > 0 ? i - 1 : i], own[i + 1 < count ? i + 1 : i]});
+  const std::size_t width = std::min<std::size_t>(3, count);
+  for (std::size_t i = 0; i < count; ++i) {
+    const std::size_t first = std::min(i > 0 ? i - 1 : 0, count - width);
+    pooled[i] = *std::max_element(own.begin() + first, own.begin() + first + width);
+  }
   return pooled;
 }
 

@@ -1,5 +1,6 @@
 #include "core/response/peaks.hpp"
 
+#include <algorithm>
 #include <cmath>
 
 namespace pilotis {
@@ -14,7 +15,7 @@ bool PeakWatch::see(const Instant& instant) noexcept {
       peaks_[i] = {value, instant.time, 0};
       between_[i] = 0;
     } else if (seen_ > 1 && peaks_[i].time == last_time_) {
-      add_rise(i, instant);
+      bound_rise(i, instant);
     }
     before_last_[i] = last_[i];
     last_[i] = value;
@@ -25,13 +26,11 @@ bool PeakWatch::see(const Instant& instant) noexcept {
   return true;
 }
 
-// The parabola through the peak (last_) and the states before and after it: slope^2 / (2 curvature) at the peak.
-void PeakWatch::add_rise(std::size_t i, const Instant& instant) noexcept {
-  const double h0 = last_time_ - before_last_time_, h1 = instant.time - last_time_;
+// The peak is last_; the states before and after it stand h0 and h1 away.
+void PeakWatch::bound_rise(std::size_t i, const Instant& instant) noexcept {
+  const double h0 = last_time_ - before_last_time_, h1 = instant.time - last_time_, h = std::max(h0, h1);
   const double slope0 = (last_[i] - before_last_[i]) / h0, slope1 = (instant.values[i] - last_[i]) / h1;
-  const double slope = (slope0 * h1 + slope1 * h0) / (h0 + h1), curvature = 2 * (slope1 - slope0) / (h0 + h1);
-  const double rise = slope * slope / (2 * std::abs(curvature));
-  between_[i] = std::isfinite(rise) ? rise : 0.0;
+  between_[i] = std::abs(slope1 - slope0) * 2 / (h0 + h1) * h * h / 8;
 }
 
 }  // namespace pilotis

@@ -9,20 +9,24 @@
 namespace pilotis::test {
 namespace {
 
-constexpr double window = 0.12;  // s; the buildings move one way only, so that the laws stay smooth
 constexpr int halvings = 4;
 
 struct Case {
   const char* name;
   Stick stick;
-  double law_order;  // of the rule itself, when it is integrated numerically; infinite: closed form
+  double law_order;  // of the rule itself, when it is integrated numerically; large: closed form
+  double window;     // s; the yielding buildings move one way only in it, so that their law stays smooth
+  long steps;        // of the coarsest march by a scheme of order 1 or 2
+
+  bool yields() const { return law_order < 100; }
 };
 
 std::vector<Case> cases() {
   const Stick linear = stick_of(3, 1e5, 3, Linear{5e7});
   // |z| + z = 0 or 2 z: dz/dx = 1 - z while the drift grows; the header says: integrated along d by a fourth-order rule.
   const Stick smooth = stick_of(3, 1e5, 3, BoucWen{5e7, 5e5, 0.1, 1, 0.5, 0.5, 1});
-  std::vector<Case> list{{"linear, undamped", linear, 1e9}, {"linear, damped", linear, 1e9}, {"Bouc-Wen, undamped", smooth, 4}, {"Bouc-Wen, damped", smooth, 4}};
+  std::vector<Case> list{{"linear, undamped", linear, 1e9, 1.2, 320}, {"linear, damped", linear, 1e9, 1.2, 320},
+                         {"Bouc-Wen, undamped", smooth, 4, 0.12, 32}, {"Bouc-Wen, damped", smooth, 4, 0.12, 32}};
   for (Case& one : list)
     if (std::string(one.name).find(", damped") != std::string::npos) one.stick.damping = RayleighByModes{0.05, 0.05, 1, 2};
   return list;
@@ -30,7 +34,7 @@ std::vector<Case> cases() {
 
 // A pulse on the roof, smooth at the steps of the smallest march, or a ramp: linear in time, because loads between steps
 // are linear by contract and a scheme of higher order would see only that.
-Load push(const System& system, bool ramp, double sampling) {
+Load push(const System& system, bool ramp, double window, double sampling) {
   FloorForce force{3, {}, {}};
   const long points = ramp ? 1 : std::lround(window / sampling);
   for (long i = 0; i <= points; ++i) {
@@ -63,15 +67,15 @@ struct Differences {
 Differences differences(const Case& one, const Scheme& scheme, long steps) {
   const System system = assemble(one.stick);
   const bool ramp = scheme.traits().order > 2;
-  const Load load = push(system, ramp, window / static_cast<double>(steps << halvings));
+  const Load load = push(system, ramp, one.window, one.window / static_cast<double>(steps << halvings));
   Differences out;
   Track before;
   for (int k = 0; k <= halvings; ++k) {
     const long n = steps << k;
-    const Marched run = marched(system, load, scheme, window / static_cast<double>(n), n, {{}, {0.1, 0.2, 0.3}}, 1e-8);
+    const Marched run = marched(system, load, scheme, one.window / static_cast<double>(n), n, {{}, {0.1, 0.2, 0.3}}, 1e-8);
     EXPECT_EQ(run.end.ending, MarchEnding::done);
     EXPECT_EQ(run.track.seen, n + 1) << "a step was not taken whole";
-    for (const auto& v : run.track.v) EXPECT_TRUE(v[0] > 0 && v[1] > v[0] && v[2] > v[1]) << "it turned round: not smooth";
+    for (const auto& v : run.track.v) EXPECT_TRUE(!one.yields() || (v[0] > 0 && v[1] > v[0] && v[2] > v[1])) << "it turned round: not smooth";
     if (k > 0) {
       out.u.push_back(distance(run.track.u, before.u, steps));
       out.v.push_back(distance(run.track.v, before.v, steps));
@@ -89,13 +93,12 @@ std::vector<double> orders(const std::vector<double>& differences) {
   return list;
 }
 
-// The order toward which the sequence runs: the last two orders before the differences sink into rounding, carried on to
-// dt = 0, since the next term of the error expansion changes the order in proportion to dt.
+// The last order before the differences sink into rounding.
 double settled(const std::vector<double>& differences, double rounding) {
-  std::vector<double> list;
-  for (std::size_t i = 1; i < differences.size() && (i <= 2 || differences[i] > rounding); ++i)
-    list.push_back(std::log2(differences[i - 1] / differences[i]));
-  return 2 * list[list.size() - 1] - list[list.size() - 2];
+  double order = 0;
+  for (std::size_t i = 1; i < differences.size() && (i == 1 || differences[i] > rounding); ++i)
+    order = std::log2(differences[i - 1] / differences[i]);
+  return order;
 }
 
 // Adaptive pairs: with tolerances this wide every step is taken whole (checked above).
@@ -104,11 +107,12 @@ std::shared_ptr<const Scheme> as_measured(const Method& method, const std::vecto
   return scheme->traits().adaptive ? make_scheme(method.name, std::vector<double>{0.1, 1.0}, "test") : scheme;
 }
 
-// 0.15 is left for the terms after that; the printed sequence shows it closing in.
+// 0.15: the next term of the error expansion changes the order by about dt times the rates of the building, 0.1 at the
+// steps taken; the printed sequence shows it closing in.
 void expect_order(const Case& one, const Scheme& scheme) {
   const Traits traits = scheme.traits();
   const double expected = std::min<double>(traits.order, one.law_order);
-  const Differences found = differences(one, scheme, traits.order > 5 ? 3 : traits.order > 2 ? 12 : 32);
+  const Differences found = differences(one, scheme, traits.order > 5 ? one.steps / 12 : traits.order > 2 ? one.steps / 3 : one.steps);
   const std::string sequence = fmt::format("{} on {}: orders of u {:.3f}, of v {:.3f}; differences {:.2e}", scheme.description(), one.name,
                                            fmt::join(orders(found.u), " "), fmt::join(orders(found.v), " "), fmt::join(found.u, " "));
   EXPECT_NEAR(settled(found.u, found.rounding_u), expected, 0.15) << sequence;
@@ -118,11 +122,12 @@ void expect_order(const Case& one, const Scheme& scheme) {
 // Exact schemes: the same state at any step, to rounding.
 void expect_exact(const Case& one, const Scheme& scheme) {
   const System system = assemble(one.stick);
-  const Load load = push(system, true, window);
+  const double window = one.window;
+  const Load load = push(system, true, window, window);
   const Marched coarse = marched(system, load, scheme, window, 1, {{}, {0.1, 0.2, 0.3}});
-  const Marched fine = marched(system, load, scheme, window / 64, 64, {{}, {0.1, 0.2, 0.3}});
-  EXPECT_LT(distance(coarse.state.u, fine.state.u), 1e-13) << scheme.description();
-  EXPECT_LT(distance(coarse.state.v, fine.state.v), 1e-12) << scheme.description();
+  const Marched fine = marched(system, load, scheme, window / 640, 640, {{}, {0.1, 0.2, 0.3}});
+  EXPECT_LT(distance(coarse.state.u, fine.state.u), 1e-12) << scheme.description();
+  EXPECT_LT(distance(coarse.state.v, fine.state.v), 1e-11) << scheme.description();
 }
 
 TEST(Order, OfEverySchemeInTheCatalogue) {
@@ -142,7 +147,8 @@ TEST(Order, OfEverySchemeInTheCatalogue) {
 TEST(Order, ErrorFollowsTheTolerance) {
   const Case one = cases()[1];
   const System system = assemble(one.stick);
-  const Load load = push(system, true, window);
+  const double window = one.window;
+  const Load load = push(system, true, window, window);
   const Marched exact = marched(system, load, *scheme_of("piecewise_exact"), window, 1, {{}, {0.1, 0.2, 0.3}});
   for (const char* name : {"dormand_prince", "fehlberg"})
     for (double rtol : {1e-4, 1e-6, 1e-8, 1e-10}) {

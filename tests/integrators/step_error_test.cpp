@@ -98,12 +98,14 @@ std::vector<double> tight_peaks(const System& system, const Load& load, int stor
   return peaks;
 }
 
+int trials() { const char* t = std::getenv("TRIALS"); return t ? std::atoi(t) : 10; }
+
 TEST(RandomSticks, ReportedStepErrorsCoverTheDistanceToATightMarch) {
   SKIP_WITHOUT_EL_CENTRO();
   std::mt19937 random(2024);
   std::uniform_real_distribution<double> uniform(0, 1);
   const Accelerogram record = el_centro(standard_gravity);
-  for (int trial = 0; trial < 10; ++trial) {
+  for (int trial = 0; trial < trials(); ++trial) {
     const int stories = 3 + static_cast<int>(10 * uniform(random));
     Stick stick;
     const double k = std::pow(10, 8 + uniform(random)), yield = 4e5 * stories * (0.5 + uniform(random)), r = 0.1 * uniform(random);

@@ -92,16 +92,48 @@ double error_multiple(const System& system, const Traits& traits) {
   return system.is_linear() && traits.order == 2 ? 4.0 / 3 : 2.0;
 }
 
-void add_errors(const Watched& check, double multiple, RunResult& result) {
-  const bool same_end = status_of(check.end.ending) == result.status;
-  for (std::size_t i = 0; i < result.peaks.size(); ++i) {
-    const double difference = std::abs(std::abs(result.peaks[i].value) - std::abs(check.peaks.peaks()[i].value));
-    result.peaks[i].step_error = same_end ? multiple * difference : infinite;
+// What each peak of one quantity, bottom to top, changed by in the check, as a share of itself: the largest share of
+// three adjacent places, itself among them.
+std::vector<double> pooled_shares(const Peak* peaks, const Peak* finer, std::size_t count) {
+  std::vector<double> own(count), pooled(count);
+  for (std::size_t i = 0; i < count; ++i) {
+    const double size = std::abs(peaks[i].value);
+    own[i] = size > 0 ? std::abs(size - std::abs(finer[i].value)) / size : 0;
   }
+  const std::size_t width = std::min<std::size_t>(3, count);
+  for (std::size_t i = 0; i < count; ++i) {
+    const std::size_t first = std::min(i > 0 ? i - 1 : 0, count - width);
+    pooled[i] = *std::max_element(own.begin() + first, own.begin() + first + width);
+  }
+  return pooled;
+}
+
+void add_peak_errors(const Watched& watched, const Watched& check, double multiple, const ResponseLayout& layout,
+                     std::vector<Peak>& peaks) {
+  for (const Quantity& quantity : quantities()) {
+    const std::size_t first = layout.offset(quantity), count = layout.count(quantity);
+    const std::vector<double> shares = pooled_shares(&peaks[first], &check.peaks.peaks()[first], count);
+    for (std::size_t i = 0; i < count; ++i) {
+      Peak& peak = peaks[first + i];
+      const double finer = std::abs(check.peaks.peaks()[first + i].value), size = std::abs(peak.value);
+      const double change = std::max(size * shares[i], std::abs(size - finer));
+      peak.step_error = multiple * change + watched.peaks.between_states()[first + i];
+    }
+  }
+  peaks[layout.offset(*find_quantity("base_shear"))].step_error = peaks[layout.offset(*find_quantity("story_shear"))].step_error;
+}
+
+void add_errors(const Watched& watched, const Watched& check, double multiple, const ResponseLayout& layout, RunResult& result) {
+  if (status_of(check.end.ending) != result.status) {
+    for (Peak& peak : result.peaks) peak.step_error = infinite;
+    std::fill(result.residual_error.begin(), result.residual_error.end(), infinite);
+    result.status_note += fmt::format("{}the check at half the step ended otherwise: {}", result.status_note.empty() ? "" : "; ",
+                                      status_name(status_of(check.end.ending)));
+    return;
+  }
+  add_peak_errors(watched, check, multiple, layout, result.peaks);
   const std::vector<double> finer = check.residual.drift();
-  for (std::size_t i = 0; i < finer.size(); ++i)
-    result.residual_error[i] = same_end ? multiple * std::abs(result.residual_drift[i] - finer[i]) : infinite;
-  if (!same_end) result.status_note += fmt::format("{}the check at half the step ended otherwise: {}", result.status_note.empty() ? "" : "; ", status_name(status_of(check.end.ending)));
+  for (std::size_t i = 0; i < finer.size(); ++i) result.residual_error[i] = multiple * std::abs(result.residual_drift[i] - finer[i]);
 }
 
 RunResult collected(const Watched& watched, const RunPlan& plan) {
@@ -129,13 +161,15 @@ RunResult collected(const Watched& watched, const RunPlan& plan) {
 
 RunResult run_once(const System& system, const Load& load, const RunPlan& plan) {
   const auto begin = std::chrono::steady_clock::now();
-  RunResult result = collected(marched(system, load, plan, *plan.scheme, plan.step), plan);
+  const Watched watched = marched(system, load, plan, *plan.scheme, plan.step);
+  RunResult result = collected(watched, plan);
   if (plan.error_check && result.status != RunStatus::not_converged) {
     RunPlan check = plan;
     check.histories.clear();
     const std::shared_ptr<const Scheme> finer = plan.scheme->refined();
-    const Watched watched = marched(system, load, check, finer ? *finer : *plan.scheme, plan.step / 2);
-    add_errors(watched, error_multiple(system, plan.scheme->traits()), result);
+    const Watched finer_march = marched(system, load, check, finer ? *finer : *plan.scheme, plan.step / 2);
+    const ResponseLayout layout(static_cast<int>(system.stories.height.size()));
+    add_errors(watched, finer_march, error_multiple(system, plan.scheme->traits()), layout, result);
   }
   result.wall_time = std::chrono::duration<double>(std::chrono::steady_clock::now() - begin).count();
   return result;

@@ -28,10 +28,12 @@ struct RunPlan {
 // Fills everything of RunResult but motion, factor and step_choice. Never throws for what happens in the march: that is
 // the result's status. Throws Error (input) when the scheme refuses the system.
 //
-// Step errors. The march is repeated at half the step (adaptive schemes: also at a tenth of their tolerances). For a
+// Step errors. The march is repeated at half the step (adaptive schemes: also at a hundredth of their tolerances). For a
 // linear building and a scheme of order 2 the error of a peak is close to 4/3 of the difference (Richardson); with laws
-// that yield, or order 1, twice the difference is given, as for a first-order method. Where the repeated march ends
-// otherwise (collapse in one of them) the errors are infinite.
+// that yield, or order 1, twice the difference is given, as for a first-order method. A difference can vanish by chance at
+// one story while its neighbors' do not: each peak takes the largest relative difference of three adjacent stories (or
+// floors), itself in the middle where it can be. To this comes what a peak between two states may rise above the kept one (core/response/peaks.hpp).
+// Where the repeated march ends otherwise (collapse in one of them) the errors are infinite.
 RunResult run_once(const System& system, const Load& load, const RunPlan& plan);
 
 }  // namespace pilotis

@@ -168,7 +168,8 @@ std::unique_ptr<Stepper> RungeKutta::prepare(const System& system, const StepSet
 }
 
 std::shared_ptr<const Scheme> RungeKutta::refined() const {
-  return std::make_shared<RungeKutta>(pair_, rtol_ / 10, atol_ / 10);
+  // Kinks keep the error from falling in step with the tolerance, so the check is made much tighter; never below rounding.
+  return std::make_shared<RungeKutta>(pair_, std::max(rtol_ / 100, 1e-14), std::max(atol_ / 100, 1e-16));
 }
 
 }  // namespace pilotis

@@ -57,7 +57,7 @@ class Scheme {
   virtual std::string description() const = 0;
   // Throws Error (input) when the scheme cannot march this system, saying which element or property stands against it.
   virtual std::unique_ptr<Stepper> prepare(const System& system, const StepSettings& settings) const = 0;
-  // The same scheme with tolerances ten times tighter, for error checks of adaptive schemes; null for the others, whose
+  // The same scheme with tolerances a hundred times tighter, for error checks of adaptive schemes; null for the others, whose
   // check halves the step alone.
   virtual std::shared_ptr<const Scheme> refined() const { return nullptr; }
 };

@@ -8,8 +8,19 @@
 
 namespace pilotis {
 
+// z_u = (A / (beta + gamma))^(1/n), put so that gamma = -beta gives a rate of 0.
+BoucWen::BoucWen(double k, double f_y, double r, double n, double beta_, double gamma_, double A_)
+    : stiffness(k),
+      yield_shear(f_y),
+      post_yield_ratio(r),
+      exponent(n),
+      beta(beta_),
+      gamma(gamma_),
+      A(A_),
+      loading_rate(n * std::pow(beta_ + gamma_, 1 / n) * std::pow(A_, 1 - 1 / n)) {}
+
 BoucWen BoucWen::make(std::span<const double> v) {
-  BoucWen law{v[0], v[1], v[2], v[3], v[4], v[5], v[6], 0};
+  const BoucWen law{v[0], v[1], v[2], v[3], v[4], v[5], v[6]};
   if (std::abs(law.gamma) > law.beta)
     throw input_error(
         "gamma", fmt::format("found {:g}", law.gamma),
@@ -20,9 +31,6 @@ BoucWen BoucWen::make(std::span<const double> v) {
                       fmt::format("with a post_yield_ratio of {:g} it must be greater than {:g}, or the initial "
                                   "stiffness is not positive",
                                   r, least_A));
-  // z_u = (A / (beta + gamma))^(1/n), put so that gamma = -beta gives a rate of 0.
-  const double n = law.exponent;
-  law.loading_rate = n * std::pow(law.beta + law.gamma, 1 / n) * std::pow(law.A, 1 - 1 / n);
   return law;
 }
 

@@ -34,7 +34,10 @@ struct BoucWen {
   double post_yield_ratio;  // -
   double exponent;          // n, -
   double beta, gamma, A;    // -
-  double loading_rate;  // -, set by make(): |d(dz/dx)/dz| at the ultimate z, x = d / u_y: n (beta + gamma) z_u^(n-1)
+  double loading_rate;      // -, from the others: |d(dz/dx)/dz| at the ultimate z, x = d/u_y: n (beta+gamma) z_u^(n-1)
+
+  // Unchecked; input goes through make(). Same units as the fields.
+  BoucWen(double k, double f_y, double r, double n, double beta_, double gamma_, double A_);
 
   template <class R>
   struct Memory {

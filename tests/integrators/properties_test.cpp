@@ -1,4 +1,6 @@
 // What must hold for any building and any motion.
+#include <gtest/gtest.h>
+// after gtest, which it needs
 #include <rapidcheck/gtest.h>
 
 #include "integrators/one_run.hpp"

@@ -21,6 +21,5 @@ nlohmann::ordered_json record_json(const std::string& file, const RecordFile& re
 std::string damping_text(const Damping& damping);
 // "mean", "84th percentile", ...
 std::string statistic_text(const Limit& limit);
-long run_count(const Study& study);
 
 }  // namespace pilotis

@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "apps/check_show.hpp"
+#include "apps/engine.hpp"
 #include "apps/text_table.hpp"
 #include "core/laws/law_values.hpp"
 #include "integrators/catalogue.hpp"
@@ -145,6 +146,13 @@ std::string keep_text(const KeepSettings& keep) {
                      keep.every == 1 ? "step" : fmt::format("{} steps", keep.every));
 }
 
+std::string limit_text(const Limit& limit, const StudyUnits& units) {
+  const std::string text = with_unit(limit.value, limit.quantity->dimension, units);
+  return limit.quantity->dimension == Dimension::acceleration
+             ? fmt::format("{} ({:.6g} g)", text, limit.value / standard_gravity)
+             : text;
+}
+
 std::string limits_text(const Study& study) {
   if (study.limits.empty()) return "limits: none\n";
   TextTable table({{"quantity", Align::left},
@@ -153,17 +161,12 @@ std::string limits_text(const Study& study) {
                    {"at factors", Align::left},
                    {"source", Align::left}});
   for (const Limit& limit : study.limits)
-    table.add_row({std::string(limit.quantity->name), statistic_text(limit),
-                   with_unit(limit.value, limit.quantity->dimension, study.units),
+    table.add_row({std::string(limit.quantity->name), statistic_text(limit), limit_text(limit, study.units),
                    limit.factors.empty() ? "all" : fmt::format("{:g}", fmt::join(limit.factors, ", ")), limit.source});
   return fmt::format("limits: {}\n{}", study.limits.size(), table.text());
 }
 
 }  // namespace
-
-long run_count(const Study& study) {
-  return static_cast<long>(std::max<std::size_t>(study.motions.size(), 1) * study.factors.size());
-}
 
 std::string statistic_text(const Limit& limit) {
   if (limit.statistic != Statistic::percentile) return std::string(statistic_name(limit.statistic));

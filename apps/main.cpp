@@ -1,15 +1,17 @@
-#include <fmt/format.h>
-
 #include <cstdio>
 #include <exception>
+#include <string>
 
 #include "apps/commands.hpp"
 #include "core/error.hpp"
 
 namespace {
 
+// Says nothing rather than throw when standard error cannot be written.
+void complain(const std::string& message) { std::fputs(("pilotis: " + message + "\n").c_str(), stderr); }
+
 int shown(const pilotis::Error& error) {
-  fmt::print(stderr, "pilotis: {}\n", error.what());
+  complain(error.what());
   return error.kind() == pilotis::ErrorKind::input ? pilotis::wrong_input : pilotis::outside_failed;
 }
 
@@ -21,6 +23,11 @@ int main(int argc, char** argv) {
   app.set_version_flag("--version", "pilotis " PILOTIS_VERSION);
   app.require_subcommand(1);
   pilotis::add_check(app, status);
+  pilotis::add_run(app, status);
+  pilotis::add_modes(app, status);
+  pilotis::add_synth(app, status);
+  pilotis::add_verdict(app, status);
+  pilotis::add_export(app, status);
   try {
     app.parse(argc, argv);
   } catch (const CLI::ParseError& e) {
@@ -28,7 +35,7 @@ int main(int argc, char** argv) {
   } catch (const pilotis::Error& e) {
     return shown(e);
   } catch (const std::exception& e) {
-    fmt::print(stderr, "pilotis: {}\n", e.what());
+    complain(e.what());
     return pilotis::outside_failed;
   }
   return status;

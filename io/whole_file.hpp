@@ -2,6 +2,7 @@
 #pragma once
 
 #include <filesystem>
+#include <span>
 
 namespace pilotis {
 
@@ -14,13 +15,15 @@ class WholeFile {
   WholeFile(const WholeFile&) = delete;
   WholeFile& operator=(const WholeFile&) = delete;
 
-  const std::filesystem::path& passing() const { return passing_; }  // write here, and close before commit()
+  // Appends. Throws Error (outside).
+  void write(std::span<const char> bytes);
 
   // Syncs the file, renames it to the target, syncs the folder. Throws Error (outside).
   void commit();
 
  private:
   std::filesystem::path target_, folder_, passing_;
+  int file_ = -1;  // descriptor of passing_; -1 once it is closed
   bool committed_ = false;
 };
 

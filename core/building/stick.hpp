@@ -12,11 +12,11 @@ namespace pilotis {
 
 // Story i stands between floor i-1 and floor i and carries floor i's mass on its top.
 struct Story {
-  std::string label;    // "" or what the user calls it
-  double height = 0;    // m, > 0
-  double mass = 0;      // kg of the floor on top of the story, > 0
-  Law spring;           // story shear against drift
-  double dashpot = 0;   // N s/m, c_i of a linear dashpot in the story, >= 0
+  std::string label;   // "" or what the user calls it
+  double height = 0;   // m, > 0
+  double mass = 0;     // kg of the floor on top of the story, > 0
+  Law spring;          // story shear against drift
+  double dashpot = 0;  // N s/m, c_i of a linear dashpot in the story, >= 0
 };
 
 struct NoDamping {};
@@ -43,9 +43,9 @@ struct ModalDamping {
 using Damping = std::variant<NoDamping, RayleighByModes, RayleighByFactors, ModalDamping>;
 
 struct Stick {
-  std::vector<Story> stories;  // from the ground up, at least one
-  Damping damping;             // added to the stories' dashpots
-  bool p_delta = false;        // -P/h in each story, P = gravity times the masses above
+  std::vector<Story> stories;         // from the ground up, at least one
+  Damping damping;                    // added to the stories' dashpots
+  bool p_delta = false;               // -P/h in each story, P = gravity times the masses above
   double gravity = standard_gravity;  // m/s2
 };
 

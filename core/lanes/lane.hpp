@@ -8,9 +8,31 @@
 
 namespace pilotis {
 
-// W doubles side by side, W a power of two: GCC/Clang vector extension, so + - * / work as they stand.
+// GCC/Clang vector extensions of fixed width. Written out one by one: GCC drops a vector attribute that depends on a
+// template parameter when the type is handed on to another template.
+namespace lanes {
 template <int W>
-using Pack [[gnu::vector_size(W * sizeof(double))]] = double;
+struct Vectors;
+template <>
+struct Vectors<2> {
+  using Values [[gnu::vector_size(16)]] = double;
+  using Bits [[gnu::vector_size(16)]] = std::int64_t;
+};
+template <>
+struct Vectors<4> {
+  using Values [[gnu::vector_size(32)]] = double;
+  using Bits [[gnu::vector_size(32)]] = std::int64_t;
+};
+template <>
+struct Vectors<8> {
+  using Values [[gnu::vector_size(64)]] = double;
+  using Bits [[gnu::vector_size(64)]] = std::int64_t;
+};
+}  // namespace lanes
+
+// W doubles side by side, W = 2, 4 or 8: + - * / and comparisons work as they stand.
+template <int W>
+using Pack = typename lanes::Vectors<W>::Values;
 
 // What a comparison of two R gives, and how many runs an R carries.
 template <class R>
@@ -25,7 +47,7 @@ struct LaneTraits<double> {
 template <int W>
 struct PackTraits {
   static constexpr int width = W;
-  using Mask [[gnu::vector_size(W * sizeof(std::int64_t))]] = std::int64_t;
+  using Mask = typename lanes::Vectors<W>::Bits;
 };
 
 template <>
@@ -42,15 +64,9 @@ using Mask = typename LaneTraits<R>::Mask;
 inline double& lane(double& x, int) { return x; }
 inline double lane(const double& x, int) { return x; }
 template <class P>
-  requires(LaneTraits<P>::width > 1)
-double lane(const P& x, int i) {
-  return x[i];
-}
+requires(LaneTraits<P>::width > 1) double lane(const P& x, int i) { return x[i]; }
 template <class P>
-  requires(LaneTraits<P>::width > 1)
-void set_lane(P& x, int i, double value) {
-  x[i] = value;
-}
+requires(LaneTraits<P>::width > 1) void set_lane(P& x, int i, double value) { x[i] = value; }
 inline void set_lane(double& x, int, double value) { x = value; }
 
 // The same number in every lane.
@@ -62,15 +78,13 @@ R splat(double x) {
 // where ? yes : no, lane by lane.
 inline double select(bool where, double yes, double no) { return where ? yes : no; }
 template <class R>
-  requires(LaneTraits<R>::width > 1)
-R select(const Mask<R>& where, const R& yes, const R& no) {
+requires(LaneTraits<R>::width > 1) R select(const Mask<R>& where, const R& yes, const R& no) {
   return where ? yes : no;
 }
 
 inline bool any(bool mask) { return mask; }
 template <class M>
-  requires(!std::is_same_v<M, bool>)
-bool any(const M& mask) {
+requires(!std::is_same_v<M, bool>) bool any(const M& mask) {
   std::int64_t bits = 0;
   for (unsigned i = 0; i < sizeof(M) / sizeof(std::int64_t); ++i) bits |= mask[i];
   return bits != 0;
@@ -78,8 +92,7 @@ bool any(const M& mask) {
 
 inline bool all(bool mask) { return mask; }
 template <class M>
-  requires(!std::is_same_v<M, bool>)
-bool all(const M& mask) {
+requires(!std::is_same_v<M, bool>) bool all(const M& mask) {
   std::int64_t bits = -1;
   for (unsigned i = 0; i < sizeof(M) / sizeof(std::int64_t); ++i) bits &= mask[i];
   return bits != 0;

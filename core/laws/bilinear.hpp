@@ -31,6 +31,7 @@ struct Bilinear {
   double slider_strength() const { return (1 - post_yield_ratio) * yield_shear; }  // N
 
   static Bilinear make(std::span<const double> v) { return {v[0], v[1], v[2]}; }
+  std::array<double, 3> values() const { return {stiffness, yield_shear, post_yield_ratio}; }
 };
 
 template <class R>

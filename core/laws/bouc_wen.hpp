@@ -5,11 +5,10 @@
 // (outside this a closed loop can give energy back: Erlicher & Point 2004), A > 0. With A = 1 and beta + gamma = 1 the
 // initial stiffness is k and |z| tends to 1; otherwise the initial stiffness is (r + (1 - r) A) k and z tends to
 // (A / (beta + gamma))^(1/n).
-// The rule does not depend on the rate, so z is a function of the path of d alone. It is integrated along d from the
-// committed state by the classical fourth-order Runge-Kutta method in strides of a quarter u_y, the last one shorter:
-// force and tangent are continuous in d.
-// Sources: Bouc 1967; Wen, "Method for random vibration of hysteretic systems", J. Eng. Mech. 102 (1976) 249; Erlicher &
-// Point, "Thermodynamic admissibility of Bouc-Wen type hysteresis models", C. R. Mecanique 332 (2004) 51.
+// z is a function of the path of d alone. It is integrated along d by the classical fourth-order Runge-Kutta method, in
+// strides set by the committed state (see longest_stride), the last one cut short: force and tangent are continuous in
+// d. Sources: Bouc 1967; Wen, "Method for random vibration of hysteretic systems", J. Eng. Mech. 102 (1976) 249;
+// Erlicher & Point, "Thermodynamic admissibility of Bouc-Wen type hysteresis models", C. R. Mecanique 332 (2004) 51.
 #pragma once
 
 #include <array>
@@ -35,6 +34,7 @@ struct BoucWen {
   double post_yield_ratio;  // -
   double exponent;          // n, -
   double beta, gamma, A;    // -
+  double loading_rate;  // -, set by make(): |d(dz/dx)/dz| at the ultimate z, x = d / u_y: n (beta + gamma) z_u^(n-1)
 
   template <class R>
   struct Memory {
@@ -44,8 +44,11 @@ struct BoucWen {
 
   double yield_deformation() const { return yield_shear / stiffness; }  // m
 
-  // Throws Error (input) when |gamma| > beta.
+  // Throws Error (input) when |gamma| > beta or the initial stiffness, (r + (1 - r) A) k, is not positive.
   static BoucWen make(std::span<const double> values);
+  std::array<double, 7> values() const {
+    return {stiffness, yield_shear, post_yield_ratio, exponent, beta, gamma, A};
+  }
 };
 
 namespace bouc_wen {
@@ -60,11 +63,9 @@ struct Slope {
 template <class R>
 Slope<R> slope(const BoucWen& law, const R& z, const R& direction) {
   const R size = lane_abs<R>(z);
-  const R lower = lane_power<R>(size, law.exponent - 1 > 0 ? law.exponent - 1 : 1);  // |z|^(n-1); n = 1: see next line
-  const R power = law.exponent == 1.0 ? size : R(lower * size);
+  const R lower = law.exponent == 1.0 ? splat<R>(1) : lane_power<R>(size, law.exponent - 1);  // |z|^(n-1)
   const R weight = law.gamma + law.beta * direction * lane_sign<R>(z);
-  const R lower_or_one = law.exponent == 1.0 ? splat<R>(1) : lower;
-  return {law.A - power * weight, -law.exponent * lower_or_one * weight * lane_sign<R>(z)};
+  return {law.A - lower * size * weight, -law.exponent * lower * weight * lane_sign<R>(z)};
 }
 
 // One Runge-Kutta step of z over h (in x, signed) and dz/dh at its end.
@@ -81,7 +82,20 @@ Slope<R> stride(const BoucWen& law, const R& z, const R& h, const R& direction) 
   return {z + h / 6.0 * sum, sum / 6.0 + h / 6.0 * (2.0 * k2_h + 2.0 * k3_h + k4_h)};
 }
 
-inline constexpr double longest_stride = 0.25;  // in u_y
+// The longest stride from z, in u_y: a quarter of the length over which z closes in on its course, where the method is
+// stable and accurate; while |z| falls (dz/dx >= A then) at most to z = 0, where dz/dx has a kink.
+template <class R>
+R longest_stride(const BoucWen& law, const R& z, const R& direction) {
+  const double n = law.exponent;
+  const R size = lane_abs<R>(z);
+  const R unloading_rate = n * (law.beta - law.gamma) * (n == 1.0 ? splat<R>(1) : lane_power<R>(size, n - 1));
+  const R to_zero = lane_max<R>(size / law.A, splat<R>(1e-6));
+  const R loading = splat<R>(0.25 / law.loading_rate);  // infinite when gamma = -beta: then dz/dx = A
+  return select(direction * z < 0.0, lane_min<R>(0.25 / unloading_rate, to_zero), loading);
+}
+
+// More strides than it takes from one ultimate value to the other, to 1e-17, for n up to 20.
+inline constexpr int most_strides = 400;
 
 }  // namespace bouc_wen
 
@@ -92,15 +106,16 @@ Reply<R> reply(const BoucWen& law, const R& deformation, const R&, const BoucWen
   R left = (deformation - committed.deformation) / u_y;  // what is still to walk
   const R direction = lane_sign<R>(left);
   R z = committed.z;
-  auto long_way = lane_abs<R>(left) > bouc_wen::longest_stride;
-  // Bounded: far beyond saturation nothing changes any more.
-  for (int i = 0; i < 400 && any(long_way); ++i) {
-    const R h = select(long_way, R(bouc_wen::longest_stride * direction), splat<R>(0));
+  R longest = bouc_wen::longest_stride(law, z, direction);
+  auto long_way = lane_abs<R>(left) > longest;
+  for (int i = 0; i < bouc_wen::most_strides && any(long_way); ++i) {
+    const R h = select(long_way, R(longest * direction), splat<R>(0));
     z = bouc_wen::stride(law, z, h, direction).value;
     left = left - h;
-    long_way = lane_abs<R>(left) > bouc_wen::longest_stride;
+    longest = bouc_wen::longest_stride(law, z, direction);
+    long_way = lane_abs<R>(left) > longest;
   }
-  left = lane_min<R>(lane_max<R>(left, splat<R>(-bouc_wen::longest_stride)), splat<R>(bouc_wen::longest_stride));
+  left = lane_min<R>(lane_max<R>(left, R(-longest)), longest);
   const auto last = bouc_wen::stride(law, z, left, direction);
   trial.z = last.value;
   trial.deformation = deformation;

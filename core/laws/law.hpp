@@ -5,6 +5,7 @@
 //     <numbers>;                                          // immutable once made, SI
 //     template <class R> struct Memory { R ...; };        // what the rule remembers; zero is the virgin state
 //     static Name make(std::span<const double> values);   // in the order of method.parameters; already range-checked
+//     std::array<double, N> values() const;                // the same numbers back, to show them
 //   };
 //   reply(law, deformation, rate, committed memory, trial memory&) -> Reply   // pure; trial is what would be remembered
 //   initial_stiffness(law)                                 // N/m, tangent of the virgin state

@@ -19,6 +19,7 @@ struct Linear {
   struct Memory {};
 
   static Linear make(std::span<const double> v) { return {v[0]}; }
+  std::array<double, 1> values() const { return {stiffness}; }
 };
 
 template <class R>

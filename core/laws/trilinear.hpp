@@ -45,6 +45,9 @@ struct Trilinear {
 
   // Throws Error (input) when f_y <= f_c or r_y >= r_c.
   static Trilinear make(std::span<const double> values);
+  std::array<double, 5> values() const {
+    return {stiffness, cracking_shear, cracked_ratio, yield_shear, post_yield_ratio};
+  }
 };
 
 template <class R>

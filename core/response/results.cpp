@@ -4,9 +4,12 @@ namespace pilotis {
 
 std::string_view status_name(RunStatus status) {
   switch (status) {
-    case RunStatus::done: return "done";
-    case RunStatus::collapsed: return "collapsed";
-    case RunStatus::not_converged: return "not converged";
+    case RunStatus::done:
+      return "done";
+    case RunStatus::collapsed:
+      return "collapsed";
+    case RunStatus::not_converged:
+      return "not converged";
   }
   return "";
 }

@@ -19,6 +19,11 @@ void add_rayleigh(double mass_factor, double stiffness_factor, const Band& elast
 
 // zeta_n = a0 / (2 omega_n) + a1 omega_n / 2 in both modes: Chopra, Dynamics of Structures, ch. 11.
 void add_rayleigh_by_modes(const RayleighByModes& damping, const Band& elastic, System& system) {
+  if (damping.first < 1 || damping.second > system.freedoms || damping.first >= damping.second)
+    throw input_error("building.damping",
+                      fmt::format("found modes {} and {} of a building with {}", damping.first, damping.second,
+                                  system.freedoms),
+                      "two different modes are needed, rising, from 1 to the number of modes");
   const ModalBasis basis = modal_basis(elastic, system.mass);
   const double wi = std::sqrt(basis.omega_squared[damping.first - 1]);
   const double wj = std::sqrt(basis.omega_squared[damping.second - 1]);

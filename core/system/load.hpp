@@ -22,7 +22,8 @@ class Load {
 
   // s, when ground and forces have come to rest for good.
   double end() const { return end_; }
-  // N, the largest magnitude any freedom sees: the scale of the equilibrium check.
+  // N, the largest magnitude that the ground alone or one floor force alone puts on a freedom: the scale of the
+  // equilibrium check.
   double largest() const { return largest_; }
 
  private:

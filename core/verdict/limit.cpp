@@ -102,20 +102,28 @@ int exit_status(const Verdict& verdict) {
 
 std::string_view statistic_name(Statistic statistic) {
   switch (statistic) {
-    case Statistic::mean: return "mean";
-    case Statistic::max: return "max";
-    case Statistic::median: return "median";
-    case Statistic::percentile: return "percentile";
+    case Statistic::mean:
+      return "mean";
+    case Statistic::max:
+      return "max";
+    case Statistic::median:
+      return "median";
+    case Statistic::percentile:
+      return "percentile";
   }
   return "";
 }
 
 std::string_view finding_name(Finding finding) {
   switch (finding) {
-    case Finding::holds: return "holds";
-    case Finding::exceeded: return "exceeded";
-    case Finding::too_close: return "too close";
-    case Finding::undetermined: return "undetermined";
+    case Finding::holds:
+      return "holds";
+    case Finding::exceeded:
+      return "exceeded";
+    case Finding::too_close:
+      return "too close";
+    case Finding::undetermined:
+      return "undetermined";
   }
   return "";
 }

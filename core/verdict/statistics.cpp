@@ -28,10 +28,14 @@ Peak listed_peak(const StudyResults& results, const RunResult& run, const Quanti
 
 double statistic_of(const std::vector<double>& values, Statistic statistic, double percentile) {
   switch (statistic) {
-    case Statistic::mean: return mean_of(values);
-    case Statistic::max: return percentile_of(values, 100);
-    case Statistic::median: return percentile_of(values, 50);
-    case Statistic::percentile: return percentile_of(values, percentile);
+    case Statistic::mean:
+      return mean_of(values);
+    case Statistic::max:
+      return percentile_of(values, 100);
+    case Statistic::median:
+      return percentile_of(values, 50);
+    case Statistic::percentile:
+      return percentile_of(values, percentile);
   }
   return unknown;
 }
@@ -54,9 +58,12 @@ double statistic_error(const std::vector<RunPeak>& peaks, Statistic statistic, d
       for (const RunPeak& peak : peaks) sum += peak.step_error;
       return sum / static_cast<double>(peaks.size());
     }
-    case Statistic::max: return order_error(peaks, 100);
-    case Statistic::median: return order_error(peaks, 50);
-    case Statistic::percentile: return order_error(peaks, percentile);
+    case Statistic::max:
+      return order_error(peaks, 100);
+    case Statistic::median:
+      return order_error(peaks, 50);
+    case Statistic::percentile:
+      return order_error(peaks, percentile);
   }
   return unknown;
 }

@@ -37,8 +37,8 @@ struct SuiteValue {
   double step_error = 0;  // SI; as Outcome::step_error
   double at_least = 0;    // SI; what the value is at least, whatever the runs not completed would have given
   const RunResult* governing = nullptr;  // with the largest peak; nullptr when there is none
-  double recorded = 0;    // SI, of the governing run; tells collapsed runs apart
-  int open = 0;           // runs that gave no value: not converged, or called done with a peak that is no number
+  double recorded = 0;                   // SI, of the governing run; tells collapsed runs apart
+  int open = 0;  // runs that gave no value: not converged, or called done with a peak that is no number
 };
 SuiteValue suite_value(std::span<const RunPeak> peaks, Statistic statistic, double percentile);
 

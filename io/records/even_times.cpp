@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 
 #include "core/error.hpp"
 #include "io/records/text.hpp"
@@ -13,7 +14,9 @@ namespace pilotis {
 namespace {
 
 constexpr const char* allowed =
-    "the first of two columns must be the time, rising evenly; a single component stands in one column";
+    "the first of two columns must be the time, rising evenly (state the step if its digits are only cut off); a "
+    "single "
+    "component stands in one column";
 
 // How finely `time` is printed.
 double last_digit(const Precision& finest, double time) {
@@ -23,9 +26,14 @@ double last_digit(const Precision& finest, double time) {
   return std::max(by_decimals, by_digits);
 }
 
-double tolerance(const TimeColumn& column, double time, double step) {
-  const double printed = last_digit(column.finest, time) * (1 + 1e-9);
-  return std::min(std::max(printed, 1e-6 * step), 0.49 * step);
+// How many last digits a printed time may differ from the even one, by where the step comes from.
+constexpr double of_shown_step = 0.5 * (1 - 1e-6);
+constexpr double of_stated_step = 0.5 * (1 + 1e-6);
+constexpr double of_fitted_step = 1;
+
+double tolerance(const TimeColumn& column, double time, double step, double digits) {
+  const double printed = last_digit(column.finest, time) * digits;
+  return std::min(std::max(printed, 1e-6 * step), 0.45 * step);
 }
 
 void require_rising(const TimeColumn& column, const std::string& file) {
@@ -39,14 +47,30 @@ void require_rising(const TimeColumn& column, const std::string& file) {
   }
 }
 
-bool fits(const TimeColumn& column, double step) {
-  const double first = column.times.front();
+// True when some start time goes with `step` and every printed time.
+bool fits(const TimeColumn& column, double step, double digits) {
+  double earliest = -std::numeric_limits<double>::infinity();
+  double latest = std::numeric_limits<double>::infinity();
   for (std::size_t i = 0; i < column.times.size(); ++i) {
     const double time = column.times[i];
-    const double even = first + step * static_cast<double>(i);
-    if (std::abs(time - even) > tolerance(column, time, step)) return false;
+    const double start = time - step * static_cast<double>(i);
+    const double slack = tolerance(column, time, step, digits);
+    earliest = std::max(earliest, start - slack);
+    latest = std::min(latest, start + slack);
   }
-  return true;
+  return earliest <= latest;
+}
+
+// Slope of the straight line through the times, by least squares.
+double best_step(const std::vector<double>& times) {
+  const double middle = static_cast<double>(times.size() - 1) / 2;
+  double above = 0, below = 0;
+  for (std::size_t i = 0; i < times.size(); ++i) {
+    const double from_middle = static_cast<double>(i) - middle;
+    above += from_middle * (times[i] - times.front());
+    below += from_middle * from_middle;
+  }
+  return above / below;
 }
 
 double median_step(const std::vector<double>& times) {
@@ -64,12 +88,12 @@ double median_step(const std::vector<double>& times) {
   double largest = -1;
   for (std::size_t i = 1; i < column.times.size(); ++i) {
     const double differs = std::abs(column.times[i] - column.times[i - 1] - usual);
-    if (differs > largest) worst = i, largest = differs;
+    if (differs > largest + 1e-9 * usual) worst = i, largest = differs;
   }
   const double before = column.times[worst - 1], now = column.times[worst];
   const double steps = (now - before) / usual;
   const std::string where = at_line(file, column.lines[worst]);
-  const double slack = 2 * tolerance(column, now, usual) / usual;
+  const double slack = std::min(2 * tolerance(column, now, usual, of_stated_step) / usual, 0.25);
   if (steps > 1.5 && std::abs(steps - std::round(steps)) <= slack)
     throw input_error(where,
                       fmt::format("{:.0f} sample(s) missing between the times {} and {}: the first would be at {:.10g}",
@@ -87,19 +111,29 @@ double as_printed(double value, int decimals) {
   return std::round(value * scale) / scale;
 }
 
+// The step that the times themselves show.
+EvenTimes shown_step(const TimeColumn& column, const std::string& file) {
+  const double best = best_step(column.times);
+  const double printed = as_printed(best, column.finest.decimals);
+  if (printed > 0 && fits(column, printed, of_shown_step)) return {printed, column.times.front(), false};
+  const bool finely_printed = last_digit(column.finest, column.times.back()) <= best / 10;
+  if (!finely_printed || !fits(column, best, of_fitted_step)) refuse_uneven(column, file);
+  return {best, column.times.front(), true};
+}
+
 }  // namespace
 
-EvenTimes even_times(const TimeColumn& column, const std::string& file) {
+EvenTimes even_times(const TimeColumn& column, std::optional<double> stated_step, const std::string& file) {
   require_rising(column, file);
-  const auto intervals = static_cast<double>(column.times.size() - 1);
-  const double mean = (column.times.back() - column.times.front()) / intervals;
-  const double printed = as_printed(mean, column.finest.decimals);
-  EvenTimes even;
-  even.step = printed > 0 && fits(column, printed) ? printed : mean;
-  if (!fits(column, even.step)) refuse_uneven(column, file);
-  even.first = column.times.front();
-  even.doubt = 2 * tolerance(column, column.times.back(), even.step) / intervals;
-  if (std::abs(even.first - even.step) <= tolerance(column, even.first, even.step)) even.first = even.step;
+  EvenTimes even{stated_step.value_or(0), column.times.front(), false};
+  if (!stated_step || !fits(column, *stated_step, of_stated_step)) even = shown_step(column, file);
+  if (stated_step && even.step != *stated_step)
+    throw input_error(file,
+                      fmt::format("the step is stated as {:.10g} {}, but the times of the file rise by {:.10g} {}",
+                                  *stated_step, column.unit, even.step, column.unit),
+                      "correct one of them");
+  if (std::abs(even.first - even.step) <= tolerance(column, even.first, even.step, of_stated_step))
+    even.first = even.step;
   return even;
 }
 

@@ -2,7 +2,7 @@
 
 #include <fmt/format.h>
 
-#include <cmath>
+#include <optional>
 
 #include "core/error.hpp"
 #include "core/units/units.hpp"
@@ -21,34 +21,29 @@ void require_two_samples(const Table& table, const std::string& file) {
                       "a record needs at least two samples, one in each row");
 }
 
-EvenTimes times_of(const Table& table, const PlainHeader& header, const std::string& file) {
+// In seconds. A stated step is exact, printed times are rounded.
+EvenTimes times_of(const Table& table, const PlainHeader& header, const RecordHints& hints, const std::string& file) {
+  const double factor = si_factor(header.time_unit, Dimension::time, file);
+  std::optional<double> stated;
+  if (header.statements.step || hints.step) stated = agreed_step(header.statements, hints, file);
   TimeColumn column;
   column.finest = table.finest[*header.time_column];
   column.lines = table.lines;
+  column.unit = header.time_unit;
   for (std::size_t row = 0; row < table.rows(); ++row) column.times.push_back(table.at(row, *header.time_column));
-  EvenTimes even = even_times(column, file);
-  const double factor = si_factor(header.time_unit, Dimension::time, file);
-  even.step *= factor;
-  even.first *= factor;
-  even.doubt *= factor;
+  const bool in_seconds = factor == 1;
+  EvenTimes even = even_times(column, stated && !in_seconds ? *stated / factor : stated, file);
+  const bool at_one_step = even.first == even.step;
+  even.step = stated.value_or(even.step * factor);
+  even.first = at_one_step ? even.step : even.first * factor;
   return even;
 }
 
-// The step as stated where it is stated: printed times are rounded, a stated step is not.
-double step_of(const EvenTimes& even, const Statements& says, const RecordHints& hints, const std::string& file) {
-  if (!says.step && !hints.step) return even.step;
-  const double stated = agreed_step(says, hints, file);
-  if (std::abs(stated - even.step) <= even.doubt + 1e-9 * even.step) return stated;
-  throw input_error(
-      says.step ? at_line(file, says.step->line) : file,
-      fmt::format("the step is stated as {} s, but the times of the file rise by {} s", stated, even.step),
-      "correct one of them");
-}
-
 // Times that start elsewhere than at 0 or one step are shifted to 0.
-double first_sample_of(const EvenTimes& even, double step, const Statements& says, const RecordHints& hints,
-                       const std::string& file, std::vector<std::string>& notes) {
-  const bool after_one_step = std::abs(even.first - step) <= even.doubt + 1e-9 * step;
+double first_sample_of(const EvenTimes& even, const Statements& says, const RecordHints& hints, const std::string& file,
+                       std::vector<std::string>& notes) {
+  const double step = even.step;
+  const bool after_one_step = even.first == step;
   const bool shifted = even.first != 0 && !after_one_step;
   const double first = after_one_step ? step : 0;
   if (says.first_sample_at || hints.first_sample_at) {
@@ -65,10 +60,13 @@ double first_sample_of(const EvenTimes& even, double step, const Statements& say
 
 void read_timed(const Table& table, const PlainHeader& header, const RecordHints& hints, const std::string& where,
                 RecordFile& file) {
-  const EvenTimes even = times_of(table, header, where);
+  const EvenTimes even = times_of(table, header, hints, where);
   if (!header.time_unit_stated) file.notes.push_back("the times have no unit: taken as seconds");
-  file.record.step = step_of(even, header.statements, hints, where);
-  file.record.first_sample_at = first_sample_of(even, file.record.step, header.statements, hints, where, file.notes);
+  if (even.finer_than_printed)
+    file.notes.push_back(
+        fmt::format("the times are rounded: a step of {:.10g} s fits them best; state it to be exact", even.step));
+  file.record.step = even.step;
+  file.record.first_sample_at = first_sample_of(even, header.statements, hints, where, file.notes);
 }
 
 }  // namespace
@@ -77,8 +75,8 @@ bool recognises_plain(std::string_view) { return true; }
 
 RecordFile read_plain(std::string_view content, const std::string& where, const RecordHints& hints) {
   const PlainText text = sorted_lines(content, where);
+  const PlainHeader header = plain_header(text, columns_in(text.rows.front()), where);
   const Table table = read_table(text.rows, where);
-  const PlainHeader header = plain_header(text, table.columns, where);
   require_two_samples(table, where);
 
   RecordFile file;

@@ -120,7 +120,8 @@ std::vector<std::size_t> columns_of(const NamedColumns& names, Role role) {
 [[noreturn]] void refuse_columns(const std::string& where, std::string what) {
   throw input_error(where, std::move(what),
                     "give one component: two columns, time and acceleration, or one column of samples; or name the "
-                    "columns in a line above them, e.g. \"time (s), acceleration (m/s^2), velocity (m/s)\"");
+                    "columns in a line above them, e.g. \"time (s), acceleration (m/s^2), velocity (m/s)\"; decimal "
+                    "commas need ; or tabs between columns");
 }
 
 // The column of values among named ones: the acceleration, or what is left beside the time.

@@ -125,10 +125,12 @@ PlainText sorted_lines(std::string_view content, const std::string& file) {
       "a record needs at least two samples");
 }
 
+std::size_t columns_in(const TextLine& row) { return cells_of(row.text, separator_of(row.text)).size(); }
+
 Table read_table(const std::vector<TextLine>& rows, const std::string& file) {
   Table table;
   table.separator = separator_of(rows.front().text);
-  table.columns = cells_of(rows.front().text, table.separator).size();
+  table.columns = columns_in(rows.front());
   table.finest.resize(table.columns, Precision{-400, 0});
   const char decimal_sign = decimal_sign_of(rows, table.separator);
   for (const TextLine& row : rows) {

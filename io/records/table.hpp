@@ -31,6 +31,9 @@ struct Table {
   double at(std::size_t row, std::size_t column) const { return values[row * columns + column]; }
 };
 
+// How many cells a row has, by the separator it shows.
+std::size_t columns_in(const TextLine& row);
+
 // Throws Error (input), naming line and text, for a cell that is blank, no number or not finite, and for a row with
 // more or fewer cells than the first.
 Table read_table(const std::vector<TextLine>& rows, const std::string& file);

@@ -66,8 +66,9 @@ void write_building(H5::H5File& file, const BuildingSummary& building) {
   group.numbers("mass", {"floor"}, building.masses, "kg", "floor mass");
   write_modes(group, building);
   write_matrix(group, "M", building.mass_matrix, "kg", "mass matrix");
-  write_matrix(group, "C", building.damping_matrix, "N s m-1", "damping matrix");
-  write_matrix(group, "K", building.stiffness_matrix, "N m-1", "initial stiffness matrix, with P-Delta");
+  write_matrix(group, "C", building.damping_matrix, si_unit(Dimension::dashpot), "damping matrix");
+  write_matrix(group, "K", building.stiffness_matrix, si_unit(Dimension::stiffness),
+               "initial stiffness matrix, with P-Delta");
 }
 
 BuildingSummary read_building(const ResultFile& from) {

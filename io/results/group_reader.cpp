@@ -30,7 +30,9 @@ H5::Group opened(const H5::H5File& file, const std::string& where, const std::st
 GroupReader::GroupReader(const H5::H5File& file, const std::string& where, const std::string& path)
     : group_(opened(file, where, path)), where_(where), path_(path) {}
 
-std::string GroupReader::path_of(const std::string& name) const { return path_ == "/" ? "/" + name : path_ + "/" + name; }
+std::string GroupReader::path_of(const std::string& name) const {
+  return path_ == "/" ? "/" + name : path_ + "/" + name;
+}
 
 bool GroupReader::has(const std::string& name) const {
   return H5Lexists(group_.getId(), name.c_str(), H5P_DEFAULT) > 0;
@@ -50,8 +52,8 @@ H5::DataSet GroupReader::array(const std::string& name, std::size_t count, H5T_c
                       remedy);
   const auto found = static_cast<std::size_t>(data.getSpace().getSimpleExtentNpoints());
   if (found != count)
-    throw input_error(where_, fmt::format("the array {} has {} values where {} are expected", path_of(name), found, count),
-                      remedy);
+    throw input_error(
+        where_, fmt::format("the array {} has {} values where {} are expected", path_of(name), found, count), remedy);
   return data;
 }
 

@@ -26,6 +26,7 @@ H5::Group made_group(H5::H5File& file, const std::string& path) {
   const hid_t properties = H5Pcreate(H5P_GROUP_CREATE);
   H5Pset_link_creation_order(properties, H5P_CRT_ORDER_TRACKED | H5P_CRT_ORDER_INDEXED);
   H5Pset_attr_creation_order(properties, H5P_CRT_ORDER_TRACKED | H5P_CRT_ORDER_INDEXED);
+  H5Pset_obj_track_times(properties, false);
   const hid_t id = H5Gcreate2(file.getId(), path.c_str(), H5P_DEFAULT, properties, H5P_DEFAULT);
   H5Pclose(properties);
   if (id < 0) throw H5::GroupIException("H5Gcreate2", path);

@@ -1,5 +1,6 @@
 // The groups of the result file, one source each. Writers make the group; readers throw Error (input) naming the file
-// and what is missing. Arrays over an empty scale (no motions, no modes, no limits) are left out: the group is there, bare.
+// and what is missing. Arrays over an empty scale (no motions, no modes, no limits) are left out: the group is there,
+// bare.
 #pragma once
 
 #include <H5Cpp.h>

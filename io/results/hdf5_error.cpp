@@ -20,9 +20,7 @@ herr_t take_innermost(unsigned position, const H5E_error2_t* error, void* data) 
   return 0;
 }
 
-herr_t remember(hid_t stack, void* data) {
-  return H5Ewalk2(stack, H5E_WALK_UPWARD, take_innermost, data);
-}
+herr_t remember(hid_t stack, void* data) { return H5Ewalk2(stack, H5E_WALK_UPWARD, take_innermost, data); }
 
 }  // namespace
 

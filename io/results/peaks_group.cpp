@@ -103,7 +103,8 @@ void write_residuals(H5::H5File& file, const StudyResults& results) {
   group.count_scale("story", 1, results.building.heights.size(), "story, counted from the ground up");
   const auto drift = residual_table(results, &RunResult::residual_drift);
   auto ratio = drift;
-  for (std::size_t i = 0; i < ratio.size(); ++i) ratio[i] /= results.building.heights[i % results.building.heights.size()];
+  for (std::size_t i = 0; i < ratio.size(); ++i)
+    ratio[i] /= results.building.heights[i % results.building.heights.size()];
   group.numbers("drift", {"run", "story"}, drift, "m", "drift left after the motion: mean over the last period");
   group.numbers("drift_swing", {"run", "story"}, residual_table(results, &RunResult::residual_swing), "m",
                 "half the range of the drift over the last period: how still it is");

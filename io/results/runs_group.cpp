@@ -68,7 +68,7 @@ void write_motions(H5::H5File& file, const std::vector<MotionSummary>& motions) 
               "SHA-256 of step, first sample time and samples (little-endian doubles)");
   group.numbers("step", {"motion"}, column<double>(motions, &MotionSummary::step), "s", "interval between samples");
   group.integers("samples", {"motion"}, column<std::int64_t>(motions, &MotionSummary::samples), "number of samples");
-  group.numbers("peak", {"motion"}, column<double>(motions, &MotionSummary::peak), "m s-2",
+  group.numbers("peak", {"motion"}, column<double>(motions, &MotionSummary::peak), si_unit(Dimension::acceleration),
                 "ground acceleration of largest magnitude, with the motion's own factor");
 }
 

@@ -4,7 +4,7 @@
 #include <fmt/format.h>
 
 #include <ctime>
-#include <exception>
+#include <span>
 
 #include "core/error.hpp"
 #include "io/results/group_reader.hpp"
@@ -33,6 +33,7 @@ H5::FileCreatPropList creation() {
   H5::FileCreatPropList properties;
   H5Pset_link_creation_order(properties.getId(), H5P_CRT_ORDER_TRACKED | H5P_CRT_ORDER_INDEXED);
   H5Pset_attr_creation_order(properties.getId(), H5P_CRT_ORDER_TRACKED | H5P_CRT_ORDER_INDEXED);
+  H5Pset_obj_track_times(properties.getId(), false);  // the same results give the same bytes
   return properties;
 }
 
@@ -41,6 +42,23 @@ H5::FileAccPropList access() {
   H5::FileAccPropList properties;
   properties.setFcloseDegree(H5F_CLOSE_STRONG);
   return properties;
+}
+
+// The file is made in memory and written by WholeFile in one go: the library cannot be left half way by a full disk.
+H5::FileAccPropList in_memory() {
+  constexpr std::size_t grow_by = 1 << 20;  // bytes
+  H5::FileAccPropList properties = access();
+  properties.setCore(grow_by, false);
+  return properties;
+}
+
+// The bytes of an in-memory file that has been flushed; they live as long as it stays open.
+std::span<const char> image_of(const H5::H5File& file) {
+  void* handle = nullptr;
+  file.getVFDHandle(&handle);  // of an in-memory file: the address of the pointer to its bytes
+  const ssize_t size = H5Fget_file_image(file.getId(), nullptr, 0);  // without the room kept to grow
+  if (size < 0) throw H5::FileIException("H5Fget_file_image", "");
+  return {*static_cast<const char* const*>(handle), static_cast<std::size_t>(size)};
 }
 
 void write_root(H5::H5File& file, const StoredStudy& stored) {
@@ -59,8 +77,8 @@ void write_root(H5::H5File& file, const StoredStudy& stored) {
       .write(H5::PredType::NATIVE_DOUBLE, &format_version);
 }
 
-void write_all(const std::filesystem::path& path, const StoredStudy& stored, const Verdict& verdict) {
-  H5::H5File file(path.string(), H5F_ACC_TRUNC, creation(), access());
+H5::H5File made(const StoredStudy& stored, const Verdict& verdict) {
+  H5::H5File file("results in memory", H5F_ACC_TRUNC, creation(), in_memory());
   write_root(file, stored);
   write_building(file, stored.results.building);
   write_motions(file, stored.results.motions);
@@ -70,7 +88,7 @@ void write_all(const std::filesystem::path& path, const StoredStudy& stored, con
   write_histories(file, stored.results);
   write_verdict(file, stored.limits, verdict);
   file.flush(H5F_SCOPE_GLOBAL);
-  file.close();
+  return file;
 }
 
 ResultFile opened(const std::filesystem::path& path) {
@@ -125,13 +143,14 @@ auto reading(const std::filesystem::path& path, Read read) {
 }  // namespace
 
 void write_results(const std::filesystem::path& file, const StoredStudy& stored, const Verdict& verdict) {
-  WholeFile whole(file);
+  WholeFile whole(file);  // first: a folder that cannot be written is told before the work
   const Hdf5Quiet quiet;
   try {
-    write_all(whole.passing(), stored, verdict);
+    const H5::H5File made_file = made(stored, verdict);
+    whole.write(image_of(made_file));
   } catch (const H5::Exception&) {
     throw outside_error(file.string(), fmt::format("cannot be written: {}", quiet.reason()),
-                        "check that the disk has room");
+                        "check that there is memory enough");
   }
   whole.commit();
 }

@@ -21,9 +21,9 @@ struct Column {
   Dimension dimension;
   const char* suffix;
 };
-constexpr Column columns[] = {{Dimension::none, "ratio"},         {Dimension::length, "length"},
-                              {Dimension::velocity, "velocity"},  {Dimension::acceleration, "acceleration"},
-                              {Dimension::force, "force"},        {Dimension::moment, "moment"}};
+constexpr Column columns[] = {{Dimension::none, "ratio"},        {Dimension::length, "length"},
+                              {Dimension::velocity, "velocity"}, {Dimension::acceleration, "acceleration"},
+                              {Dimension::force, "force"},       {Dimension::moment, "moment"}};
 
 // One array per dimension that occurs: `value(i)` in the rows of that dimension, NaN in the others.
 template <class Value>
@@ -78,18 +78,21 @@ void write_limits(GroupWriter& group, const std::vector<Limit>& limits) {
               "where the limit comes from, as the study states it");
   std::vector<const Limit*> rows;
   for (const Limit& limit : limits) rows.push_back(&limit);
-  write_by_dimension(group, "limit_value", "limit", rows, [&](std::size_t i) { return limits[i].value; },
-                     "what the statistic may reach at most");
+  write_by_dimension(
+      group, "limit_value", "limit", rows, [&](std::size_t i) { return limits[i].value; },
+      "what the statistic may reach at most");
   write_factors(group, limits);
 }
 
 void write_outcome_numbers(GroupWriter& group, const std::vector<Limit>& limits, const std::vector<Outcome>& outcomes) {
   std::vector<const Limit*> rows;
   for (const Outcome& outcome : outcomes) rows.push_back(&limits.at(static_cast<std::size_t>(outcome.limit)));
-  write_by_dimension(group, "value", "outcome", rows, [&](std::size_t i) { return outcomes[i].value; },
-                     "statistic over the suite; infinite when collapsed runs decide it");
-  write_by_dimension(group, "step_error", "outcome", rows, [&](std::size_t i) { return outcomes[i].step_error; },
-                     "error of the value from the time step, estimated; NaN when not estimated");
+  write_by_dimension(
+      group, "value", "outcome", rows, [&](std::size_t i) { return outcomes[i].value; },
+      "statistic over the suite; infinite when collapsed runs decide it");
+  write_by_dimension(
+      group, "step_error", "outcome", rows, [&](std::size_t i) { return outcomes[i].step_error; },
+      "error of the value from the time step, estimated; NaN when not estimated");
   group.numbers("factor", {"outcome"}, column_of<double>(outcomes, [](const Outcome& o) { return o.factor; }), "1",
                 "factor on the ground motion");
   group.numbers("margin", {"outcome"}, column_of<double>(outcomes, [](const Outcome& o) { return o.margin; }), "1",
@@ -105,7 +108,8 @@ void write_outcomes(GroupWriter& group, const std::vector<Limit>& limits, const 
   };
   integers("limit_index", &Outcome::limit, "which limit");
   write_outcome_numbers(group, limits, outcomes);
-  integers("place", &Outcome::place, "story or floor where the statistic is largest; 0 for quantities of the whole run");
+  integers("place", &Outcome::place,
+           "story or floor where the statistic is largest; 0 for quantities of the whole run");
   group.texts("motion", axes, column_of<std::string>(outcomes, [](const Outcome& o) { return o.motion; }),
               "motion with the largest peak at that place");
   integers("runs", &Outcome::runs, "runs at this factor");
@@ -113,7 +117,8 @@ void write_outcomes(GroupWriter& group, const std::vector<Limit>& limits, const 
   integers("not_converged", &Outcome::not_converged, "runs at this factor that were not completed");
   group.integers("exceeded", axes, column_of<std::int64_t>(outcomes, [](const Outcome& o) { return o.exceeded; }),
                  "1 when the value is above the limit");
-  group.texts("finding", axes, column_of<std::string>(outcomes, [](const Outcome& o) { return finding_name(o.finding); }),
+  group.texts("finding", axes,
+              column_of<std::string>(outcomes, [](const Outcome& o) { return finding_name(o.finding); }),
               "holds, exceeded, too close (within its step error of the limit) or undetermined");
 }
 

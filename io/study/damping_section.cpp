@@ -62,7 +62,8 @@ ModalDamping modal(TableReader& table, int floors) {
 
 Damping read_damping(const ValueReader& value, int floors) {
   TableReader table(value);
-  table.known_keys({"kind", "ratio", "modes", "stiffness", "mass_factor", "stiffness_factor"});
+  // The keys of any kind, so that a misspelled "kind" is told apart from a missing one.
+  if (!table.has("kind")) table.known_keys({"kind", "ratio", "modes", "stiffness", "mass_factor", "stiffness_factor"});
   const std::string kind =
       table.at("kind", "name the kind of damping: rayleigh, modal or none").choice("kind of damping", kinds);
   if (kind == "modal") return modal(table, floors);

@@ -30,7 +30,8 @@ SchemeChoice read_scheme(const ValueReader& value, std::span<const Method> schem
     for (const Parameter& parameter : method.parameters)
       if (std::find(keys.begin(), keys.end(), parameter.key) == keys.end()) keys.push_back(parameter.key);
   }
-  table.known_keys(keys);
+  // The keys of any scheme, so that a misspelled "name" is told apart from a missing one.
+  if (!table.has("name")) table.known_keys(keys);
   const std::string name =
       table.at("name", fmt::format("name the scheme, one of {}", fmt::join(names, ", "))).choice("scheme", names);
   const auto method = std::find_if(schemes.begin(), schemes.end(), [&](const Method& m) { return m.name == name; });

@@ -50,7 +50,7 @@ std::vector<fs::path> files_named(const ValueReader& value, const fs::path& fold
   const std::string relative_to = fmt::format("{} are relative to {}", is_pattern(text) ? "patterns" : "paths",
                                               folder.empty() ? "the current folder" : folder.string());
   if (!is_pattern(text)) throw value.wrong(fmt::format("there is no file \"{}\"", text), relative_to);
-  const std::string prefix = absolute || folder.empty() ? "" : escaped(folder.string()) + "/";
+  const std::string prefix = absolute || folder.empty() ? std::string() : fmt::format("{}/", escaped(folder.string()));
   std::vector<fs::path> files = matches(prefix + text, value);
   if (files.empty()) throw value.wrong(fmt::format("no file matches \"{}\"", text), relative_to);
   return files;

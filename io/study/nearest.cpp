@@ -8,6 +8,15 @@
 
 namespace pilotis {
 
+namespace {
+
+// "stat" for "statistic", "maximum" for "max".
+bool one_starts_the_other(std::string_view a, std::string_view b) {
+  return std::min(a.size(), b.size()) >= 3 && (a.starts_with(b) || b.starts_with(a));
+}
+
+}  // namespace
+
 int edit_distance(std::string_view a, std::string_view b) {
   // rows[i][j]: distance of the first i letters of a and the first j of b.
   std::vector<std::vector<int>> rows(a.size() + 1, std::vector<int>(b.size() + 1));
@@ -33,7 +42,10 @@ std::string_view nearest(std::string_view name, std::span<const std::string_view
       least = distance;
     }
   }
-  return 2 * least <= static_cast<int>(std::max(name.size(), best.size())) ? best : std::string_view{};
+  if (2 * least <= static_cast<int>(std::max(name.size(), best.size()))) return best;
+  const auto start =
+      std::find_if(known.begin(), known.end(), [&](std::string_view k) { return one_starts_the_other(name, k); });
+  return start == known.end() ? std::string_view{} : *start;
 }
 
 std::string did_you_mean(std::string_view name, std::span<const std::string_view> known) {

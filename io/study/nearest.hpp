@@ -11,7 +11,8 @@ namespace pilotis {
 // string alignment). Source: Damerau 1964; Levenshtein 1966.
 int edit_distance(std::string_view a, std::string_view b);
 
-// Empty when `known` is empty or nothing in it is at all alike (more than half of the letters differ).
+// The known name at the least distance, if at most half of the letters differ; else one that starts with `name` or that
+// `name` starts with; else empty.
 std::string_view nearest(std::string_view name, std::span<const std::string_view> known);
 
 // `did you mean "height"? allowed: label, height, weight`; without the question when nothing is alike.

@@ -46,12 +46,12 @@ std::vector<double> read_parameters(TableReader& table, const Method& method, st
 
 Law read_spring(const ValueReader& value) {
   TableReader table(value);
-  // First with the keys of any law, so that a misspelled "law" is told apart from a missing one.
   std::vector<std::string_view> keys{"law"};
   for (const Method& method : law_catalogue())
     for (const Parameter& parameter : method.parameters)
       if (std::find(keys.begin(), keys.end(), parameter.key) == keys.end()) keys.push_back(parameter.key);
-  table.known_keys(keys);
+  // The keys of any law, so that a misspelled "law" is told apart from a missing one.
+  if (!table.has("law")) table.known_keys(keys);
   const std::vector<std::string_view> names = law_names();
   const std::string name =
       table.at("law", fmt::format("name the law, one of {}", fmt::join(names, ", "))).choice("law", names);

@@ -10,6 +10,7 @@
 
 #include "core/building/stick.hpp"
 #include "core/motion/accelerogram.hpp"
+#include "core/motion/floor_force.hpp"
 #include "core/parameter.hpp"
 #include "core/verdict/limit.hpp"
 
@@ -28,13 +29,6 @@ struct StudyUnits {
 struct SchemeChoice {
   std::string name;
   std::vector<double> values;
-};
-
-// Force on one floor over time, from a table in the study or a file.
-struct FloorForce {
-  int floor = 1;               // counted from 1
-  std::vector<double> times;   // s, rising, first 0 or later; the force is zero before the first and after the last
-  std::vector<double> forces;  // N, linear between
 };
 
 struct MarchSettings {

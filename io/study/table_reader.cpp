@@ -40,7 +40,8 @@ void TableReader::known_keys(std::span<const std::string_view> keys) {
 bool TableReader::has(std::string_view key) const { return find(key).has_value(); }
 
 std::optional<ValueReader> TableReader::find(std::string_view key) const {
-  if (!among(known_, key)) throw std::logic_error(fmt::format("key \"{}\" read but not among the known keys", key));
+  if (!known_.empty() && !among(known_, key))
+    throw std::logic_error(fmt::format("key \"{}\" read but not among the known keys", key));
   const Node::Entry* entry = self_.node().find(std::string(key));
   if (entry == nullptr) return std::nullopt;
   return ValueReader(self_.source(), entry->value, entry->line, joined_path(path(), key));

@@ -54,15 +54,15 @@ class ValueReader {
   std::string path_;
 };
 
-// A table. Getters throw Error (input); asking for a key that is not among known_keys() is a fault of the program.
+// A table. Getters throw Error (input). Before known_keys() any key may be asked for (the one that says which others
+// there are); afterwards asking for a key that is not among them is a fault of the program.
 class TableReader {
  public:
   TableReader(const StudySource& source, const Node& table, int line, std::string path);
   // Throws Error when the value is not a table.
   explicit TableReader(const ValueReader& value);
 
-  // The keys this table may have; throws Error at the first other key, naming the nearest. Call it before reading,
-  // again when what a key says narrows the choice.
+  // The keys this table may have; throws Error at the first other key, naming the nearest.
   void known_keys(std::span<const std::string_view> keys);
   void known_keys(std::initializer_list<std::string_view> keys) { known_keys(std::span(keys.begin(), keys.size())); }
 

@@ -13,7 +13,7 @@ namespace {
 
 // "kN/mm" for messages; nothing for plain numbers.
 std::string unit_of(const StudyUnits& units, Dimension dimension) {
-  return dimension == Dimension::none ? "" : " " + units.name(dimension);
+  return dimension == Dimension::none ? std::string() : fmt::format(" {}", units.name(dimension));
 }
 
 std::string trimmed(const std::string& text) {

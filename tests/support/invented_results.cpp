@@ -12,8 +12,10 @@ namespace {
 
 constexpr int motions = 5;
 constexpr double floor_mass = 420e3;  // kg
-constexpr const char* motion_names[motions] = {"Aldermoor 090", "Brackwater quay", "Cinder pass", "Dunmarsh", "Elmsgate north"};
-constexpr const char* labels[stories] = {"ground story", "clinic", "clinic", "wards", "wards", "wards", "offices", "plant"};
+constexpr const char* motion_names[motions] = {"Aldermoor 090", "Brackwater quay", "Cinder pass", "Dunmarsh",
+                                               "Elmsgate north"};
+constexpr const char* labels[stories] = {"ground story", "clinic", "clinic",  "wards",
+                                         "wards",        "wards",  "offices", "plant"};
 
 double height(int story) { return story == 1 ? 4.5 : 3.5; }
 
@@ -66,7 +68,12 @@ void fill_peaks(RunResult& run, int motion) {
 }
 
 RunResult one_run(int motion, double factor) {
-  RunResult run{motion_names[motion], factor, "newmark, beta 0.25, gamma 0.5", 0.005, "a quarter of the record's step"};
+  RunResult run;
+  run.motion = motion_names[motion];
+  run.factor = factor;
+  run.scheme = "newmark, beta 0.25, gamma 0.5";
+  run.step = 0.005;
+  run.step_choice = "half the record's step";
   run.time_reached = 41.98 + motion;
   run.energy_error = 2.3e-5;
   run.energy_input = 3.1e6 * factor;
@@ -106,7 +113,8 @@ StoredStudy study(const std::vector<double>& factors) {
   made.units = {"kN", "m", ""};
   made.results.building = building();
   for (int m = 0; m < motions; ++m)
-    made.results.motions.push_back({motion_names[m], fmt::format("motions/{}.csv", m), std::string(64, 'a'), 0.01, 3200, -2.9});
+    made.results.motions.push_back(
+        {motion_names[m], fmt::format("motions/{}.csv", m), std::string(64, 'a'), 0.01, 3200, -2.9});
   for (double factor : factors)
     for (int m = 0; m < motions; ++m) made.results.runs.push_back(one_run(m, factor));
   made.limits = {drift_limit(Statistic::mean, 0.01)};
@@ -152,7 +160,8 @@ StoredStudy study_with_collapse() {
 
 StoredStudy study_with_open_run() {
   StoredStudy made = study_with_collapse();
-  end_early(made.results.runs[2 * motions + 2], RunStatus::not_converged, 11.5, "not converged at 11.5 s: step 4.9e-06 s");
+  end_early(made.results.runs[2 * motions + 2], RunStatus::not_converged, 11.5,
+            "not converged at 11.5 s: step 4.9e-06 s");
   return made;
 }
 

@@ -181,7 +181,7 @@ TEST(Judge, ResidualDriftRatioOverTheStoryHeight) {
     one.residual_error = {0.0003, 0.0004};
   }
   const Outcome outcome = only(results, {&residual_drift_ratio(), Statistic::mean, 0, 0.005, "", {}});
-  EXPECT_DOUBLE_EQ(outcome.value, 0.002);       // 8 mm / 4 m
+  EXPECT_DOUBLE_EQ(outcome.value, 0.002);        // 8 mm / 4 m
   EXPECT_DOUBLE_EQ(outcome.step_error, 0.0001);  // 0.4 mm / 4 m
   EXPECT_EQ(outcome.place, 2);
 }

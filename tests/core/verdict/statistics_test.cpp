@@ -11,9 +11,10 @@ namespace {
 constexpr double infinity = std::numeric_limits<double>::infinity();
 constexpr double nan = std::numeric_limits<double>::quiet_NaN();
 
-// NIST/SEMATECH e-Handbook of Statistical Methods, section 7.2.6.2 "Percentiles": twelve measurements, and the remark that
-// some packages set position 1 + p (N - 1), which is type 7. Measurements from memory. By hand: 1 + 0.9 * 11 = 10.9,
-// between the tenth (95.1937) and the eleventh (95.1959) of the sorted values: 95.19568, 95.1957 as the handbook rounds.
+// NIST/SEMATECH e-Handbook of Statistical Methods, section 7.2.6.2 "Percentiles": twelve measurements, and the remark
+// that some packages set position 1 + p (N - 1), which is type 7. Measurements from memory. By hand: 1 + 0.9 * 11
+// = 10.9, between the tenth (95.1937) and the eleventh (95.1959) of the sorted values: 95.19568, 95.1957 as the
+// handbook rounds.
 TEST(Percentile, OfTheMeasurementsOfTheNistHandbook) {
   const std::vector<double> measured{95.1772, 95.1567, 95.1937, 95.1959, 95.1442, 95.0610,
                                      95.1591, 95.1195, 95.1065, 95.0925, 95.1990, 95.1682};
@@ -23,9 +24,7 @@ TEST(Percentile, OfTheMeasurementsOfTheNistHandbook) {
 
 // Documented examples of numpy.percentile / numpy.quantile, whose default "linear" is type 7:
 // a = [[10, 7, 4], [3, 2, 1]], np.percentile(a, 50) = 3.5.
-TEST(Percentile, OfTheExampleInTheNumpyManual) {
-  EXPECT_DOUBLE_EQ(percentile_of({10, 7, 4, 3, 2, 1}, 50), 3.5);
-}
+TEST(Percentile, OfTheExampleInTheNumpyManual) { EXPECT_DOUBLE_EQ(percentile_of({10, 7, 4, 3, 2, 1}, 50), 3.5); }
 
 TEST(Percentile, EndsAndMiddleByHand) {
   const std::vector<double> values{15, 20, 35, 40, 50};
@@ -39,8 +38,8 @@ TEST(Percentile, EndsAndMiddleByHand) {
 }
 
 TEST(Percentile, InfiniteValuesNeverGiveNaN) {
-  EXPECT_DOUBLE_EQ(percentile_of({1, 2, infinity}, 50), 2);      // falls on 2: the infinite one does not touch it
-  EXPECT_EQ(percentile_of({1, 2, infinity}, 84), infinity);      // falls between 2 and infinity
+  EXPECT_DOUBLE_EQ(percentile_of({1, 2, infinity}, 50), 2);  // falls on 2: the infinite one does not touch it
+  EXPECT_EQ(percentile_of({1, 2, infinity}, 84), infinity);  // falls between 2 and infinity
   EXPECT_EQ(percentile_of({1, infinity, infinity}, 84), infinity);
 }
 

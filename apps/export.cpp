@@ -1,0 +1,115 @@
+// `pilotis export`: parts of a result file as CSV.
+#include <fmt/format.h>
+
+#include <memory>
+#include <optional>
+
+#include "apps/commands.hpp"
+#include "apps/export_tables.hpp"
+#include "apps/terminal.hpp"
+#include "core/error.hpp"
+#include "io/whole_file.hpp"
+
+namespace pilotis {
+
+namespace {
+
+struct Options {
+  std::string file, output, part;
+  int run = -1;
+  bool study_units = false;
+};
+
+constexpr const char* parts[][2] = {{"--peaks", "largest responses of every run, with step error and time"},
+                                    {"--residual", "drift left after the motion"},
+                                    {"--histories", "responses over time, of the runs that kept them"},
+                                    {"--runs", "status, step, energies of every run"},
+                                    {"--motions", "the motions of the suite"},
+                                    {"--building", "heights, masses, modes"}};
+
+// Standard output, or a file that is whole or untouched.
+class Output {
+ public:
+  explicit Output(const std::string& file) {
+    if (!file.empty()) file_.emplace(file);
+  }
+  void write(const std::string& text) { file_ ? file_->write(text) : print_out(text); }
+  void finish() {
+    if (file_) file_->commit();
+  }
+
+ private:
+  std::optional<WholeFile> file_;
+};
+
+[[noreturn]] void no_histories(const Options& options) {
+  const std::string which = options.run < 0 ? "no run" : fmt::format("run {}", options.run);
+  throw input_error(options.file, fmt::format("{} kept {}histories", which, options.run < 0 ? "" : "no "),
+                    "name them in the study, [keep] histories = [\"drift\"] or \"all\", and run it again");
+}
+
+void write_histories(const StoredStudy& stored, const Options& options, const TableUnits& units, Output& output) {
+  const int runs = static_cast<int>(stored.results.runs.size());
+  const int from = options.run < 0 ? 0 : options.run, to = options.run < 0 ? runs : options.run + 1;
+  bool any = false;
+  for (int i = from; i < to; ++i) {
+    const RunResult run = read_run(options.file, i);
+    if (run.histories.empty()) continue;
+    if (!any) output.write(history_header());
+    any = true;
+    output.write(history_rows(run, i, static_cast<int>(stored.results.building.heights.size()), units));
+  }
+  if (!any) no_histories(options);
+}
+
+void require_run(const StoredStudy& stored, const Options& options) {
+  const int runs = static_cast<int>(stored.results.runs.size());
+  if (options.run >= runs)
+    throw input_error("--run", fmt::format("found {}, and {} has {} runs", options.run, options.file, runs),
+                      fmt::format("runs are counted from 0 to {}", runs - 1));
+  if (options.run >= 0 && (options.part == "--motions" || options.part == "--building"))
+    throw input_error("--run", fmt::format("does not go with {}", options.part), "leave it out");
+}
+
+void write_part(const StoredStudy& stored, const Options& options, Output& output) {
+  const TableUnits units(options.study_units, stored.units);
+  if (options.part == "--peaks") output.write(peaks_csv(stored, units, options.run));
+  if (options.part == "--residual") output.write(residuals_csv(stored, units, options.run));
+  if (options.part == "--histories") write_histories(stored, options, units, output);
+  if (options.part == "--runs") output.write(runs_csv(stored, units, options.run));
+  if (options.part == "--motions") output.write(motions_csv(stored, units));
+  if (options.part == "--building") output.write(building_csv(stored, units));
+}
+
+void export_part(const Options& options) {
+  const StoredStudy stored = read_results(options.file);
+  require_run(stored, options);
+  Output output(options.output);
+  write_part(stored, options, output);
+  output.finish();
+}
+
+}  // namespace
+
+void add_export(CLI::App& app, int& status) {
+  auto options = std::make_shared<Options>();
+  CLI::App* command = app.add_subcommand("export", "Write a part of a result file as CSV");
+  command->add_option("file", options->file, "result file (HDF5) that `pilotis run` wrote")->required();
+  CLI::Option_group* group = command->add_option_group("part", "what to write");
+  for (const auto& [name, meaning] : parts)
+    group->add_flag_callback(
+        name, [options, name = std::string(name)] { options->part = name; }, meaning);
+  group->require_option(1);
+  command->add_option("--run", options->run, "only this run, counted from 0")->check(CLI::NonNegativeNumber);
+  command->add_option("-o,--output", options->output, "file to write; standard output without it");
+  command->add_flag("--study-units", options->study_units, "in the units of the study instead of SI");
+  command->footer(
+      "One value per row, with its unit; a cell is empty where nothing is known.\n\n"
+      "Example:\n  pilotis export harbor-clinic.h5 --peaks --study-units -o peaks.csv");
+  command->callback([options, &status] {
+    export_part(*options);
+    status = all_hold;
+  });
+}
+
+}  // namespace pilotis

@@ -21,8 +21,16 @@ struct ImplicitCoefficients {
 template <class R>
 struct ImplicitWorkspace {
   explicit ImplicitWorkspace(const System& system)
-      : solve(system), u(system.freedoms), v(u), a(u), internal(u), internal_before(u), residual(u),
-        tangent(system.elements), trial(state_at_rest<R>(system).memory), unused(trial) {
+      : solve(system),
+        u(system.freedoms),
+        v(u),
+        a(u),
+        internal(u),
+        internal_before(u),
+        residual(u),
+        tangent(system.elements),
+        trial(state_at_rest<R>(system).memory),
+        unused(trial) {
     const Band stiffness = initial_stiffness(system);
     for (int i = 0; i < system.freedoms; ++i) stiffest = std::max(stiffest, std::abs(stiffness.at(i, i)));
   }
@@ -62,14 +70,15 @@ R out_of_balance(const System& system, const ImplicitCoefficients& c, const R* b
   return largest + poison - 16 * std::numeric_limits<double>::epsilon() * w.stiffest * farthest;
 }
 
-// Loads [freedom] at both ends. `tolerance` in N. Gives the lanes that have converged; `state` moves on when all have and
-// is left as it was otherwise.
+// Loads [freedom] at both ends. `tolerance` in N. Gives the lanes that have converged; `state` moves on when all have
+// and is left as it was otherwise.
 template <class R>
 Mask<R> implicit_step(const System& system, const ImplicitCoefficients& c, double dt, double tolerance, const R* before,
                       const R* after, State<R>& state, ImplicitWorkspace<R>& w) noexcept {
   const double weight = 1 + c.alpha;
   if (c.alpha != 0)
-    internal_forces(system, state.u.data(), state.v.data(), state.memory, w.unused, w.internal_before.data(), w.tangent.data());
+    internal_forces(system, state.u.data(), state.v.data(), state.memory, w.unused, w.internal_before.data(),
+                    w.tangent.data());
   w.a = state.a;
   Mask<R> converged{};
   for (int iteration = 0;; ++iteration) {

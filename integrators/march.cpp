@@ -25,14 +25,24 @@ bool all_finite(const std::vector<double>& before, const std::vector<double>& af
 class Gallery {
  public:
   Gallery(const System& system, const Load& load, std::span<Observer* const> observers)
-      : load_(load), observers_(observers), reader_(system), values_(reader_.layout().size()), forces_(system.freedoms) {}
+      : load_(load),
+        observers_(observers),
+        reader_(system),
+        values_(reader_.layout().size()),
+        forces_(system.freedoms) {}
 
   bool show(const State<double>& state, double time) noexcept {
     load_.at(time, forces_.data());
     const double ground = load_.ground(time);
     reader_.read(state, forces_.data(), ground, values_.data());
-    const Instant instant{time,   state.fraction == 0, state, forces_.data(), ground, values_.data(),
-                          reader_.acceleration().data(), reader_.damping_force().data()};
+    const Instant instant{time,
+                          state.fraction == 0,
+                          state,
+                          forces_.data(),
+                          ground,
+                          values_.data(),
+                          reader_.acceleration().data(),
+                          reader_.damping_force().data()};
     bool go_on = true;
     for (Observer* observer : observers_) go_on = observer->see(instant) && go_on;
     return go_on;

@@ -24,8 +24,10 @@ constexpr double infinite = std::numeric_limits<double>::infinity();
 
 State<double> initial_state(const System& system, const Load& load, const RunPlan& plan) {
   State<double> state = state_at_rest<double>(system);
-  for (std::size_t i = 0; i < plan.initial_displacement.size(); ++i) state.u[system.stories.floor[i]] = plan.initial_displacement[i];
-  for (std::size_t i = 0; i < plan.initial_velocity.size(); ++i) state.v[system.stories.floor[i]] = plan.initial_velocity[i];
+  for (std::size_t i = 0; i < plan.initial_displacement.size(); ++i)
+    state.u[system.stories.floor[i]] = plan.initial_displacement[i];
+  for (std::size_t i = 0; i < plan.initial_velocity.size(); ++i)
+    state.v[system.stories.floor[i]] = plan.initial_velocity[i];
   start(system, load, state);
   return state;
 }
@@ -40,8 +42,11 @@ double force_scale(const System& system, const Load& load, const State<double>& 
 // One march with everything that is always observed.
 struct Watched {
   Watched(const System& system, const ResponseLayout& layout, const RunPlan& plan, WorkRule rule, long steps, double dt)
-      : peaks(layout), residual(layout, residual_from(plan, steps * dt)), collapse(layout, plan.collapse_drift_ratio),
-        energy(system, rule), histories(layout, plan.histories, plan.every, steps) {}
+      : peaks(layout),
+        residual(layout, residual_from(plan, steps * dt)),
+        collapse(layout, plan.collapse_drift_ratio),
+        energy(system, rule),
+        histories(layout, plan.histories, plan.every, steps) {}
 
   static double residual_from(const RunPlan& plan, double end) {
     return end - std::min(plan.fundamental_period, plan.tail) - 1e-9 * end;
@@ -78,11 +83,15 @@ RunStatus status_of(MarchEnding ending) {
 std::string status_note(const Watched& watched, const RunPlan& plan) {
   const double t = watched.end.time;
   switch (watched.end.ending) {
-    case MarchEnding::done: return "";
+    case MarchEnding::done:
+      return "";
     case MarchEnding::stopped:
-      return fmt::format("collapsed at {:.4g} s: story {} passed the drift ratio {:g}", t, watched.collapse.story(), plan.collapse_drift_ratio);
-    case MarchEnding::not_converged: return fmt::format("not converged at {:.4g} s, with the step halved {} times", t, plan.halvings);
-    case MarchEnding::not_finite: return fmt::format("not converged at {:.4g} s: numbers became infinite", t);
+      return fmt::format("collapsed at {:.4g} s: story {} passed the drift ratio {:g}", t, watched.collapse.story(),
+                         plan.collapse_drift_ratio);
+    case MarchEnding::not_converged:
+      return fmt::format("not converged at {:.4g} s, with the step halved {} times", t, plan.halvings);
+    case MarchEnding::not_finite:
+      return fmt::format("not converged at {:.4g} s: numbers became infinite", t);
   }
   return "";
 }
@@ -120,20 +129,23 @@ void add_peak_errors(const Watched& watched, const Watched& check, double multip
       peak.step_error = multiple * change + watched.peaks.between_states()[first + i];
     }
   }
-  peaks[layout.offset(*find_quantity("base_shear"))].step_error = peaks[layout.offset(*find_quantity("story_shear"))].step_error;
+  peaks[layout.offset(*find_quantity("base_shear"))].step_error =
+      peaks[layout.offset(*find_quantity("story_shear"))].step_error;
 }
 
-void add_errors(const Watched& watched, const Watched& check, double multiple, const ResponseLayout& layout, RunResult& result) {
+void add_errors(const Watched& watched, const Watched& check, double multiple, const ResponseLayout& layout,
+                RunResult& result) {
   if (status_of(check.end.ending) != result.status) {
     for (Peak& peak : result.peaks) peak.step_error = infinite;
     std::fill(result.residual_error.begin(), result.residual_error.end(), infinite);
-    result.status_note += fmt::format("{}the check at half the step ended otherwise: {}", result.status_note.empty() ? "" : "; ",
-                                      status_name(status_of(check.end.ending)));
+    result.status_note += fmt::format("{}the check at half the step ended otherwise: {}",
+                                      result.status_note.empty() ? "" : "; ", status_name(status_of(check.end.ending)));
     return;
   }
   add_peak_errors(watched, check, multiple, layout, result.peaks);
   const std::vector<double> finer = check.residual.drift();
-  for (std::size_t i = 0; i < finer.size(); ++i) result.residual_error[i] = multiple * std::abs(result.residual_drift[i] - finer[i]);
+  for (std::size_t i = 0; i < finer.size(); ++i)
+    result.residual_error[i] = multiple * std::abs(result.residual_drift[i] - finer[i]);
 }
 
 RunResult collected(const Watched& watched, const RunPlan& plan) {

@@ -13,7 +13,9 @@ class ExactStepper : public Stepper {
       : n_(system.freedoms),
         step_(linear_propagator(Eigen::Map<const Eigen::VectorXd>(system.mass.data(), n_), dense_damping(system),
                                 dense(system.stiffness), dt)),
-        before_(2 * n_), after_(2 * n_), ramp_(n_) {}
+        before_(2 * n_),
+        after_(2 * n_),
+        ramp_(n_) {}
 
   StepResult step(State<double>& state, const LoadStep& load) noexcept override {
     const Eigen::Map<const Eigen::VectorXd> p0(load.before, n_), p1(load.after, n_);

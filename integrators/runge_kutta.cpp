@@ -21,9 +21,14 @@ using Vector = std::vector<double>;  // [u; v], [2 freedoms]
 class Equation {
  public:
   explicit Equation(const System& system)
-      : system_(system), internal_(system.freedoms), tangent_(system.elements), trial_(state_at_rest<double>(system).memory) {}
+      : system_(system),
+        internal_(system.freedoms),
+        tangent_(system.elements),
+        trial_(state_at_rest<double>(system).memory) {}
 
-  void begin(const Memories<double>& committed, const LoadStep& load) noexcept { committed_ = &committed, load_ = &load; }
+  void begin(const Memories<double>& committed, const LoadStep& load) noexcept {
+    committed_ = &committed, load_ = &load;
+  }
 
   void operator()(const Vector& y, Vector& rate, double t) noexcept {
     const int n = system_.freedoms;
@@ -94,7 +99,12 @@ template <class Controlled>
 class AdaptiveStepper : public Stepper {
  public:
   AdaptiveStepper(const System& system, double rtol, double atol)
-      : system_(system), rtol_(rtol), atol_(atol), equation_(system), from_(2 * system.freedoms), to_(from_),
+      : system_(system),
+        rtol_(rtol),
+        atol_(atol),
+        equation_(system),
+        from_(2 * system.freedoms),
+        to_(from_),
         controlled_(typename Controlled::error_checker_type(atol, rtol)) {}
 
   // One accepted step of its own, at most load.dt long.
@@ -163,12 +173,15 @@ std::string RungeKutta::description() const {
 
 std::unique_ptr<Stepper> RungeKutta::prepare(const System& system, const StepSettings&) const {
   if (pair_ == Pair::dormand_prince)
-    return std::make_unique<AdaptiveStepper<odeint::controlled_runge_kutta<odeint::runge_kutta_dopri5<Vector>>>>(system, rtol_, atol_);
-  return std::make_unique<AdaptiveStepper<odeint::controlled_runge_kutta<odeint::runge_kutta_fehlberg78<Vector>>>>(system, rtol_, atol_);
+    return std::make_unique<AdaptiveStepper<odeint::controlled_runge_kutta<odeint::runge_kutta_dopri5<Vector>>>>(
+        system, rtol_, atol_);
+  return std::make_unique<AdaptiveStepper<odeint::controlled_runge_kutta<odeint::runge_kutta_fehlberg78<Vector>>>>(
+      system, rtol_, atol_);
 }
 
 std::shared_ptr<const Scheme> RungeKutta::refined() const {
-  // Kinks keep the error from falling in step with the tolerance, so the check is made much tighter; never below rounding.
+  // Kinks keep the error from falling in step with the tolerance, so the check is made much tighter; never below
+  // rounding.
   return std::make_shared<RungeKutta>(pair_, std::max(rtol_ / 100, 1e-14), std::max(atol_ / 100, 1e-16));
 }
 

@@ -1,13 +1,13 @@
 // Adaptive explicit Runge-Kutta, by Boost.Odeint: Dormand-Prince 5(4) and Fehlberg 7(8).
 // Parameters: rtol, atol. A step is accepted when every displacement (m) and velocity (m/s) has an error estimate below
 // atol + rtol (|x| + h |x'|).
-// Laws answer from the memory committed at the last accepted step. A reversal inside a step would be missed by that, so a
-// step in which a missed reversal changes some element's force noticeably (by more than the tolerance times its
+// Laws answer from the memory committed at the last accepted step. A reversal inside a step would be missed by that, so
+// a step in which a missed reversal changes some element's force noticeably (by more than the tolerance times its
 // stiffness) is cut at the reversal.
-// Order: 5 and 8 (local extrapolation) while laws and loads are smooth; 4 with the Bouc-Wen law, itself integrated along
-// the deformation by a fourth-order rule. Stability: by the error control.
-// Sources: Dormand & Prince, J. Comp. Appl. Math. 6 (1980) 19; Fehlberg, NASA TR R-287 (1968); Ahnert & Mulansky, "Odeint",
-// AIP Conf. Proc. 1389 (2011) 1586. Order as measured: tests/integrators/order_test.cpp.
+// Order: 5 and 8 (local extrapolation) while laws and loads are smooth; 4 with the Bouc-Wen law, itself integrated
+// along the deformation by a fourth-order rule. Stability: by the error control. Sources: Dormand & Prince, J. Comp.
+// Appl. Math. 6 (1980) 19; Fehlberg, NASA TR R-287 (1968); Ahnert & Mulansky, "Odeint", AIP Conf. Proc. 1389 (2011)
+// 1586. Order as measured: tests/integrators/order_test.cpp.
 #pragma once
 
 #include <array>

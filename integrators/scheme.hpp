@@ -1,6 +1,6 @@
-// The seam of the integration schemes. A Scheme is a small immutable set of parameters with traits; prepared for a system
-// and a step it gives a Stepper, which owns the workspace and takes states forward. Schemes see the system's residual and
-// its effective solve, never the kind of building.
+// The seam of the integration schemes. A Scheme is a small immutable set of parameters with traits; prepared for a
+// system and a step it gives a Stepper, which owns the workspace and takes states forward. Schemes see the system's
+// residual and its effective solve, never the kind of building.
 #pragma once
 
 #include <limits>
@@ -12,12 +12,12 @@
 namespace pilotis {
 
 struct Traits {
-  int order = 2;               // of displacement and velocity for smooth loads and laws; 0: exact
+  int order = 2;  // of displacement and velocity for smooth loads and laws; 0: exact
   bool implicit = true;
-  bool adaptive = false;       // chooses its own steps inside the interval it is asked for
-  bool linear_only = false;    // refuses elements that are not linear
+  bool adaptive = false;     // chooses its own steps inside the interval it is asked for
+  bool linear_only = false;  // refuses elements that are not linear
   double stability_limit = std::numeric_limits<double>::infinity();  // largest omega dt; infinite: unconditional
-  double spectral_radius = 1;  // at infinite omega dt; 1: no numerical damping there
+  double spectral_radius = 1;      // at infinite omega dt; 1: no numerical damping there
   double accurate_omega_dt = 0.1;  // rad, where a mode's period and amplitude per cycle err by about 0.2 %
 };
 
@@ -38,15 +38,15 @@ struct StepResult {
 class Stepper {
  public:
   virtual ~Stepper() = default;
-  // Takes u, v, a and the memories of `state` over the step (its clock is the loop's business). Unless done, the state is
-  // left as it was. Does not allocate or throw; may leave non-finite numbers, which the loop checks for.
+  // Takes u, v, a and the memories of `state` over the step (its clock is the loop's business). Unless done, the state
+  // is left as it was. Does not allocate or throw; may leave non-finite numbers, which the loop checks for.
   virtual StepResult step(State<double>& state, const LoadStep& load) noexcept = 0;
 };
 
 // How a stepper is to be prepared.
 struct StepSettings {
-  double dt = 0;           // s, the whole step; halved ones may be asked for too, unless the scheme is exact
-  double tolerance = 0;    // N, largest out-of-balance force of an implicit step
+  double dt = 0;         // s, the whole step; halved ones may be asked for too, unless the scheme is exact
+  double tolerance = 0;  // N, largest out-of-balance force of an implicit step
 };
 
 class Scheme {
@@ -57,8 +57,8 @@ class Scheme {
   virtual std::string description() const = 0;
   // Throws Error (input) when the scheme cannot march this system, saying which element or property stands against it.
   virtual std::unique_ptr<Stepper> prepare(const System& system, const StepSettings& settings) const = 0;
-  // The same scheme with tolerances a hundred times tighter, for error checks of adaptive schemes; null for the others, whose
-  // check halves the step alone.
+  // The same scheme with tolerances a hundred times tighter, for error checks of adaptive schemes; null for the others,
+  // whose check halves the step alone.
   virtual std::shared_ptr<const Scheme> refined() const { return nullptr; }
 };
 

@@ -12,9 +12,9 @@ class PeakWatch : public Observer {
   bool see(const Instant& instant) noexcept override;
   const std::vector<Peak>& peaks() const { return peaks_; }  // flat, ResponseLayout order; step errors not set
 
-  // How far the true extreme may lie above the state kept: at most half a step away from it, hence curvature h^2 / 8 with
-  // the curvature of the parabola through that state and its two neighbors. SI, >= 0, ResponseLayout order; 0 where the
-  // peak is the first or the last state seen.
+  // How far the true extreme may lie above the state kept: at most half a step away from it, hence curvature h^2 / 8
+  // with the curvature of the parabola through that state and its two neighbors. SI, >= 0, ResponseLayout order; 0
+  // where the peak is the first or the last state seen.
   const std::vector<double>& between_states() const { return between_; }
 
  private:

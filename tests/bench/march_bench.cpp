@@ -1,5 +1,5 @@
-// The march of 20 stories under twice El Centro by every scheme, in story-steps per second: yielding where the scheme takes
-// it, linear where it does not. Each is checked against a tight march before it is timed.
+// The march of 20 stories under twice El Centro by every scheme, in story-steps per second: yielding where the scheme
+// takes it, linear where it does not. Each is checked against a tight march before it is timed.
 #include <benchmark/benchmark.h>
 
 #include <cmath>
@@ -21,7 +21,9 @@ constexpr int stories = 20;
 
 struct Building {
   explicit Building(bool yields)
-      : system(assemble(test::twenty_stories(yields))), record(test::el_centro(standard_gravity)), load(system, &record, 2, {}) {}
+      : system(assemble(test::twenty_stories(yields))),
+        record(test::el_centro(standard_gravity)),
+        load(system, &record, 2, {}) {}
   System system;
   Accelerogram record;
   Load load;
@@ -52,7 +54,8 @@ Outcome march_once(const Building& building, Stepper& stepper, double dt, Counte
   return out;
 }
 
-std::unique_ptr<Stepper> prepared(const Building& building, const char* name, const std::vector<double>& values, double dt) {
+std::unique_ptr<Stepper> prepared(const Building& building, const char* name, const std::vector<double>& values,
+                                  double dt) {
   return make_scheme(name, values, "bench")->prepare(building.system, {dt, 1e-9 * building.load.largest()});
 }
 
@@ -66,17 +69,20 @@ const std::vector<double>& tight_peaks(const Building& building, bool yields) {
 }
 
 // One scheme at a step that leaves its peaks within `allowed` of the tight ones.
-void march_bench(benchmark::State& bench, const char* name, std::vector<double> values, double dt, bool yields, double allowed) {
+void march_bench(benchmark::State& bench, const char* name, std::vector<double> values, double dt, bool yields,
+                 double allowed) {
   const Building building(yields);
   if (building.record.samples.empty()) return bench.SkipWithError("the record is not there");
   const auto stepper = prepared(building, name, values, dt);
   Counter counter;
   const Outcome once = march_once(building, *stepper, dt, counter);
   for (int i = 0; i < stories; ++i)
-    if (!(std::abs(once.peaks[i] / tight_peaks(building, yields)[i] - 1) <= allowed)) return bench.SkipWithError("wrong peaks");
+    if (!(std::abs(once.peaks[i] / tight_peaks(building, yields)[i] - 1) <= allowed))
+      return bench.SkipWithError("wrong peaks");
   counter.states = 0;
   for (auto _ : bench) benchmark::DoNotOptimize(march_once(building, *stepper, dt, counter));
-  bench.counters["story_steps"] = benchmark::Counter(static_cast<double>(counter.states) * stories, benchmark::Counter::kIsRate);
+  bench.counters["story_steps"] =
+      benchmark::Counter(static_cast<double>(counter.states) * stories, benchmark::Counter::kIsRate);
   bench.counters["steps_a_march"] = static_cast<double>(counter.states) / static_cast<double>(bench.iterations());
 }
 

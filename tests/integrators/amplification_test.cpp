@@ -30,7 +30,8 @@ struct Principal {
 Principal principal_root(const Scheme& scheme, double omega_dt) {
   Principal found{0, 0};
   for (const std::complex<double> root : amplification(scheme, omega_dt).eigenvalues())
-    if (std::arg(root) > 0 && (found.angle == 0 || std::abs(std::arg(root) - omega_dt) < std::abs(found.angle - omega_dt)))
+    if (std::arg(root) > 0 &&
+        (found.angle == 0 || std::abs(std::arg(root) - omega_dt) < std::abs(found.angle - omega_dt)))
       found = {std::arg(root), std::abs(root)};
   return found;
 }
@@ -39,7 +40,8 @@ bool marched_as_a_matrix(const Scheme& scheme) { return scheme.traits().implicit
 
 Marched free_vibration(const Scheme& scheme, double omega_dt, long steps) {
   const System system = assemble(single(1, omega_dt * omega_dt, 0));
-  return marched(system, Load(system, nullptr, 1, {}), scheme, 1, steps, {{1}, {}}, 1e-12 * std::max(1.0, omega_dt * omega_dt));
+  return marched(system, Load(system, nullptr, 1, {}), scheme, 1, steps, {{1}, {}},
+                 1e-12 * std::max(1.0, omega_dt * omega_dt));
 }
 
 // Period over the exact one, from three successive displacements of a march without decay: u2 + u0 = 2 cos(angle) u1.
@@ -61,9 +63,11 @@ TEST(AverageAcceleration, PeriodElongationWithoutDecay) {
 }
 
 // Linear acceleration is stable to dt/T = sqrt(3)/pi = 0.5513, central difference to 1/pi (Newmark 1959; closed form).
-// Just below, the amplitude stays within that of the slow beat, 1/sin of the angle left to pi; just above it grows without end.
+// Just below, the amplitude stays within that of the slow beat, 1/sin of the angle left to pi; just above it grows
+// without end.
 TEST(Stability, LimitsOfNewmark) {
-  for (const auto& [scheme, limit] : {std::pair{scheme_of("linear_acceleration"), std::sqrt(3.0) / pi}, {scheme_of("newmark", {0, 0.5}), 1 / pi}}) {
+  for (const auto& [scheme, limit] :
+       {std::pair{scheme_of("linear_acceleration"), std::sqrt(3.0) / pi}, {scheme_of("newmark", {0, 0.5}), 1 / pi}}) {
     EXPECT_NEAR(scheme->traits().stability_limit, 2 * pi * limit, 1e-12) << scheme->description();
     EXPECT_LT(largest(free_vibration(*scheme, 2 * pi * limit * 0.999, 2000).track.u), 100) << scheme->description();
     EXPECT_GT(largest(free_vibration(*scheme, 2 * pi * limit * 1.001, 2000).track.u), 1e20) << scheme->description();
@@ -76,8 +80,10 @@ TEST(Stability, LimitsOfTheCatalogue) {
   for (const auto& scheme : all_schemes()) {
     const double limit = scheme->traits().stability_limit;
     if (!marched_as_a_matrix(*scheme) || !std::isfinite(limit)) continue;
-    EXPECT_LE(amplification(*scheme, limit * 0.999).eigenvalues().cwiseAbs().maxCoeff(), 1 + 1e-9) << scheme->description();
-    EXPECT_GT(amplification(*scheme, limit * 1.001).eigenvalues().cwiseAbs().maxCoeff(), 1 + 1e-4) << scheme->description();
+    EXPECT_LE(amplification(*scheme, limit * 0.999).eigenvalues().cwiseAbs().maxCoeff(), 1 + 1e-9)
+        << scheme->description();
+    EXPECT_GT(amplification(*scheme, limit * 1.001).eigenvalues().cwiseAbs().maxCoeff(), 1 + 1e-4)
+        << scheme->description();
   }
 }
 
@@ -95,7 +101,8 @@ TEST(Stability, Unconditional) {
 TEST(SpectralRadius, AtInfiniteFrequencyAsClaimed) {
   for (const auto& scheme : all_schemes()) {
     if (!marched_as_a_matrix(*scheme)) continue;
-    const double radius = amplification(*scheme, 1e6).eigenvalues().cwiseAbs().maxCoeff(), claimed = scheme->traits().spectral_radius;
+    const double radius = amplification(*scheme, 1e6).eigenvalues().cwiseAbs().maxCoeff(),
+                 claimed = scheme->traits().spectral_radius;
     if (std::isfinite(claimed))
       EXPECT_NEAR(radius, claimed, 3e-4) << scheme->description();
     else
@@ -103,8 +110,8 @@ TEST(SpectralRadius, AtInfiniteFrequencyAsClaimed) {
   }
 }
 
-// Hilber, Hughes & Taylor 1977: (1 + alpha)/(1 - alpha); printed 0.905 at -0.05, 0.5 at -1/3. Seen in a march: a state of a
-// very high mode shrinks by that factor a step once the smaller root has died out.
+// Hilber, Hughes & Taylor 1977: (1 + alpha)/(1 - alpha); printed 0.905 at -0.05, 0.5 at -1/3. Seen in a march: a state
+// of a very high mode shrinks by that factor a step once the smaller root has died out.
 TEST(SpectralRadius, OfHhtInAMarch) {
   for (const auto& [alpha, printed] : {std::pair{-0.05, 0.905}, {-1.0 / 3, 0.5}}) {
     const auto scheme = scheme_of("hht_alpha", {alpha});
@@ -128,8 +135,10 @@ TEST(AccurateStep, PeriodAndAmplitudeWithinTwoThousandths) {
     const double omega_dt = scheme->traits().accurate_omega_dt;
     const Principal root = principal_root(*scheme, omega_dt);
     EXPECT_NEAR(omega_dt / root.angle, 1, 0.0022) << scheme->description() << " at omega dt " << omega_dt;
-    EXPECT_NEAR(std::pow(root.size, 2 * pi / root.angle), 1, 0.0022) << scheme->description() << " at omega dt " << omega_dt;
-    EXPECT_GT(std::abs(omega_dt / root.angle - 1) + std::abs(std::pow(root.size, 2 * pi / root.angle) - 1), omega_dt < 0.29 ? 0.0008 : 0)
+    EXPECT_NEAR(std::pow(root.size, 2 * pi / root.angle), 1, 0.0022)
+        << scheme->description() << " at omega dt " << omega_dt;
+    EXPECT_GT(std::abs(omega_dt / root.angle - 1) + std::abs(std::pow(root.size, 2 * pi / root.angle) - 1),
+              omega_dt < 0.29 ? 0.0008 : 0)
         << scheme->description() << ": the step could be longer";
   }
 }

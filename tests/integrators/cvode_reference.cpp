@@ -161,7 +161,12 @@ class Solver {
 std::vector<double> cvode_peak_drifts(const Stick& stick, const Accelerogram& record, double factor, double end) {
   const auto& damping = std::get<RayleighByFactors>(stick.damping);
   const int n = static_cast<int>(stick.stories.size());
-  Problem problem{stick, n, damping.mass_factor, damping.stiffness_factor, std::vector<Slider>(n, Slider::sticks), std::vector<double>(n, 0.0)};
+  Problem problem{stick,
+                  n,
+                  damping.mass_factor,
+                  damping.stiffness_factor,
+                  std::vector<Slider>(n, Slider::sticks),
+                  std::vector<double>(n, 0.0)};
   Solver solver(problem);
   // The record begins one step before its first sample, at rest, and comes to rest one step after the last.
   const long lead = std::lround(record.first_sample_at / record.step), count = static_cast<long>(record.samples.size());

@@ -21,7 +21,8 @@ TEST(Failure, CollapseNamesStoryAndTime) {
   stick.stories[1].spring = Linear{5e7};
   const System system = assemble(stick);
   const Load load(system, nullptr, 1, {{2, {0, 20}, {6e5, 6e5}}});
-  for (const auto& scheme : {scheme_of("average_acceleration"), scheme_of("hht_alpha", {-0.05}), scheme_of("dormand_prince", {1e-6, 1e-9})}) {
+  for (const auto& scheme : {scheme_of("average_acceleration"), scheme_of("hht_alpha", {-0.05}),
+                             scheme_of("dormand_prince", {1e-6, 1e-9})}) {
     const RunResult result = run_once(system, load, plan_of(scheme, 0.01, 20));
     EXPECT_EQ(result.status, RunStatus::collapsed) << scheme->description();
     EXPECT_NE(result.status_note.find("story 1 passed the drift ratio 0.1"), std::string::npos) << result.status_note;
@@ -34,8 +35,9 @@ TEST(Failure, CollapseNamesStoryAndTime) {
   }
 }
 
-// Elastoplastic, T = 0.02 s in steps of 0.02 s, and moving fast: Newton starts on one plateau of the spring, lands on the
-// other, and goes to and fro for ever, f_y beta dt^2 / m being larger than v dt. At half the step it lands between them.
+// Elastoplastic, T = 0.02 s in steps of 0.02 s, and moving fast: Newton starts on one plateau of the spring, lands on
+// the other, and goes to and fro for ever, f_y beta dt^2 / m being larger than v dt. At half the step it lands between
+// them.
 struct ToAndFro {
   System system = assemble(stick_of(1, 1e3, 3, Bilinear{1e8, 1e5, 0}));
   Load load{system, nullptr, 1, {}};
@@ -72,7 +74,8 @@ TEST(Failure, ALoadThatIsNotFinite) {
         const System& which = scheme->traits().linear_only ? linear : system;
         const Load load(which, nullptr, 1, {{floor, {0, 0.05, 0.06, 1}, {0, 0, bad, bad}}});
         const Marched run = marched(which, load, *scheme, 0.001, 100);
-        EXPECT_EQ(run.end.ending, MarchEnding::not_finite) << scheme->description() << ", floor " << floor << ", " << bad;
+        EXPECT_EQ(run.end.ending, MarchEnding::not_finite)
+            << scheme->description() << ", floor " << floor << ", " << bad;
         EXPECT_LT(run.end.time, 0.0605);
       }
 }
@@ -116,7 +119,10 @@ TEST(Refusal, ModalNeedsClassicalDamping) {
   const System system = assemble(stick);
   const std::string said = message([&] { scheme_of("modal", {0})->prepare(system, {0.01, 1e-6}); });
   EXPECT_NE(said.find("dashpots"), std::string::npos) << said;
-  EXPECT_NE(message([&] { scheme_of("modal", {4})->prepare(assemble(stick_of(3, 1e5, 3, Linear{5e7})), {0.01, 1e-6}); }).find("3 modes"), std::string::npos);
+  EXPECT_NE(message([&] {
+              scheme_of("modal", {4})->prepare(assemble(stick_of(3, 1e5, 3, Linear{5e7})), {0.01, 1e-6});
+            }).find("3 modes"),
+            std::string::npos);
 }
 
 TEST(Refusal, UnknownNamesAndValuesOutOfRange) {
@@ -145,7 +151,8 @@ TEST(Step, OneThatDoesNotDivideTheRecordsIsNoted) {
   EXPECT_NE(check_step(traits, needs, 0.02, "").why.find("rough"), std::string::npos);
 }
 
-// For any record: the step divides the record's, resolves what it must, is stable, is not needlessly small, and says why.
+// For any record: the step divides the record's, resolves what it must, is stable, is not needlessly small, and says
+// why.
 TEST(Step, AutoDividesTheRecordsStepAndSaysWhy) {
   std::mt19937 random(3);
   std::uniform_real_distribution<double> uniform(0, 1);
@@ -168,8 +175,10 @@ TEST(Step, AutoDividesTheRecordsStepAndSaysWhy) {
       EXPECT_NE(choice.why.find("the record's"), std::string::npos) << choice.why;
       EXPECT_NE(choice.why.find(" s"), std::string::npos) << choice.why;
       if (parts > 1.5) {
-        EXPECT_TRUE(choice.why.find("modes 1-") != std::string::npos || choice.why.find("yielding") != std::string::npos ||
-                    choice.why.find("stability") != std::string::npos) << choice.why;
+        EXPECT_TRUE(choice.why.find("modes 1-") != std::string::npos ||
+                    choice.why.find("yielding") != std::string::npos ||
+                    choice.why.find("stability") != std::string::npos)
+            << choice.why;
       }
     }
   }

@@ -1,6 +1,6 @@
-// The order of every scheme, measured from both sides. From the differences of marches at dt, dt/2, dt/4, ... over the times of
-// the coarsest (over all of them, so that no zero crossing of an error is taken for convergence),
-// order = log2(|U(dt) - U(dt/2)| / |U(dt/2) - U(dt/4)|): no reference needed, and the sequence shows whether it has settled.
+// The order of every scheme, measured from both sides. From the differences of marches at dt, dt/2, dt/4, ... over the
+// times of the coarsest (over all of them, so that no zero crossing of an error is taken for convergence), order =
+// log2(|U(dt) - U(dt/2)| / |U(dt/2) - U(dt/4)|): no reference needed, and the sequence shows whether it has settled.
 #include <fmt/format.h>
 #include <fmt/ranges.h>
 
@@ -23,17 +23,21 @@ struct Case {
 
 std::vector<Case> cases() {
   const Stick linear = stick_of(3, 1e5, 3, Linear{5e7});
-  // |z| + z = 0 or 2 z: dz/dx = 1 - z while the drift grows; the header says: integrated along d by a fourth-order rule.
-  const Stick smooth = stick_of(3, 1e5, 3, BoucWen{5e7, 5e5, 0.1, 1, 0.5, 0.5, 1});
-  std::vector<Case> list{{"linear, undamped", linear, 1e9, 1.2, 320}, {"linear, damped", linear, 1e9, 1.2, 320},
-                         {"Bouc-Wen, undamped", smooth, 4, 0.12, 32}, {"Bouc-Wen, damped", smooth, 4, 0.12, 32}};
+  // |z| + z = 0 or 2 z: dz/dx = 1 - z while the drift grows; the header says: integrated along d by a fourth-order
+  // rule.
+  const Stick smooth = stick_of(3, 1e5, 3, smooth_law(5e7, 5e5, 0.1, 1));
+  std::vector<Case> list{{"linear, undamped", linear, 1e9, 1.2, 320},
+                         {"linear, damped", linear, 1e9, 1.2, 320},
+                         {"Bouc-Wen, undamped", smooth, 4, 0.12, 32},
+                         {"Bouc-Wen, damped", smooth, 4, 0.12, 32}};
   for (Case& one : list)
-    if (std::string(one.name).find(", damped") != std::string::npos) one.stick.damping = RayleighByModes{0.05, 0.05, 1, 2};
+    if (std::string(one.name).find(", damped") != std::string::npos)
+      one.stick.damping = RayleighByModes{0.05, 0.05, 1, 2};
   return list;
 }
 
-// A pulse on the roof, smooth at the steps of the smallest march, or a ramp: linear in time, because loads between steps
-// are linear by contract and a scheme of higher order would see only that.
+// A pulse on the roof, smooth at the steps of the smallest march, or a ramp: linear in time, because loads between
+// steps are linear by contract and a scheme of higher order would see only that.
 Load push(const System& system, bool ramp, double window, double sampling) {
   FloorForce force{3, {}, {}};
   const long points = ramp ? 1 : std::lround(window / sampling);
@@ -47,7 +51,8 @@ Load push(const System& system, bool ramp, double window, double sampling) {
 
 using Values = std::vector<std::vector<double>>;  // [time][freedom]
 
-// Root of the summed squares of a - b at the times of a march with `steps` steps; every a.size() / steps-th of a, b likewise.
+// Root of the summed squares of a - b at the times of a march with `steps` steps; every a.size() / steps-th of a, b
+// likewise.
 double distance(const Values& a, const Values& b, long steps) {
   double sum = 0;
   const std::size_t every_a = (a.size() - 1) / steps, every_b = (b.size() - 1) / steps;
@@ -59,7 +64,7 @@ double distance(const Values& a, const Values& b, long steps) {
 double distance(const std::vector<double>& a, const std::vector<double>& b) { return distance({a, a}, {b, b}, 1); }
 
 struct Differences {
-  std::vector<double> u, v;              // between successive halvings
+  std::vector<double> u, v;               // between successive halvings
   double rounding_u = 0, rounding_v = 0;  // below this they say nothing
 };
 
@@ -72,10 +77,12 @@ Differences differences(const Case& one, const Scheme& scheme, long steps) {
   Track before;
   for (int k = 0; k <= halvings; ++k) {
     const long n = steps << k;
-    const Marched run = marched(system, load, scheme, one.window / static_cast<double>(n), n, {{}, {0.1, 0.2, 0.3}}, 1e-8);
+    const Marched run =
+        marched(system, load, scheme, one.window / static_cast<double>(n), n, {{}, {0.1, 0.2, 0.3}}, 1e-8);
     EXPECT_EQ(run.end.ending, MarchEnding::done);
     EXPECT_EQ(run.track.seen, n + 1) << "a step was not taken whole";
-    for (const auto& v : run.track.v) EXPECT_TRUE(!one.yields() || (v[0] > 0 && v[1] > v[0] && v[2] > v[1])) << "it turned round: not smooth";
+    for (const auto& v : run.track.v)
+      EXPECT_TRUE(!one.yields() || (v[0] > 0 && v[1] > v[0] && v[2] > v[1])) << "it turned round: not smooth";
     if (k > 0) {
       out.u.push_back(distance(run.track.u, before.u, steps));
       out.v.push_back(distance(run.track.v, before.v, steps));
@@ -112,9 +119,13 @@ std::shared_ptr<const Scheme> as_measured(const Method& method, const std::vecto
 void expect_order(const Case& one, const Scheme& scheme) {
   const Traits traits = scheme.traits();
   const double expected = std::min<double>(traits.order, one.law_order);
-  const Differences found = differences(one, scheme, traits.order > 5 ? one.steps / 12 : traits.order > 2 ? one.steps / 3 : one.steps);
-  const std::string sequence = fmt::format("{} on {}: orders of u {:.3f}, of v {:.3f}; differences {:.2e}", scheme.description(), one.name,
-                                           fmt::join(orders(found.u), " "), fmt::join(orders(found.v), " "), fmt::join(found.u, " "));
+  const Differences found = differences(one, scheme,
+                                        traits.order > 5   ? one.steps / 12
+                                        : traits.order > 2 ? one.steps / 3
+                                                           : one.steps);
+  const std::string sequence =
+      fmt::format("{} on {}: orders of u {:.3f}, of v {:.3f}; differences {:.2e}", scheme.description(), one.name,
+                  fmt::join(orders(found.u), " "), fmt::join(orders(found.v), " "), fmt::join(found.u, " "));
   EXPECT_NEAR(settled(found.u, found.rounding_u), expected, 0.15) << sequence;
   EXPECT_NEAR(settled(found.v, found.rounding_v), expected, 0.15) << sequence;
 }
@@ -133,7 +144,8 @@ void expect_exact(const Case& one, const Scheme& scheme) {
 TEST(Order, OfEverySchemeInTheCatalogue) {
   for (const Method& method : scheme_catalogue()) {
     const auto settings = scheme_settings().find(method.name);
-    ASSERT_NE(settings, scheme_settings().end()) << "no settings for " << method.name << " in tests/integrators/support.hpp";
+    ASSERT_NE(settings, scheme_settings().end())
+        << "no settings for " << method.name << " in tests/integrators/support.hpp";
     for (const std::vector<double>& values : settings->second)
       for (const Case& one : cases()) {
         const auto scheme = as_measured(method, values);
@@ -143,7 +155,8 @@ TEST(Order, OfEverySchemeInTheCatalogue) {
   }
 }
 
-// Adaptive schemes as used: the error at the end falls with the tolerance, one power of ten for each of its own, within two.
+// Adaptive schemes as used: the error at the end falls with the tolerance, one power of ten for each of its own, within
+// two.
 TEST(Order, ErrorFollowsTheTolerance) {
   const Case one = cases()[1];
   const System system = assemble(one.stick);
@@ -152,7 +165,8 @@ TEST(Order, ErrorFollowsTheTolerance) {
   const Marched exact = marched(system, load, *scheme_of("piecewise_exact"), window, 1, {{}, {0.1, 0.2, 0.3}});
   for (const char* name : {"dormand_prince", "fehlberg"})
     for (double rtol : {1e-4, 1e-6, 1e-8, 1e-10}) {
-      const Marched run = marched(system, load, *scheme_of(name, {rtol, rtol / 1000}), window, 1, {{}, {0.1, 0.2, 0.3}});
+      const Marched run =
+          marched(system, load, *scheme_of(name, {rtol, rtol / 1000}), window, 1, {{}, {0.1, 0.2, 0.3}});
       const double size = std::hypot(run.state.v[0], run.state.v[1], run.state.v[2]);
       EXPECT_LT(distance(run.state.v, exact.state.v), 10 * rtol * size) << name << " at " << rtol;
       EXPECT_LT(distance(run.state.u, exact.state.u), 10 * rtol * size) << name << " at " << rtol;

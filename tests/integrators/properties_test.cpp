@@ -1,4 +1,6 @@
 // What must hold for any building and any motion.
+#include <gtest/gtest.h>
+// after gtest, which it needs
 #include <rapidcheck/gtest.h>
 
 #include "integrators/one_run.hpp"
@@ -14,40 +16,47 @@ rc::Gen<double> between(double least, double most) {
 
 Accelerogram motion() {
   Accelerogram record{0.02, 0, {}};
-  for (int value : *rc::gen::container<std::vector<int>>(150, rc::gen::inRange(-300, 301))) record.samples.push_back(0.02 * value);
+  for (int value : *rc::gen::container<std::vector<int>>(150, rc::gen::inRange(-300, 301)))
+    record.samples.push_back(0.02 * value);
   return record;
 }
 
 FloorForce push(int stories) {
-  return {*rc::gen::inRange(1, stories + 1), {0, 0.5, 1.5, 3}, {*between(-2e5, 2e5), *between(-2e5, 2e5), *between(-2e5, 2e5), 0}};
+  return {*rc::gen::inRange(1, stories + 1),
+          {0, 0.5, 1.5, 3},
+          {*between(-2e5, 2e5), *between(-2e5, 2e5), *between(-2e5, 2e5), 0}};
 }
 
 Stick stick(bool yields) {
   const int stories = *rc::gen::inRange(1, 7);
   const double k = *between(2e7, 1e8), yield = *between(2e5, 6e5), r = *between(0, 0.2);
   const bool smooth = *rc::gen::arbitrary<bool>();
-  const Law law = !yields ? Law(Linear{k}) : smooth ? Law(BoucWen{k, yield, r, 1, 0.5, 0.5, 1}) : Law(Bilinear{k, yield, r});
+  const Law law = !yields ? Law(Linear{k}) : smooth ? smooth_law(k, yield, r, 1) : Law(Bilinear{k, yield, r});
   Stick made = stick_of(stories, *between(5e4, 2e5), 3, law);
   made.damping = RayleighByFactors{*between(0, 0.5), *between(0, 0.004)};
   return made;
 }
 
-RunResult run(const Stick& stick, const Scheme& scheme, const Accelerogram& record, double factor, std::vector<FloorForce> forces) {
+RunResult run(const Stick& stick, const Scheme& scheme, const Accelerogram& record, double factor,
+              std::vector<FloorForce> forces) {
   const System system = assemble(stick);
   RunPlan plan;
   plan.scheme = std::shared_ptr<const Scheme>(&scheme, [](const Scheme*) {});
-  plan.step = 0.01, plan.duration = 4, plan.fundamental_period = 0.5, plan.error_check = false, plan.collapse_drift_ratio = 1e6;
+  plan.step = 0.01, plan.duration = 4, plan.fundamental_period = 0.5, plan.error_check = false,
+  plan.collapse_drift_ratio = 1e6;
   plan.histories = {find_quantity("drift"), find_quantity("story_shear"), find_quantity("floor_acceleration")};
   return run_once(system, Load(system, &record, factor, forces), plan);
 }
 
 // b = factor a, history by history, to `tolerance` of the largest value.
-void require_proportional(const RunResult& a, const RunResult& b, const std::vector<double>& factors, double tolerance) {
+void require_proportional(const RunResult& a, const RunResult& b, const std::vector<double>& factors,
+                          double tolerance) {
   for (std::size_t h = 0; h < a.histories.size(); ++h) {
     double size = 0;
     for (double value : a.histories[h].values) size = std::max(size, std::abs(value));
     for (std::size_t i = 0; i < a.histories[h].values.size(); ++i)
-      RC_ASSERT(std::abs(b.histories[h].values[i] - factors[h] * a.histories[h].values[i]) <= tolerance * std::abs(factors[h]) * size);
+      RC_ASSERT(std::abs(b.histories[h].values[i] - factors[h] * a.histories[h].values[i]) <=
+                tolerance * std::abs(factors[h]) * size);
   }
 }
 
@@ -56,7 +65,8 @@ std::vector<std::shared_ptr<const Scheme>> schemes_without_units(bool yields) {
   std::vector<std::shared_ptr<const Scheme>> list;
   for (const auto& scheme : all_schemes()) {
     const Traits traits = scheme->traits();
-    if (!traits.adaptive && !std::isfinite(traits.stability_limit) && !(yields && traits.linear_only)) list.push_back(scheme);
+    if (!traits.adaptive && !std::isfinite(traits.stability_limit) && !(yields && traits.linear_only))
+      list.push_back(scheme);
   }
   return list;
 }
@@ -83,7 +93,8 @@ Stick in_other_units(Stick stick, double length, double force) {
 RC_GTEST_PROP(Properties, UnitsChangeNothingButTheScale, ()) {
   const bool yields = *rc::gen::arbitrary<bool>();
   const Stick metric = stick(yields);
-  const double length = *rc::gen::element(1000.0, 1 / 0.0254, 1.0), force = *rc::gen::element(0.001, 1000.0, 1 / 4.4482216);
+  const double length = *rc::gen::element(1000.0, 1 / 0.0254, 1.0),
+               force = *rc::gen::element(0.001, 1000.0, 1 / 4.4482216);
   const auto scheme = *rc::gen::elementOf(schemes_without_units(yields));
   const Accelerogram record = motion();
   Accelerogram scaled = record;
@@ -103,7 +114,8 @@ RC_GTEST_PROP(Properties, AMirroredMotionGivesTheMirroredResponseExactly, ()) {
   const Accelerogram record = motion();
   FloorForce there = push(static_cast<int>(building.stories.size())), back = there;
   for (double& p : back.forces) p = -p;
-  require_proportional(run(building, *scheme, record, 1, {there}), run(building, *scheme, record, -1, {back}), {-1, -1, -1}, 0);
+  require_proportional(run(building, *scheme, record, 1, {there}), run(building, *scheme, record, -1, {back}),
+                       {-1, -1, -1}, 0);
 }
 
 // 1e-8: an implicit scheme's 1e-9 of the load; adaptive ones by their own tolerance.
@@ -113,7 +125,8 @@ RC_GTEST_PROP(Properties, ALinearBuildingIsProportionalToTheFactor, ()) {
   const Accelerogram record = motion();
   const double factor = *between(0.1, 10);
   const double tolerance = scheme->traits().adaptive ? 1e-3 : 1e-8;
-  require_proportional(run(building, *scheme, record, 1, {}), run(building, *scheme, record, factor, {}), {factor, factor, factor}, tolerance);
+  require_proportional(run(building, *scheme, record, 1, {}), run(building, *scheme, record, factor, {}),
+                       {factor, factor, factor}, tolerance);
 }
 
 RC_GTEST_PROP(Properties, MotionAndForceSuperposeOnALinearBuilding, ()) {
@@ -124,7 +137,8 @@ RC_GTEST_PROP(Properties, MotionAndForceSuperposeOnALinearBuilding, ()) {
   const RunResult shaken = run(building, *scheme, record, 1, {}), forced = run(building, *scheme, record, 0, {pushed});
   RunResult sum = shaken;
   for (std::size_t h = 0; h < sum.histories.size(); ++h)
-    for (std::size_t i = 0; i < sum.histories[h].values.size(); ++i) sum.histories[h].values[i] += forced.histories[h].values[i];
+    for (std::size_t i = 0; i < sum.histories[h].values.size(); ++i)
+      sum.histories[h].values[i] += forced.histories[h].values[i];
   const double tolerance = scheme->traits().adaptive ? 1e-3 : 1e-8;
   RC_PRE(std::abs(pushed.forces[0]) + std::abs(pushed.forces[1]) + std::abs(pushed.forces[2]) > 0);
   require_proportional(sum, run(building, *scheme, record, 1, {pushed}), {1, 1, 1}, tolerance);

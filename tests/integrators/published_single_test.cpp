@@ -7,8 +7,8 @@
 namespace pilotis::test {
 namespace {
 
-constexpr double gravity = 386.1;  // in/s2
-constexpr double last_digit = 0.0001;    // of the tables below
+constexpr double gravity = 386.1;       // in/s2
+constexpr double last_digit = 0.0001;   // of the tables below
 constexpr double half_a_digit = 0.005;  // of printed peaks
 
 // Half-cycle sine pulse. Chopra, Dynamics of Structures, ch. 5, worked examples (from memory; recomputed). kip, in.
@@ -55,7 +55,8 @@ TEST_F(SinePulse, LinearAcceleration) {
 // Linear interpolation of a sine sampled at 0.001 s errs by (pi 0.001 / 0.6)^2 / 8 of it: below 4e-6.
 TEST_F(SinePulse, Theory) {
   const std::vector<double> theory{0, 0.0328, 0.2332, 0.6487, 1.1605, 1.5241, 1.4814, 0.9245, 0.0593, -0.7751, -1.2718};
-  for (const auto& scheme : {scheme_of("piecewise_exact"), scheme_of("fehlberg", {1e-10, 1e-12}), scheme_of("dormand_prince", {1e-10, 1e-12})}) {
+  for (const auto& scheme : {scheme_of("piecewise_exact"), scheme_of("fehlberg", {1e-10, 1e-12}),
+                             scheme_of("dormand_prince", {1e-10, 1e-12})}) {
     const Marched run = marched(system_, pulse(0.001), *scheme, 0.001, 1000, {}, 1e-12);
     for (std::size_t i = 0; i < theory.size(); ++i)
       EXPECT_NEAR(run.track.u[100 * i][0], theory[i], last_digit) << scheme->description() << " at " << 0.1 * i << " s";
@@ -67,7 +68,8 @@ double elastic_peak(double period, double ratio, double dt) {
   const double omega = 2 * pi / period;
   const System system = assemble(single(1, omega * omega, ratio));
   const Accelerogram record = el_centro(gravity);
-  const Marched run = marched(system, Load(system, &record, 1, {}), *scheme_of("piecewise_exact"), dt, std::lround(31.5 / dt));
+  const Marched run =
+      marched(system, Load(system, &record, 1, {}), *scheme_of("piecewise_exact"), dt, std::lround(31.5 / dt));
   return largest(run.track.u);
 }
 
@@ -82,21 +84,26 @@ TEST(ElCentro, Elastic) {
 }
 
 // Chopra, ch. 7 (from memory; recomputed): T = 0.5 s, 5 %, elastoplastic, yield strength over the elastic demand.
-// Steps so small that sampling leaves nothing. Half a unit of the peak's own last digit, and as much again below the first
-// because the strengths are shares of an elastic peak printed to the same digit. The printed ductilities are quotients of the rounded peaks: 2.07 / (0.125 2.25) = 7.36.
+// Steps so small that sampling leaves nothing. Half a unit of the peak's own last digit, and as much again below the
+// first because the strengths are shares of an elastic peak printed to the same digit. The printed ductilities are
+// quotients of the rounded peaks: 2.07 / (0.125 2.25) = 7.36.
 TEST(ElCentro, Elastoplastic) {
   SKIP_WITHOUT_EL_CENTRO();
   const double omega = 2 * pi / 0.5, k = omega * omega, elastic = elastic_peak(0.5, 0.05, 0.0005);
-  const double strengths[] = {1, 0.5, 0.25, 0.125}, peaks[] = {2.25, 1.62, 1.75, 2.07}, ductilities[] = {1, 1.44, 3.11, 7.36};
+  const double strengths[] = {1, 0.5, 0.25, 0.125}, peaks[] = {2.25, 1.62, 1.75, 2.07},
+               ductilities[] = {1, 1.44, 3.11, 7.36};
   const Accelerogram record = el_centro(gravity);
   for (int i = 0; i < 4; ++i) {
     const double yield = strengths[i] * elastic;
     Stick stick = stick_of(1, 1, 1, Bilinear{k, k * yield, 0});
     stick.damping = ModalDamping{{0.05}};
     const System system = assemble(stick);
-    const Marched run = marched(system, Load(system, &record, 1, {}), *scheme_of("average_acceleration"), 0.0005, 40 * 1575);
+    const Marched run =
+        marched(system, Load(system, &record, 1, {}), *scheme_of("average_acceleration"), 0.0005, 40 * 1575);
     EXPECT_NEAR(largest(run.track.u), peaks[i], i == 0 ? half_a_digit : 2 * half_a_digit) << strengths[i];
-    EXPECT_NEAR(largest(run.track.u) / yield, ductilities[i], ductilities[i] * half_a_digit * (2 / peaks[i] + 1 / peaks[0])) << strengths[i];
+    EXPECT_NEAR(largest(run.track.u) / yield, ductilities[i],
+                ductilities[i] * half_a_digit * (2 / peaks[i] + 1 / peaks[0]))
+        << strengths[i];
   }
 }
 
@@ -104,8 +111,9 @@ TEST(ElCentro, Elastoplastic) {
 // ductility 1 / (2 (1 - F/R)). The step error that the run itself estimates is the tolerance, and must be small.
 TEST(SuddenForce, Ductility) {
   const double k = 4 * pi * pi, resistance = 10;
-  for (const auto& scheme : {scheme_of("average_acceleration"), scheme_of("linear_acceleration"), scheme_of("hht_alpha", {-0.05}),
-                             scheme_of("newmark", {0, 0.5}), scheme_of("dormand_prince", {1e-9, 1e-12}), scheme_of("fehlberg", {1e-9, 1e-12})})
+  for (const auto& scheme : {scheme_of("average_acceleration"), scheme_of("linear_acceleration"),
+                             scheme_of("hht_alpha", {-0.05}), scheme_of("newmark", {0, 0.5}),
+                             scheme_of("dormand_prince", {1e-9, 1e-12}), scheme_of("fehlberg", {1e-9, 1e-12})})
     for (const auto& [share, ductility] : {std::pair{0.5, 1.0}, {0.75, 2.0}, {0.9, 5.0}}) {
       const System system = assemble(stick_of(1, 1, 1e3, Bilinear{k, resistance, 0}));
       const Load load(system, nullptr, 1, {{1, {0, 10}, {share * resistance, share * resistance}}});
@@ -118,8 +126,8 @@ TEST(SuddenForce, Ductility) {
     }
 }
 
-// Steady amplification 1 / sqrt((1 - r^2)^2 + (2 zeta r)^2) (closed form). The transient has decayed to exp(-zeta omega t)
-// of itself; the sampled sine loses (2 pi / 200)^2 / 12 of its amplitude, and its peak at most (2 pi / 200)^2 / 8.
+// Steady amplification 1 / sqrt((1 - r^2)^2 + (2 zeta r)^2) (closed form). The transient has decayed to exp(-zeta omega
+// t) of itself; the sampled sine loses (2 pi / 200)^2 / 12 of its amplitude, and its peak at most (2 pi / 200)^2 / 8.
 TEST(Harmonic, SteadyAmplification) {
   const double zeta = 0.05, omega = 2 * pi;
   const System system = assemble(single(1, omega * omega, zeta));
@@ -131,11 +139,14 @@ TEST(Harmonic, SteadyAmplification) {
       force.times.push_back(i * dt);
       force.forces.push_back(std::sin(2 * pi * i / 200));
     }
-    const Marched run = marched(system, Load(system, nullptr, 1, {force}), *scheme_of("piecewise_exact"), dt, 200 * (cycles + 1));
+    const Marched run =
+        marched(system, Load(system, nullptr, 1, {force}), *scheme_of("piecewise_exact"), dt, 200 * (cycles + 1));
     double peak = 0;
-    for (std::size_t i = run.track.u.size() - 200; i < run.track.u.size(); ++i) peak = std::max(peak, std::abs(run.track.u[i][0]));
+    for (std::size_t i = run.track.u.size() - 200; i < run.track.u.size(); ++i)
+      peak = std::max(peak, std::abs(run.track.u[i][0]));
     const double amplification = 1 / std::hypot(1 - r * r, 2 * zeta * r);
-    const double transient = std::exp(-zeta * omega * cycles * period) * amplification * 2, sampling = std::pow(2 * pi / 200, 2) * (1.0 / 8 + 1.0 / 12);
+    const double transient = std::exp(-zeta * omega * cycles * period) * amplification * 2,
+                 sampling = std::pow(2 * pi / 200, 2) * (1.0 / 8 + 1.0 / 12);
     EXPECT_NEAR(peak * omega * omega, amplification, transient + sampling * amplification) << r;
   }
 }

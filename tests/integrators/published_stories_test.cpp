@@ -65,13 +65,14 @@ TEST(FiveStories, RecomputedPeaks) {
   }
 }
 
-// Effective masses 4.398, 0.436, 0.121, 0.0375, 0.0078 m of 5 m (Chopra, as above): five modes carry all there is; the first
-// alone misses more than four do.
+// Effective masses 4.398, 0.436, 0.121, 0.0375, 0.0078 m of 5 m (Chopra, as above): five modes carry all there is; the
+// first alone misses more than four do.
 TEST(FiveStories, FewerModes) {
   SKIP_WITHOUT_EL_CENTRO();
   const double all = five_stories(*scheme_of("modal", {0}), 0.02).base;
   EXPECT_NEAR(five_stories(*scheme_of("modal", {5}), 0.02).base, all, 1e-9 * all);
-  const double one = five_stories(*scheme_of("modal", {1}), 0.02).base, four = five_stories(*scheme_of("modal", {4}), 0.02).base;
+  const double one = five_stories(*scheme_of("modal", {1}), 0.02).base,
+               four = five_stories(*scheme_of("modal", {4}), 0.02).base;
   EXPECT_GT(std::abs(one - all), std::abs(four - all));
   EXPECT_GT(std::abs(four - all), 1e-9 * all);
 }

@@ -11,7 +11,7 @@ std::vector<std::pair<const char*, Law>> laws() {
   return {{"linear", Linear{5e7}},
           {"bilinear", Bilinear{5e7, 4e5, 0.05}},
           {"trilinear", Trilinear{5e7, 1.5e5, 0.4, 4e5, 0.02}},
-          {"bouc_wen", BoucWen{5e7, 4e5, 0.05, 1.5, 0.5, 0.5, 1}}};
+          {"bouc_wen", smooth_law(5e7, 4e5, 0.05, 1.5)}};
 }
 
 Accelerogram shaking() {
@@ -33,7 +33,8 @@ bool same_bits(const State<double>& a, const State<double>& b) {
               a.fraction == b.fraction && a.inner_step == b.inner_step;
   [&]<std::size_t... I>(std::index_sequence<I...>) {
     ((same = same && same_bits(std::get<I>(a.memory), std::get<I>(b.memory))), ...);
-  }(std::make_index_sequence<std::tuple_size_v<Memories<double>>>{});
+  }
+  (std::make_index_sequence<std::tuple_size_v<Memories<double>>>{});
   return same;
 }
 
@@ -49,9 +50,8 @@ void pour(const std::vector<T>& from, std::vector<T>& into) {
 State<double> through_plain_numbers(const System& system, const State<double>& state) {
   State<double> copy = state_at_rest<double>(system);
   pour(state.u, copy.u), pour(state.v, copy.v), pour(state.a, copy.a);
-  [&]<std::size_t... I>(std::index_sequence<I...>) {
-    (pour(std::get<I>(state.memory), std::get<I>(copy.memory)), ...);
-  }(std::make_index_sequence<std::tuple_size_v<Memories<double>>>{});
+  [&]<std::size_t... I>(std::index_sequence<I...>) { (pour(std::get<I>(state.memory), std::get<I>(copy.memory)), ...); }
+  (std::make_index_sequence<std::tuple_size_v<Memories<double>>>{});
   copy.step = state.step, copy.fraction = state.fraction, copy.inner_step = state.inner_step;
   return copy;
 }

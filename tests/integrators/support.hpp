@@ -58,6 +58,12 @@ inline std::shared_ptr<const Scheme> scheme_of(const char* name, std::vector<dou
   return make_scheme(name, values, "test");
 }
 
+// Bouc-Wen with beta = gamma = 1/2 and A = 1.
+inline Law smooth_law(double stiffness, double yield, double post_yield_ratio, double exponent) {
+  const double values[] = {stiffness, yield, post_yield_ratio, exponent, 0.5, 0.5, 1};
+  return make_law("bouc_wen", values, "test");
+}
+
 inline Stick stick_of(int stories, double mass, double height, const Law& law) {
   Stick stick;
   for (int i = 0; i < stories; ++i) stick.stories.push_back({"", height, mass, law, 0});

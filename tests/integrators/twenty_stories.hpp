@@ -9,8 +9,9 @@
 
 namespace pilotis::test {
 
-// 3.5 m and 400 t a story, stiffness and strength falling toward the roof, 3 % hardening; T1 about 2 s. `yields` false: the
-// same building with linear springs. Rayleigh damping by its factors, so that an outside solver can take C as it stands.
+// 3.5 m and 400 t a story, stiffness and strength falling toward the roof, 3 % hardening; T1 about 2 s. `yields` false:
+// the same building with linear springs. Rayleigh damping by its factors, so that an outside solver can take C as it
+// stands.
 inline Stick twenty_stories(bool yields = true) {
   Stick stick;
   for (int i = 0; i < 20; ++i) {

@@ -13,7 +13,12 @@ namespace pilotis {
 namespace {
 
 MotionSummary summary_of(const Motion& motion) {
-  return {motion.name, motion.file, motion.digest, motion.record.step, static_cast<long>(motion.record.samples.size()), peak_of(motion.record).value};
+  return {motion.name,
+          motion.file,
+          motion.digest,
+          motion.record.step,
+          static_cast<long>(motion.record.samples.size()),
+          peak_of(motion.record).value};
 }
 
 // What is the same for every run of a study.
@@ -43,10 +48,12 @@ Setting prepared(const Study& study) {
 }
 
 StepChoice step_for(const Setting& setting, const Motion* motion) {
-  const StepNeeds needs{setting.building.modes, motion != nullptr ? motion->record.step : 0.0, !setting.system.is_linear()};
+  const StepNeeds needs{setting.building.modes, motion != nullptr ? motion->record.step : 0.0,
+                        !setting.system.is_linear()};
   const Traits traits = setting.plan.scheme->traits();
-  return setting.study.march.step ? check_step(traits, needs, *setting.study.march.step, setting.plan.scheme->description())
-                                  : choose_step(traits, needs);
+  return setting.study.march.step
+             ? check_step(traits, needs, *setting.study.march.step, setting.plan.scheme->description())
+             : choose_step(traits, needs);
 }
 
 RunResult run(const Setting& setting, const Motion* motion, double factor) {

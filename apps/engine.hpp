@@ -13,8 +13,8 @@ namespace pilotis {
 using RunWatch = std::function<bool(long done, long all)>;
 
 // All motions at the first factor, then at the next; a study without motions is one run of factor 1 under "none".
-// `stopped` tells that the watch asked to stop: the runs are then not all there. Throws Error (input) when the study asks
-// for what its building or scheme cannot do; what happens inside a march is that run's status.
+// `stopped` tells that the watch asked to stop: the runs are then not all there. Throws Error (input) when the study
+// asks for what its building or scheme cannot do; what happens inside a march is that run's status.
 struct StudyRun {
   StudyResults results;
   bool stopped = false;

@@ -32,8 +32,13 @@ double total_mass(const BuildingSummary& building) {
 
 std::string modes_table(const BuildingSummary& building, const StudyUnits& units) {
   const double mass_unit = units.factor(Dimension::mass), total = total_mass(building);
-  TextTable table({{"mode"}, {"period (s)"}, {"frequency (Hz)"}, {"participation (-)"},
-                   {fmt::format("effective mass ({})", units.name(Dimension::mass))}, {"of total (%)"}, {"summed (%)"},
+  TextTable table({{"mode"},
+                   {"period (s)"},
+                   {"frequency (Hz)"},
+                   {"participation (-)"},
+                   {fmt::format("effective mass ({})", units.name(Dimension::mass))},
+                   {"of total (%)"},
+                   {"summed (%)"},
                    {"damping (%)"}});
   double sum = 0;
   for (std::size_t j = 0; j < building.modes.size(); ++j) {
@@ -61,18 +66,24 @@ std::string shapes_table(const BuildingSummary& building, int shown) {
 }
 
 void print_text(const Study& study, const BuildingSummary& building, int shapes) {
-  fmt::print("{}: modes at the initial stiffness{}\n\n{}\n", study.title, study.building.p_delta ? ", P-Delta included" : "",
-             modes_table(building, study.units));
+  fmt::print("{}: modes at the initial stiffness{}\n\n{}\n", study.title,
+             study.building.p_delta ? ", P-Delta included" : "", modes_table(building, study.units));
   fmt::print("total mass {:.5g} {}; shapes have the largest magnitude 1 and go with the participation factors\n\n{}",
              total_mass(building) / study.units.factor(Dimension::mass), study.units.name(Dimension::mass),
              shapes_table(building, shapes));
 }
 
 void print_json(const Study& study, const BuildingSummary& building) {
-  Json json{{"title", study.title}, {"p_delta", study.building.p_delta}, {"total_mass_kg", total_mass(building)}, {"modes", Json::array()}};
+  Json json{{"title", study.title},
+            {"p_delta", study.building.p_delta},
+            {"total_mass_kg", total_mass(building)},
+            {"modes", Json::array()}};
   for (const Mode& mode : building.modes)
-    json["modes"].push_back({{"period_s", mode.period}, {"participation", mode.participation}, {"effective_mass_kg", mode.effective_mass},
-                             {"damping_ratio", mode.damping_ratio}, {"shape", mode.shape}});
+    json["modes"].push_back({{"period_s", mode.period},
+                             {"participation", mode.participation},
+                             {"effective_mass_kg", mode.effective_mass},
+                             {"damping_ratio", mode.damping_ratio},
+                             {"shape", mode.shape}});
   fmt::print("{}\n", json.dump(2));
 }
 
@@ -91,7 +102,9 @@ void add_modes(CLI::App& app, int& status) {
   const auto options = std::make_shared<Options>();
   CLI::App* command = app.add_subcommand("modes", "Periods, shapes, participation and effective modal masses");
   command->add_option("study", options->study, "study file (TOML)")->required();
-  command->add_option("--shapes", options->shapes, "how many shapes to print")->capture_default_str()->check(CLI::NonNegativeNumber);
+  command->add_option("--shapes", options->shapes, "how many shapes to print")
+      ->capture_default_str()
+      ->check(CLI::NonNegativeNumber);
   command->add_flag("--json", options->json, "the same facts for a script");
   command->footer("Example: pilotis modes data-demo/study.toml");
   command->callback([options, &status] {

@@ -26,7 +26,8 @@ void Progress::show(long done, long all) {
   last_ = now;
   const double rate = done / elapsed, left = (all - done) / rate;
   if (terminal_)
-    fmt::print(stderr, "\r[{}] {}/{} runs, {:.3g} runs/s, {:.0f} s left ", bar(double(done) / all), done, all, rate, left);
+    fmt::print(stderr, "\r[{}] {}/{} runs, {:.3g} runs/s, {:.0f} s left ", bar(double(done) / all), done, all, rate,
+               left);
   else
     fmt::print(stderr, "{}/{} runs, {:.3g} runs/s, {:.0f} s left\n", done, all, rate, left);
   std::fflush(stderr);

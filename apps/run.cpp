@@ -53,7 +53,8 @@ std::filesystem::path output_of(const Options& options) {
 
 StoredStudy stored(const Study& study, StudyResults results) {
   const auto now = fmt::format("{:%Y-%m-%dT%H:%M:%SZ}", fmt::gmtime(std::time(nullptr)));
-  return {study.title, study.text, study.file.string(), PILOTIS_VERSION, now, study.units, std::move(results), study.limits};
+  return {study.title, study.text,  study.file.string(), PILOTIS_VERSION,
+          now,         study.units, std::move(results),  study.limits};
 }
 
 // What the user should know beside the result: the reader's assumptions, why each step, runs that ended early.
@@ -64,7 +65,8 @@ void print_notes(const Study& study, const StudyResults& results) {
   for (const auto& [why, runs] : choices)
     fmt::print(stderr, "step{}: {}\n", choices.size() > 1 ? fmt::format(" of {} runs", runs) : "", why);
   for (const RunResult& run : results.runs)
-    if (!run.status_note.empty()) fmt::print(stderr, "{} at factor {:g}: {}\n", run.motion, run.factor, run.status_note);
+    if (!run.status_note.empty())
+      fmt::print(stderr, "{} at factor {:g}: {}\n", run.motion, run.factor, run.status_note);
 }
 
 StudyRun marched(const Study& study, bool quiet) {
@@ -84,8 +86,10 @@ int run_to_verdict(const Options& options) {
   { const WholeFile writable(output); }  // better known before the march than after it
   StudyRun run = marched(study, options.quiet);
   if (run.stopped) {
-    fmt::print(stderr, "pilotis: stopped after {} of {} runs; nothing was written; start the same command again to run them all\n",
-               run.results.runs.size(), run_count(study));
+    fmt::print(
+        stderr,
+        "pilotis: stopped after {} of {} runs; nothing was written; start the same command again to run them all\n",
+        run.results.runs.size(), run_count(study));
     return not_completed;
   }
   if (!options.quiet) print_notes(study, run.results);
@@ -104,13 +108,16 @@ int run_to_verdict(const Options& options) {
 
 void add_run(CLI::App& app, int& status) {
   const auto options = std::make_shared<Options>();
-  CLI::App* command = app.add_subcommand("run", "March a study's building through its motions, to a result file and a verdict");
+  CLI::App* command =
+      app.add_subcommand("run", "March a study's building through its motions, to a result file and a verdict");
   command->add_option("study", options->study, "study file (TOML)")->required();
-  command->add_option("-o,--output", options->output, "result file (HDF5); the study's name with .h5 in this folder unless given");
+  command->add_option("-o,--output", options->output,
+                      "result file (HDF5); the study's name with .h5 in this folder unless given");
   command->add_flag("--json", options->json, "print JSON, in SI units");
   command->add_flag("-q,--quiet", options->quiet, "no progress and no notes on standard error");
   command->footer(
-      "Exit status: 0 every limit holds; 1 a limit is exceeded or a run collapsed; 2 the input is wrong; 3 a run was not\n"
+      "Exit status: 0 every limit holds; 1 a limit is exceeded or a run collapsed; 2 the input is wrong; 3 a run was "
+      "not\n"
       "completed; 4 something outside failed (disk, permission).\n\n"
       "Example:\n  pilotis run data-demo/study.toml -o demo.h5");
   command->callback([options, &status] { status = run_to_verdict(*options); });

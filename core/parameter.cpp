@@ -11,8 +11,7 @@ namespace pilotis {
 namespace {
 
 std::string with_unit(double value, Dimension dimension) {
-  return dimension == Dimension::none ? fmt::format("{:g}", value)
-                                      : fmt::format("{:g} {}", value, si_unit(dimension));
+  return dimension == Dimension::none ? fmt::format("{:g}", value) : fmt::format("{:g} {}", value, si_unit(dimension));
 }
 
 bool in_range(const Parameter& p, double value) {
@@ -34,8 +33,7 @@ std::string allowed_range(const Parameter& p) {
 }
 
 void require_allowed(const Parameter& p, double value, const std::string& where) {
-  if (!std::isfinite(value))
-    throw input_error(where, fmt::format("found {}", value), "a finite number is needed");
+  if (!std::isfinite(value)) throw input_error(where, fmt::format("found {}", value), "a finite number is needed");
   if (!in_range(p, value))
     throw input_error(where, fmt::format("found {}", with_unit(value, p.dimension)),
                       fmt::format("{} must be {}", p.meaning, allowed_range(p)));

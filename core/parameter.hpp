@@ -13,15 +13,15 @@
 namespace pilotis {
 
 struct Parameter {
-  std::string_view key;                     // as written in a study
-  Dimension dimension = Dimension::none;    // a bare number is in the study's unit of this dimension
-  std::string_view meaning;                 // one line, for help and errors
-  std::optional<double> otherwise = {};     // SI; the value when the key is absent; empty: the key is required
+  std::string_view key;                   // as written in a study
+  Dimension dimension = Dimension::none;  // a bare number is in the study's unit of this dimension
+  std::string_view meaning;               // one line, for help and errors
+  std::optional<double> otherwise = {};   // SI; the value when the key is absent; empty: the key is required
   double least = -std::numeric_limits<double>::infinity();  // SI
   double most = std::numeric_limits<double>::infinity();    // SI
-  bool least_allowed = true;                // false: greater than `least`
-  bool most_allowed = true;                 // false: less than `most`
-  bool whole = false;                       // true: only whole numbers
+  bool least_allowed = true;                                // false: greater than `least`
+  bool most_allowed = true;                                 // false: less than `most`
+  bool whole = false;                                       // true: only whole numbers
 };
 
 // A named method (law or scheme) with its parameters.

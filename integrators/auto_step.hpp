@@ -25,8 +25,8 @@ struct StepNeeds {
 // keeps a tenth of distance to the scheme's stability limit in the highest mode.
 StepChoice choose_step(const Traits& traits, const StepNeeds& needs);
 
-// A step the user chose, checked. Throws Error (input) when it passes the scheme's stability limit; the note says when it
-// does not divide the record's or is rough for the modes that matter.
+// A step the user chose, checked. Throws Error (input) when it passes the scheme's stability limit; the note says when
+// it does not divide the record's or is rough for the modes that matter.
 StepChoice check_step(const Traits& traits, const StepNeeds& needs, double step, const std::string& scheme);
 
 }  // namespace pilotis

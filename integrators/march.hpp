@@ -11,9 +11,9 @@
 namespace pilotis {
 
 struct MarchSpan {
-  double dt = 0;       // s; time is n dt
-  long end = 0;        // march until this many whole steps are taken
-  int halvings = 10;   // of a step that does not converge, before giving up
+  double dt = 0;      // s; time is n dt
+  long end = 0;       // march until this many whole steps are taken
+  int halvings = 10;  // of a step that does not converge, before giving up
 };
 
 enum class MarchEnding { done, stopped, not_converged, not_finite };

@@ -16,8 +16,10 @@ void require_classical(const Eigen::MatrixXd& modal) {
   const double largest = modal.cwiseAbs().maxCoeff();
   const Eigen::MatrixXd coupling = modal - Eigen::MatrixXd(modal.diagonal().asDiagonal());
   if (coupling.cwiseAbs().maxCoeff() > 1e-9 * largest)
-    throw input_error("march.scheme", "modal superposition needs damping that does not couple the modes, and the dashpots of this building do",
-                      "Rayleigh or modal damping alone without P-Delta, or the scheme piecewise_exact");
+    throw input_error(
+        "march.scheme",
+        "modal superposition needs damping that does not couple the modes, and the dashpots of this building do",
+        "Rayleigh or modal damping alone without P-Delta, or the scheme piecewise_exact");
 }
 
 class ModalStepper : public Stepper {

@@ -1,10 +1,9 @@
 // Newmark's method:
 //   u1 = u0 + dt v0 + dt^2 ((1/2 - beta) a0 + beta a1),   v1 = v0 + dt ((1 - gamma) a0 + gamma a1), equilibrium at t1.
-// Parameters: beta in [0, 1/2], gamma in [1/2, 1]. Average acceleration: 1/4, 1/2; linear acceleration: 1/6, 1/2; central
-// difference: 0, 1/2.
-// Order: 2 for gamma = 1/2, 1 above. Stability: unconditional for 2 beta >= gamma, else omega dt <= 1/sqrt(gamma/2 - beta)
-// (undamped). Dissipation: none at gamma = 1/2; about (gamma - 1/2) omega dt / 2 of critical above.
-// Period error at gamma = 1/2: (beta/2 - 1/24) (omega dt)^2. Start: a0 from equilibrium at t = 0.
+// Parameters: beta in [0, 1/2], gamma in [1/2, 1]. Average acceleration: 1/4, 1/2; linear acceleration: 1/6, 1/2;
+// central difference: 0, 1/2. Order: 2 for gamma = 1/2, 1 above. Stability: unconditional for 2 beta >= gamma, else
+// omega dt <= 1/sqrt(gamma/2 - beta) (undamped). Dissipation: none at gamma = 1/2; about (gamma - 1/2) omega dt / 2 of
+// critical above. Period error at gamma = 1/2: (beta/2 - 1/24) (omega dt)^2. Start: a0 from equilibrium at t = 0.
 // Source: Newmark, "A method of computation for structural dynamics", J. Eng. Mech. Div. ASCE 85 (1959) 67.
 // Order as measured: tests/integrators/order_test.cpp.
 #pragma once

@@ -27,7 +27,7 @@ struct Bilinear {
     R slip;  // m
   };
 
-  double slider_stiffness() const { return (1 - post_yield_ratio) * stiffness; }  // N/m
+  double slider_stiffness() const { return (1 - post_yield_ratio) * stiffness; }   // N/m
   double slider_strength() const { return (1 - post_yield_ratio) * yield_shear; }  // N
 
   static Bilinear make(std::span<const double> v) { return {v[0], v[1], v[2]}; }

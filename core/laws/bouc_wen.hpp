@@ -49,9 +49,7 @@ struct BoucWen {
 
   // Throws Error (input) when |gamma| > beta or the initial stiffness, (r + (1 - r) A) k, is not positive.
   static BoucWen make(std::span<const double> values);
-  std::array<double, 7> values() const {
-    return {stiffness, yield_shear, post_yield_ratio, exponent, beta, gamma, A};
-  }
+  std::array<double, 7> values() const { return {stiffness, yield_shear, post_yield_ratio, exponent, beta, gamma, A}; }
 };
 
 namespace bouc_wen {

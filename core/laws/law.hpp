@@ -7,8 +7,8 @@
 //     static Name make(std::span<const double> values);   // in the order of method.parameters; already range-checked
 //     std::array<double, N> values() const;                // the same numbers back, to show them
 //   };
-//   reply(law, deformation, rate, committed memory, trial memory&) -> Reply   // pure; trial is what would be remembered
-//   initial_stiffness(law)                                 // N/m, tangent of the virgin state
+//   reply(law, deformation, rate, committed memory, trial memory&) -> Reply   // pure; trial is what would be
+//   remembered initial_stiffness(law)                                 // N/m, tangent of the virgin state
 //   yield_deformation(law)                                 // m; 0 when the rule does not yield
 //   stored_energy(law, memory, deformation)                // J, recoverable
 //   dissipated_energy(law, before, after)                  // J, lost between two committed memories, >= 0

@@ -37,8 +37,7 @@ constexpr auto all_methods = methods(Laws{});
 
 Law checked(const Entry& entry, std::span<const double> values, const std::string& where) {
   for (std::size_t i = 0; i < values.size(); ++i)
-    require_allowed(entry.method.parameters[i], values[i],
-                    fmt::format("{}.{}", where, entry.method.parameters[i].key));
+    require_allowed(entry.method.parameters[i], values[i], fmt::format("{}.{}", where, entry.method.parameters[i].key));
   try {
     return entry.make(values);
   } catch (const Error& e) {
@@ -56,7 +55,8 @@ Law make_law(std::string_view name, std::span<const double> values, const std::s
     if (entry.method.name == name) return checked(entry, values, where);
     known.push_back(entry.method.name);
   }
-  throw input_error(where, fmt::format("there is no law \"{}\"", name), fmt::format("one of {}", fmt::join(known, ", ")));
+  throw input_error(where, fmt::format("there is no law \"{}\"", name),
+                    fmt::format("one of {}", fmt::join(known, ", ")));
 }
 
 std::string_view law_name(const Law& law) {

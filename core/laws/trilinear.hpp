@@ -54,10 +54,10 @@ template <class R>
 Reply<R> reply(const Trilinear& law, const R& deformation, const R&, const Trilinear::Memory<R>& committed,
                Trilinear::Memory<R>& trial) {
   const double backbone = law.post_yield_ratio * law.stiffness;
-  const Reply<R> crack = slider_reply(law.crack_stiffness(), law.crack_strength(), deformation, committed.crack_slip,
-                                      trial.crack_slip);
-  const Reply<R> yield = slider_reply(law.yield_stiffness(), law.yield_strength(), deformation, committed.yield_slip,
-                                      trial.yield_slip);
+  const Reply<R> crack =
+      slider_reply(law.crack_stiffness(), law.crack_strength(), deformation, committed.crack_slip, trial.crack_slip);
+  const Reply<R> yield =
+      slider_reply(law.yield_stiffness(), law.yield_strength(), deformation, committed.yield_slip, trial.yield_slip);
   return {backbone * deformation + crack.force + yield.force, backbone + crack.tangent + yield.tangent};
 }
 

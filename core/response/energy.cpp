@@ -64,15 +64,16 @@ void EnergyWatch::add_work(const Instant& instant) noexcept {
   for (int i = 0; i < n; ++i) load_rate += (last_v_[i] - instant.state.v[i]) * (instant.load[i] - last_load_[i]);
   const double input_slopes = last_powers_.load_slope - now.load_slope + (dt > 0 ? load_rate / dt : 0);
   now_.input += 0.5 * dt * (last_powers_.load + now.load) + dt * dt / 12 * input_slopes;
-  now_.damping += 0.5 * dt * (last_powers_.damping + now.damping) +
-                  dt * dt / 12 * (last_powers_.damping_slope - now.damping_slope);
+  now_.damping +=
+      0.5 * dt * (last_powers_.damping + now.damping) + dt * dt / 12 * (last_powers_.damping_slope - now.damping_slope);
 }
 
 void EnergyWatch::add_absorbed(const Instant& instant) noexcept {
-  for_each_group<double>(system_, last_memory_, instant.state.memory, [&](const auto& group, const auto& before, const auto& after) {
-    for (std::size_t e = 0; e < group.laws.size(); ++e)
-      now_.absorbed += dissipated_energy(group.laws[e], before[e], after[e]);
-  });
+  for_each_group<double>(system_, last_memory_, instant.state.memory,
+                         [&](const auto& group, const auto& before, const auto& after) {
+                           for (std::size_t e = 0; e < group.laws.size(); ++e)
+                             now_.absorbed += dissipated_energy(group.laws[e], before[e], after[e]);
+                         });
 }
 
 // Kinetic energy, and elastic: half u.Ku (linear springs less P-Delta) and what the laws have stored.

@@ -2,7 +2,8 @@
 
 namespace pilotis {
 
-HistoryKeeper::HistoryKeeper(const ResponseLayout& layout, const std::vector<const Quantity*>& kept, int every, long steps)
+HistoryKeeper::HistoryKeeper(const ResponseLayout& layout, const std::vector<const Quantity*>& kept, int every,
+                             long steps)
     : layout_(layout), every_(every) {
   const std::size_t rows = kept.empty() ? 0 : static_cast<std::size_t>(steps / every + 1);
   times_.reserve(rows);

@@ -11,7 +11,7 @@ class HistoryKeeper : public Observer {
   // `every` >= 1; `steps` is how many whole steps the march will take, to reserve memory once.
   HistoryKeeper(const ResponseLayout& layout, const std::vector<const Quantity*>& kept, int every, long steps);
   bool see(const Instant& instant) noexcept override;
-  const std::vector<double>& times() const { return times_; }          // s
+  const std::vector<double>& times() const { return times_; }  // s
   const std::vector<History>& histories() const { return histories_; }
 
  private:

@@ -7,8 +7,8 @@ namespace pilotis {
 
 // What there is to see at one accepted state; valid during the call only.
 struct Instant {
-  double time;                  // s
-  bool whole_step;              // false at states inside a step (a halved step, an adaptive scheme's own)
+  double time;      // s
+  bool whole_step;  // false at states inside a step (a halved step, an adaptive scheme's own)
   const State<double>& state;
   const double* load;           // p - M iota a_g, N, [freedom]
   double ground;                // a_g, m/s2

@@ -24,13 +24,14 @@ struct Quantity {
 //   floor_acceleration                      absolute
 //   drift, drift_ratio
 //   story_shear_spring                      what the story's spring carries
-//   story_shear_damping                     the damping forces C u' on the floors above the cut, summed: c_i drift' for story
+//   story_shear_damping                     the damping forces C u' on the floors above the cut, summed: c_i drift' for
+//   story
 //                                           dashpots and stiffness-proportional damping; mass-proportional and modal
 //                                           damping are carried down the same way
 //   story_shear                             the sum of both: in balance with the inertia and the floor forces above
 //   base_shear                              story_shear of story 1
-//   overturning_moment                      at the foot of each story: sum of story_shear times height of it and those above
-//   ductility                               drift / yield deformation, signed; 0 where the law does not yield
+//   overturning_moment                      at the foot of each story: sum of story_shear times height of it and those
+//   above ductility                               drift / yield deformation, signed; 0 where the law does not yield
 std::span<const Quantity> quantities();
 
 // nullptr when there is none of that name.
@@ -41,9 +42,9 @@ class ResponseLayout {
  public:
   explicit ResponseLayout(int stories);
   int stories() const { return stories_; }
-  std::size_t size() const { return size_; }                       // of the flat vector
-  std::size_t offset(const Quantity& quantity) const;              // of its first value
-  std::size_t count(const Quantity& quantity) const;               // stories, floors or 1
+  std::size_t size() const { return size_; }           // of the flat vector
+  std::size_t offset(const Quantity& quantity) const;  // of its first value
+  std::size_t count(const Quantity& quantity) const;   // stories, floors or 1
  private:
   int stories_;
   std::size_t size_;

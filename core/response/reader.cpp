@@ -16,9 +16,17 @@ ResponseReader::ResponseReader(const System& system)
       acceleration_(system.freedoms),
       scratch_(state_at_rest<double>(system).memory) {
   const auto offset = [&](const char* name) { return layout_.offset(*find_quantity(name)); };
-  at_ = {offset("floor_displacement"), offset("floor_velocity"),      offset("floor_acceleration"), offset("drift"),
-         offset("drift_ratio"),        offset("story_shear_spring"),  offset("story_shear_damping"), offset("story_shear"),
-         offset("base_shear"),         offset("overturning_moment"),  offset("ductility")};
+  at_ = {offset("floor_displacement"),
+         offset("floor_velocity"),
+         offset("floor_acceleration"),
+         offset("drift"),
+         offset("drift_ratio"),
+         offset("story_shear_spring"),
+         offset("story_shear_damping"),
+         offset("story_shear"),
+         offset("base_shear"),
+         offset("overturning_moment"),
+         offset("ductility")};
   std::vector<double> yields(system.elements);
   for_each_group(system, [&](const auto& group) {
     for (std::size_t e = 0; e < group.laws.size(); ++e) yields[group.id[e]] = yield_deformation(group.laws[e]);
@@ -37,15 +45,17 @@ void ResponseReader::read_forces(const State<double>& state, const double* load)
   add_damping_forces(system_, state.v.data(), damping_force_.data());
   internal_ = damping_force_;
   band_multiply_add(system_.stiffness, state.u.data(), internal_.data());
-  for_each_group<double>(system_, state.memory, scratch_, [&]<class L>(const ElementGroup<L>& group, const auto& memory, auto& trial) {
-    for (std::size_t e = 0; e < group.laws.size(); ++e) {
-      const double deformation = row_value(system_.rows, group.row[e], state.u.data());
-      const double rate = row_value(system_.rows, group.row[e], state.v.data());
-      const double force = reply(group.laws[e], deformation, rate, memory[e], trial[e]).force;
-      element_force_[group.id[e]] = force;
-      if constexpr (!std::is_same_v<L, Linear>) add_row_force(system_.rows, group.row[e], force, internal_.data());
-    }
-  });
+  for_each_group<double>(system_, state.memory, scratch_,
+                         [&]<class L>(const ElementGroup<L>& group, const auto& memory, auto& trial) {
+                           for (std::size_t e = 0; e < group.laws.size(); ++e) {
+                             const double deformation = row_value(system_.rows, group.row[e], state.u.data());
+                             const double rate = row_value(system_.rows, group.row[e], state.v.data());
+                             const double force = reply(group.laws[e], deformation, rate, memory[e], trial[e]).force;
+                             element_force_[group.id[e]] = force;
+                             if constexpr (!std::is_same_v<L, Linear>)
+                               add_row_force(system_.rows, group.row[e], force, internal_.data());
+                           }
+                         });
   for (int i = 0; i < system_.freedoms; ++i) acceleration_[i] = (load[i] - internal_[i]) / system_.mass[i];
 }
 

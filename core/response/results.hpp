@@ -25,18 +25,18 @@ struct History {
 };
 
 struct RunResult {
-  std::string motion;      // name; "none" without ground motion
-  double factor = 1;       // on the ground motion
-  std::string scheme;      // name with its parameters
-  double step = 0;         // s; for adaptive schemes the interval between kept states
-  std::string step_choice; // one line: why this step
+  std::string motion;       // name; "none" without ground motion
+  double factor = 1;        // on the ground motion
+  std::string scheme;       // name with its parameters
+  double step = 0;          // s; for adaptive schemes the interval between kept states
+  std::string step_choice;  // one line: why this step
   RunStatus status = RunStatus::done;
-  std::string status_note; // e.g. "collapsed at 12.3 s: story 2 passed drift ratio 0.1"; empty when done
-  double time_reached = 0; // s
-  double energy_error = 0; // largest |input - kinetic - damping - absorbed - elastic| / largest input, fraction
+  std::string status_note;  // e.g. "collapsed at 12.3 s: story 2 passed drift ratio 0.1"; empty when done
+  double time_reached = 0;  // s
+  double energy_error = 0;  // largest |input - kinetic - damping - absorbed - elastic| / largest input, fraction
   double energy_input = 0, energy_damping = 0, energy_absorbed = 0;  // J, at the end of the run
-  double wall_time = 0;    // s
-  std::vector<Peak> peaks;             // flat, ResponseLayout order
+  double wall_time = 0;                                              // s
+  std::vector<Peak> peaks;                                           // flat, ResponseLayout order
   std::vector<double> residual_drift;  // m, [story], signed; mean drift over the last fundamental period of the tail
   std::vector<double> residual_swing;  // m, [story], half the range of the drift over that period: how still it is
   std::vector<double> residual_error;  // m, [story], estimated error from the time step; NaN when not estimated
@@ -46,11 +46,11 @@ struct RunResult {
 
 // One mode of vibration of the building.
 struct Mode {
-  double period = 0;             // s
-  double participation = 0;      // Gamma = phi^T M iota / phi^T M phi, with the shape as below
-  double effective_mass = 0;     // kg
-  double damping_ratio = 0;      // fraction of critical: phi^T C phi / (2 omega phi^T M phi)
-  std::vector<double> shape;     // [floor], largest magnitude 1, roof positive
+  double period = 0;          // s
+  double participation = 0;   // Gamma = phi^T M iota / phi^T M phi, with the shape as below
+  double effective_mass = 0;  // kg
+  double damping_ratio = 0;   // fraction of critical: phi^T C phi / (2 omega phi^T M phi)
+  std::vector<double> shape;  // [floor], largest magnitude 1, roof positive
 };
 
 struct BuildingSummary {
@@ -59,14 +59,15 @@ struct BuildingSummary {
   std::vector<double> heights;      // m, [story]
   std::vector<double> masses;       // kg, [floor]
   std::vector<Mode> modes;          // from the longest period
-  std::vector<double> mass_matrix, damping_matrix, stiffness_matrix;  // [floor][floor], row-major, SI; stiffness: initial, with P-Delta
+  std::vector<double> mass_matrix, damping_matrix,
+      stiffness_matrix;  // [floor][floor], row-major, SI; stiffness: initial, with P-Delta
 };
 
 struct MotionSummary {
   std::string name, file, digest;
-  double step = 0;      // s
+  double step = 0;  // s
   long samples = 0;
-  double peak = 0;      // m/s2, signed, with the motion's own factor
+  double peak = 0;  // m/s2, signed, with the motion's own factor
 };
 
 struct StudyResults {

@@ -20,17 +20,18 @@ void add_rayleigh(double mass_factor, double stiffness_factor, const Band& elast
 // zeta_n = a0 / (2 omega_n) + a1 omega_n / 2 in both modes: Chopra, Dynamics of Structures, ch. 11.
 void add_rayleigh_by_modes(const RayleighByModes& damping, const Band& elastic, System& system) {
   if (damping.first < 1 || damping.second > system.freedoms || damping.first >= damping.second)
-    throw input_error("building.damping",
-                      fmt::format("found modes {} and {} of a building with {}", damping.first, damping.second,
-                                  system.freedoms),
-                      "two different modes are needed, rising, from 1 to the number of modes");
+    throw input_error(
+        "building.damping",
+        fmt::format("found modes {} and {} of a building with {}", damping.first, damping.second, system.freedoms),
+        "two different modes are needed, rising, from 1 to the number of modes");
   const ModalBasis basis = modal_basis(elastic, system.mass);
   const double wi = std::sqrt(basis.omega_squared[damping.first - 1]);
   const double wj = std::sqrt(basis.omega_squared[damping.second - 1]);
   if (!(wj > wi * (1 + 1e-9)))
-    throw input_error("building.damping",
-                      fmt::format("modes {} and {} have the same frequency, {:.6g} rad/s", damping.first, damping.second, wi),
-                      "two modes of different frequency are needed");
+    throw input_error(
+        "building.damping",
+        fmt::format("modes {} and {} have the same frequency, {:.6g} rad/s", damping.first, damping.second, wi),
+        "two modes of different frequency are needed");
   const double zi = damping.ratio_first, zj = damping.ratio_second;
   const double spread = wj * wj - wi * wi;
   add_rayleigh(2 * wi * wj * (zi * wj - zj * wi) / spread, 2 * (zj * wj - zi * wi) / spread, elastic, system);

@@ -6,8 +6,9 @@
 
 namespace pilotis {
 
-// `elastic` is K0, the initial elastic stiffness without P-Delta: Rayleigh damping is built on it. Modal damping takes the
-// modes of the building as it stands, P-Delta (already in the system) included. Throws Error (input), see assemble().
+// `elastic` is K0, the initial elastic stiffness without P-Delta: Rayleigh damping is built on it. Modal damping takes
+// the modes of the building as it stands, P-Delta (already in the system) included. Throws Error (input), see
+// assemble().
 void add_damping(const Damping& damping, const Band& elastic, System& system);
 
 }  // namespace pilotis

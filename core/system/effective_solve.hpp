@@ -44,7 +44,8 @@ class EffectiveSolve {
       band_solve(band_.data(), n, system.half, column);
     }
     for (int j = 0; j < r; ++j) {
-      for (int k = j; k < r; ++k) small_[std::size_t(j) * r + (k - j)] = product(system, k, &solved_[std::size_t(j) * n]);
+      for (int k = j; k < r; ++k)
+        small_[std::size_t(j) * r + (k - j)] = product(system, k, &solved_[std::size_t(j) * n]);
       small_[std::size_t(j) * r] += 1.0 / (c_c_ * system.modal_damping.weight[j]);
     }
     band_factor(small_.data(), r, r - 1);

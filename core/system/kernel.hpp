@@ -23,9 +23,8 @@ void add_row_force(const Rows& rows, int row, const R& force, R* out) noexcept {
 // Calls f(group, memories) for every law's group.
 template <class R, class F>
 void for_each_group(const System& system, const Memories<R>& memories, F f) {
-  [&]<std::size_t... I>(std::index_sequence<I...>) {
-    (f(std::get<I>(system.groups), std::get<I>(memories)), ...);
-  }(std::make_index_sequence<std::tuple_size_v<decltype(system.groups)>>{});
+  [&]<std::size_t... I>(std::index_sequence<I...>) { (f(std::get<I>(system.groups), std::get<I>(memories)), ...); }
+  (std::make_index_sequence<std::tuple_size_v<decltype(system.groups)>>{});
 }
 
 // Calls f(group, memories, other memories) for every law's group; the others may be changed unless they are const.
@@ -33,7 +32,8 @@ template <class R, class Other, class F>
 void for_each_group(const System& system, const Memories<R>& committed, Other& trial, F f) {
   [&]<std::size_t... I>(std::index_sequence<I...>) {
     (f(std::get<I>(system.groups), std::get<I>(committed), std::get<I>(trial)), ...);
-  }(std::make_index_sequence<std::tuple_size_v<decltype(system.groups)>>{});
+  }
+  (std::make_index_sequence<std::tuple_size_v<decltype(system.groups)>>{});
 }
 
 // Replies of the elements that are not in K. Adds their forces to `internal` [freedom], writes their tangents to
@@ -41,16 +41,17 @@ void for_each_group(const System& system, const Memories<R>& committed, Other& t
 template <class R>
 void add_element_forces(const System& system, const R* u, const R* v, const Memories<R>& committed, Memories<R>& trial,
                         R* internal, R* tangent) noexcept {
-  for_each_group<R>(system, committed, trial, [&]<class L>(const ElementGroup<L>& group, const auto& before, auto& after) {
-    if constexpr (!std::is_same_v<L, Linear>)
-      for (std::size_t e = 0; e < group.laws.size(); ++e) {
-        const R deformation = row_value(system.rows, group.row[e], u);
-        const R rate = row_value(system.rows, group.row[e], v);
-        const Reply<R> answer = reply(group.laws[e], deformation, rate, before[e], after[e]);
-        add_row_force(system.rows, group.row[e], answer.force, internal);
-        tangent[group.id[e]] = answer.tangent;
-      }
-  });
+  for_each_group<R>(system, committed, trial,
+                    [&]<class L>(const ElementGroup<L>& group, const auto& before, auto& after) {
+                      if constexpr (!std::is_same_v<L, Linear>)
+                        for (std::size_t e = 0; e < group.laws.size(); ++e) {
+                          const R deformation = row_value(system.rows, group.row[e], u);
+                          const R rate = row_value(system.rows, group.row[e], v);
+                          const Reply<R> answer = reply(group.laws[e], deformation, rate, before[e], after[e]);
+                          add_row_force(system.rows, group.row[e], answer.force, internal);
+                          tangent[group.id[e]] = answer.tangent;
+                        }
+                    });
 }
 
 // y += C x, the low-rank part included.

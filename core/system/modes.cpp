@@ -36,8 +36,10 @@ ModalBasis modal_basis(const Band& stiffness, const std::vector<double>& mass) {
 
 void require_stable(const ModalBasis& basis) {
   if (basis.omega_squared[0] <= 0)
-    throw input_error("building", fmt::format("it buckles under its own weight: omega^2 of mode 1 is {:.4g} rad2/s2", basis.omega_squared[0]),
-                      "each story needs a stiffness well above P/h (weights above over story height)");
+    throw input_error(
+        "building",
+        fmt::format("it buckles under its own weight: omega^2 of mode 1 is {:.4g} rad2/s2", basis.omega_squared[0]),
+        "each story needs a stiffness well above P/h (weights above over story height)");
 }
 
 namespace {

@@ -46,25 +46,25 @@ struct LowRank {
 
 // What response needs to read stories and floors off the freedoms.
 struct StoryGauges {
-  std::vector<double> height;   // m, [story]
-  std::vector<int> drift_row;   // row that gives the drift, [story]
-  std::vector<int> spring;      // element that is the story's spring, [story]
-  std::vector<int> floor;       // freedom of each floor, [floor]
+  std::vector<double> height;  // m, [story]
+  std::vector<int> drift_row;  // row that gives the drift, [story]
+  std::vector<int> spring;     // element that is the story's spring, [story]
+  std::vector<int> floor;      // freedom of each floor, [floor]
 };
 
 struct System {
   int freedoms = 0;
-  int half = 0;               // half band width of K, C and the elements together
-  std::vector<double> mass;   // kg, [freedom], > 0
-  Band stiffness;             // K, N/m: elements with the linear law, and P-Delta
-  Band damping;               // C less its low-rank part, N s/m
+  int half = 0;              // half band width of K, C and the elements together
+  std::vector<double> mass;  // kg, [freedom], > 0
+  Band stiffness;            // K, N/m: elements with the linear law, and P-Delta
+  Band damping;              // C less its low-rank part, N s/m
   LowRank modal_damping;
   std::vector<double> influence;  // iota, [freedom]
   Rows rows;
-  Scatter scatter;                // per row, into a band of width `half`
+  Scatter scatter;  // per row, into a band of width `half`
   Laws::Tuple<ElementGroup> groups;
-  int elements = 0;               // of all groups
-  int nonlinear_elements = 0;     // those that are not in K
+  int elements = 0;            // of all groups
+  int nonlinear_elements = 0;  // those that are not in K
   StoryGauges stories;
 
   bool is_linear() const { return nonlinear_elements == 0; }

@@ -14,8 +14,8 @@ namespace pilotis {
 // What a result file holds, as far as judging and showing need it.
 struct StoredStudy {
   std::string title, study_text, study_file, program_version, created;
-  StudyUnits units;             // those of the study, for showing
-  StudyResults results;         // histories left empty
+  StudyUnits units;      // those of the study, for showing
+  StudyResults results;  // histories left empty
   std::vector<Limit> limits;
 };
 

@@ -4,6 +4,8 @@
 #include <gtest/gtest.h>
 #include <rapidcheck.h>
 
+#include <optional>
+
 #include "tests/core/laws/legal_law.hpp"
 
 namespace pilotis {
@@ -128,11 +130,10 @@ TYPED_TEST(EveryLaw, StoresOrDissipatesAllWork) {
 }
 
 TYPED_TEST(EveryLaw, IsListedUnderItsName) {
-  const TypeParam law = [] {
-    TypeParam drawn{};
-    rc::check("any law will do", [&] { drawn = drawn_law<TypeParam>(Reach::moderate); });
-    return drawn;
-  }();
+  std::optional<TypeParam> drawn;
+  rc::check("any law will do", [&] { drawn.emplace(drawn_law<TypeParam>(Reach::moderate)); });
+  ASSERT_TRUE(drawn.has_value());
+  const TypeParam law = *drawn;
   EXPECT_EQ(law_name(Law(law)), TypeParam::method.name);
   const auto catalogue = law_catalogue();
   EXPECT_EQ(std::count_if(catalogue.begin(), catalogue.end(),

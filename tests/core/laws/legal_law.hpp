@@ -8,6 +8,8 @@
 #include <algorithm>
 #include <cmath>
 #include <cstring>
+#include <stdexcept>
+#include <string>
 #include <vector>
 
 #include "core/error.hpp"
@@ -57,8 +59,7 @@ L drawn_law(Reach reach) {
     } catch (const Error&) {
     }
   }
-  ADD_FAILURE() << "no legal parameters found for " << L::method.name;
-  return L{};
+  throw std::runtime_error("no legal parameters found for " + std::string(L::method.name));
 }
 
 // m, a deformation of the order at which the law shows its character.

@@ -55,8 +55,12 @@ std::string march_line(const StudyResults& results, const Signs& signs) {
 
 std::string factor_title(const FactorFacts& facts, const ScreenStyle& style) {
   const Signs signs(style);
-  std::string text = painted(fmt::format("Ground motion {} {:g}", signs.times, facts.factor), Tone::strong, style);
-  std::string rest = fmt::format("{}{} motion{}", signs.separator, facts.runs, facts.runs == 1 ? "" : "s");
+  const bool still = facts.runs == 1 && facts.stories.front().drift_ratio.motion == "none";
+  const std::string ground =
+      still ? "No ground motion" : fmt::format("Ground motion {} {:g}", signs.times, facts.factor);
+  std::string text = painted(ground, Tone::strong, style);
+  std::string rest;
+  if (!still) rest = fmt::format("{}{} motion{}", signs.separator, facts.runs, facts.runs == 1 ? "" : "s");
   if (facts.limit)
     rest += fmt::format("{}{} {} drift ratio, {} largest, {} limit {:g} %", signs.separator, signs.bar,
                         shown_statistic(*facts.limit), signs.light_bar, signs.mark, facts.limit->value * 100);

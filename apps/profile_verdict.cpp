@@ -10,6 +10,14 @@ namespace pilotis {
 
 namespace {
 
+// Text on as many lines as it takes, each behind `indent` blanks.
+std::string quiet_lines(const std::string& text, std::size_t indent, const ScreenStyle& style) {
+  std::string lines;
+  for (const std::string& line : wrapped(text, static_cast<std::size_t>(style.width) - indent))
+    lines += std::string(indent, ' ') + painted(line, Tone::quiet, style) + "\n";
+  return lines;
+}
+
 constexpr const char* caution = "Results rest on the model; local codes and licensed practice decide.";
 
 struct Word {
@@ -76,9 +84,7 @@ std::string outcome_line(const Outcome& outcome, const Limit& limit, const Study
   const std::size_t room = static_cast<std::size_t>(style.width) - 4 - columns_of(word_cell);
   std::string line = "    " + painted(word_cell, word.tone, style) + clipped(rest, room, style) + "\n";
   const std::string reason = reason_text(outcome);
-  if (!reason.empty())
-    line += std::string(6, ' ') + painted(clipped(reason, style.width - 6, style), Tone::quiet, style) + "\n";
-  return line;
+  return line + quiet_lines(reason, 6, style);
 }
 
 std::string limit_line(const Limit& limit, const StudyUnits& units, const ScreenStyle& style) {
@@ -87,9 +93,11 @@ std::string limit_line(const Limit& limit, const StudyUnits& units, const Screen
   const std::string what =
       fmt::format("  {} {} {} {} {}", shown_statistic(limit), shown_name(*limit.quantity), signs.at_most,
                   number_text(limit.value / shown.factor, decimals_of(limit, shown), signs), shown.unit);
-  const std::string source = limit.source.empty() ? "  (no source stated)" : "  (" + limit.source + ")";
-  const auto room = static_cast<std::size_t>(style.width) - std::min<std::size_t>(columns_of(what), style.width);
-  return painted(what, Tone::strong, style) + painted(clipped(source, room, style), Tone::quiet, style) + "\n";
+  const std::string source = limit.source.empty() ? "(no source stated)" : "(" + limit.source + ")";
+  const auto width = static_cast<std::size_t>(style.width);
+  if (columns_of(what) + 2 + columns_of(source) <= width)
+    return painted(what, Tone::strong, style) + "  " + painted(source, Tone::quiet, style) + "\n";
+  return painted(what, Tone::strong, style) + "\n" + quiet_lines(source, 4, style);
 }
 
 // On one line where that is wide enough, the note on a second where not.
@@ -98,7 +106,7 @@ std::string run_text(std::size_t number, const RunResult& run, const ScreenStyle
   const auto width = static_cast<std::size_t>(style.width);
   const std::string who = fmt::format("  run {}  {} {} {:g}", number, run.motion, signs.times, run.factor);
   if (columns_of(who) + 2 + columns_of(run.status_note) <= width) return who + "  " + run.status_note + "\n";
-  return clipped(who, width, style) + "\n" + clipped("      " + run.status_note, width, style) + "\n";
+  return clipped(who, width, style) + "\n" + quiet_lines(run.status_note, 6, style);
 }
 
 // The first of them by name; how many more there are.

@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <sstream>
 
 namespace pilotis {
 
@@ -58,6 +59,18 @@ std::string clipped(const std::string& text, std::size_t width, const ScreenStyl
   for (std::size_t seen = 0; at < text.size(); ++at)
     if (starts_character(text[at]) && seen++ == keep) break;
   return text.substr(0, at) + (keep > 0 ? tail : "");
+}
+
+std::vector<std::string> wrapped(const std::string& text, std::size_t width) {
+  std::vector<std::string> lines;
+  std::istringstream words(text);
+  for (std::string word; words >> word;) {
+    if (lines.empty() || columns_of(lines.back()) + 1 + columns_of(word) > width)
+      lines.push_back(word);
+    else
+      lines.back() += " " + word;
+  }
+  return lines;
 }
 
 std::string left(const std::string& text, std::size_t width) {

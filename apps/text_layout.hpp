@@ -3,6 +3,7 @@
 
 #include <string>
 #include <string_view>
+#include <vector>
 
 #include "apps/terminal.hpp"
 #include "io/study/study.hpp"
@@ -14,6 +15,9 @@ std::size_t columns_of(std::string_view text);
 
 // At most `width` columns; what is cut off is marked by a last "…" (".." without unicode).
 std::string clipped(const std::string& text, std::size_t width, const ScreenStyle& style);
+
+// Lines of at most `width` columns, broken at blanks; a longer word stands alone on its line.
+std::vector<std::string> wrapped(const std::string& text, std::size_t width);
 
 std::string left(const std::string& text, std::size_t width);   // blanks after
 std::string right(const std::string& text, std::size_t width);  // blanks before

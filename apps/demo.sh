@@ -19,7 +19,7 @@ fi
 cat <<END
 
 The results are in $results, an HDF5 file. To look at them:
-  build/apps/pilotis verdict $results      the limits against the responses
-  build/apps/pilotis export $results       the numbers as CSV
-  build/apps/pilotis --help                the other commands
+  build/apps/pilotis verdict $results           the limits against the responses
+  build/apps/pilotis export $results --peaks    the numbers as CSV
+  build/apps/pilotis --help                     the other commands
 END

@@ -2,6 +2,7 @@
 // Sherman-Morrison-Woodbury identity, so the band stays narrow. Over the lane scalar; allocates only when made.
 #pragma once
 
+#include <algorithm>
 #include <vector>
 
 #include "core/system/kernel.hpp"
@@ -15,12 +16,15 @@ class EffectiveSolve {
       : band_(system.stiffness.entries.size()),
         solved_(system.modal_damping.weight.size() * system.freedoms),
         small_(system.modal_damping.weight.size() * system.modal_damping.weight.size()),
-        amount_(system.modal_damping.weight.size()) {}
+        amount_(system.modal_damping.weight.size()),
+        tangent_(system.elements) {}
 
-  // `tangent` [element]; a linear system is factored again only when a coefficient changes.
+  // `tangent` [element]. Factors again only when a tangent or a coefficient has changed: never in a linear march of one
+  // step, seldom while springs stay on their straight branches.
   void factor(const System& system, double c_m, double c_c, double c_k, const R* tangent) noexcept {
-    if (system.is_linear() && c_m == c_m_ && c_c == c_c_ && c_k == c_k_) return;
+    if (c_m == c_m_ && c_c == c_c_ && c_k == c_k_ && same_tangents(tangent)) return;
     c_m_ = c_m, c_c_ = c_c, c_k_ = c_k;
+    std::copy_n(tangent, tangent_.size(), tangent_.begin());
     effective_band(system, c_m, c_c, c_k, tangent, band_.data());
     band_factor(band_.data(), system.freedoms, system.half);
     if (!amount_.empty()) factor_low_rank(system);
@@ -33,6 +37,12 @@ class EffectiveSolve {
   }
 
  private:
+  bool same_tangents(const R* tangent) const noexcept {
+    for (std::size_t e = 0; e < tangent_.size(); ++e)
+      if (!all(tangent[e] == tangent_[e])) return false;
+    return true;
+  }
+
   int rank() const { return static_cast<int>(amount_.size()); }
 
   // S = (c_c weight)^-1 + W^T A^-1 W, Cholesky-like LDL^T kept as a full band of half width rank - 1.
@@ -70,6 +80,7 @@ class EffectiveSolve {
   std::vector<R> solved_;          // A^-1 W, [rank][freedom]
   std::vector<R> small_;           // factors of S
   mutable std::vector<R> amount_;  // scratch, [rank]
+  std::vector<R> tangent_;         // of the factors, [element]
 };
 
 }  // namespace pilotis

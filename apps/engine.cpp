@@ -1,5 +1,7 @@
 #include "apps/engine.hpp"
 
+#include <algorithm>
+
 #include "core/error.hpp"
 #include "core/system/assemble_stick.hpp"
 #include "core/system/load.hpp"
@@ -61,8 +63,8 @@ RunResult run(const Setting& setting, const Motion* motion, double factor) {
   const StepChoice choice = step_for(setting, motion);
   RunPlan plan = setting.plan;
   plan.step = choice.step;
-  plan.tail = setting.study.march.tail;
-  plan.duration = setting.study.march.duration.value_or(load.end() + plan.tail);
+  plan.duration = setting.study.march.duration.value_or(load.end() + setting.study.march.tail);
+  plan.tail = std::max(0.0, plan.duration - load.end());  // none when the study ends the run while the load goes on
   RunResult result = run_once(setting.system, load, plan);
   result.motion = motion != nullptr ? motion->name : "none";
   result.factor = factor;

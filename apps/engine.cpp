@@ -8,7 +8,7 @@
 #include "core/system/summary.hpp"
 #include "integrators/auto_step.hpp"
 #include "integrators/catalogue.hpp"
-#include "integrators/one_run.hpp"
+#include "integrators/runs.hpp"
 
 namespace pilotis {
 

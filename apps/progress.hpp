@@ -1,5 +1,5 @@
-// Progress on standard error: a bar with rate and time left on a terminal, plain lines elsewhere. Nothing for work that
-// is done within half a second.
+// Progress on standard error: a bar with rate, time left and failures on a terminal, plain lines elsewhere. Nothing for
+// work that is done within half a second.
 #pragma once
 
 #include <chrono>
@@ -8,14 +8,17 @@ namespace pilotis {
 
 class Progress {
  public:
-  // `quiet`: shows nothing at all.
-  Progress(bool terminal, bool quiet) : terminal_(terminal), quiet_(quiet) {}
-  void show(long done, long all);
+  // `quiet`: shows nothing at all. `before`: of `all`, how many were there when it began: they tell nothing of the
+  // rate.
+  Progress(bool terminal, bool quiet, long before = 0) : terminal_(terminal), quiet_(quiet), before_(before) {}
+  // Done so far, a part of one in hand included.
+  void show(double done, long all, long failures = 0);
   void finish();  // takes the bar off the terminal
 
  private:
   using Clock = std::chrono::steady_clock;
   bool terminal_, quiet_;
+  long before_;
   bool bar_on_screen_ = false;
   Clock::time_point begin_ = Clock::now(), last_ = begin_;
 };

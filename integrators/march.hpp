@@ -1,10 +1,9 @@
-// The one stepping loop: load -> step -> finite check -> observers.
+// One march of one system through one load by one scheme.
 #pragma once
 
 #include <span>
 
 #include "core/response/observer.hpp"
-#include "core/response/reader.hpp"
 #include "core/system/load.hpp"
 #include "integrators/scheme.hpp"
 

@@ -30,6 +30,7 @@ class Newmark : public Scheme {
   Traits traits() const override;
   std::string description() const override;
   std::unique_ptr<Stepper> prepare(const System& system, const StepSettings& settings) const override;
+  const ImplicitCoefficients* implicit() const override { return &coefficients_; }
 
  private:
   ImplicitCoefficients coefficients_;

@@ -21,10 +21,7 @@ using Vector = std::vector<double>;  // [u; v], [2 freedoms]
 class Equation {
  public:
   explicit Equation(const System& system)
-      : system_(system),
-        internal_(system.freedoms),
-        tangent_(system.elements),
-        trial_(state_at_rest<double>(system).memory) {}
+      : system_(system), forces_(system), trial_(state_at_rest<double>(system).memory) {}
 
   void begin(const Memories<double>& committed, const LoadStep& load) noexcept {
     committed_ = &committed, load_ = &load;
@@ -32,19 +29,19 @@ class Equation {
 
   void operator()(const Vector& y, Vector& rate, double t) noexcept {
     const int n = system_.freedoms;
-    internal_forces(system_, y.data(), y.data() + n, *committed_, trial_, internal_.data(), tangent_.data());
+    internal_forces(system_, y.data(), y.data() + n, *committed_, trial_, forces_);
     const double share = t / load_->dt;
     for (int i = 0; i < n; ++i) {
       const double p = load_->before[i] + share * (load_->after[i] - load_->before[i]);
       rate[i] = y[n + i];
-      rate[n + i] = (p - internal_[i]) / system_.mass[i];
+      rate[n + i] = (p - forces_.internal[i]) / system_.mass[i];
     }
   }
 
   // What the laws would remember at y.
   const Memories<double>& remembered(const Vector& y) noexcept {
     const int n = system_.freedoms;
-    internal_forces(system_, y.data(), y.data() + n, *committed_, trial_, internal_.data(), tangent_.data());
+    internal_forces(system_, y.data(), y.data() + n, *committed_, trial_, forces_);
     return trial_;
   }
 
@@ -52,7 +49,7 @@ class Equation {
   const System& system_;
   const Memories<double>* committed_ = nullptr;
   const LoadStep* load_ = nullptr;
-  Vector internal_, tangent_;
+  Forces<double> forces_;
   Memories<double> trial_;
 };
 

@@ -11,6 +11,8 @@
 
 namespace pilotis {
 
+struct ImplicitCoefficients;
+
 struct Traits {
   int order = 2;  // of displacement and velocity for smooth loads and laws; 0: exact
   bool implicit = true;
@@ -22,11 +24,13 @@ struct Traits {
 };
 
 // p - M iota a_g at both ends of a step, linear between.
-struct LoadStep {
-  double dt = 0;                   // s, > 0
-  const double* before = nullptr;  // N, [freedom]
-  const double* after = nullptr;   // N, [freedom]
+template <class R>
+struct LoadStepOver {
+  R dt{};                     // s, > 0
+  const R* before = nullptr;  // N, [freedom]
+  const R* after = nullptr;   // N, [freedom]
 };
+using LoadStep = LoadStepOver<double>;
 
 enum class StepStatus { done, retry_smaller, failed };
 
@@ -57,6 +61,8 @@ class Scheme {
   virtual std::string description() const = 0;
   // Throws Error (input) when the scheme cannot march this system, saying which element or property stands against it.
   virtual std::unique_ptr<Stepper> prepare(const System& system, const StepSettings& settings) const = 0;
+  // Not null: a scheme of the Newmark family, which can march many runs in lanes (integrators/march_lanes.hpp).
+  virtual const ImplicitCoefficients* implicit() const { return nullptr; }
   // The same scheme with tolerances a hundred times tighter, for error checks of adaptive schemes; null for the others,
   // whose check halves the step alone.
   virtual std::shared_ptr<const Scheme> refined() const { return nullptr; }

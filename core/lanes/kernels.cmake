@@ -26,7 +26,8 @@ function(pilotis_kernels target source)
     target_include_directories(${objects} PRIVATE ${PROJECT_SOURCE_DIR})
     target_link_libraries(${objects} PRIVATE pilotis_options)
     target_compile_definitions(${objects} PRIVATE PILOTIS_INSTRUCTION_SET=${set} PILOTIS_LANES=${PILOTIS_LANES_${set}})
-    target_compile_options(${objects} PRIVATE ${PILOTIS_MARCH_${set}} ${arg_OPTIONS})
+    # -fno-gnu-unique: a symbol of that kind cannot be made local.
+    target_compile_options(${objects} PRIVATE ${PILOTIS_MARCH_${set}} $<$<CXX_COMPILER_ID:GNU>:-fno-gnu-unique> ${arg_OPTIONS})
     set(local ${CMAKE_CURRENT_BINARY_DIR}/${name}_${set}.o)
     string(LENGTH ${set} length)
     add_custom_command(OUTPUT ${local}

@@ -6,6 +6,10 @@
 #include <cstdint>
 #include <type_traits>
 
+#if defined(__AVX__)
+#include <immintrin.h>
+#endif
+
 namespace pilotis {
 
 // GCC/Clang vector extensions of fixed width. Written out one by one: GCC drops a vector attribute that depends on a
@@ -82,9 +86,31 @@ requires(LaneTraits<R>::width > 1) R select(const Mask<R>& where, const R& yes, 
   return where ? yes : no;
 }
 
+// A mask with every lane set, and one lane of a mask.
+template <class R>
+Mask<R> every_lane() {
+  return R{} == R{};
+}
+inline bool flag(bool mask, int) { return mask; }
+template <class M>
+requires(!std::is_arithmetic_v<M>) bool flag(const M& mask, int i) { return mask[i] != 0; }
+inline void set_flag(bool& mask, int, bool value) { mask = value; }
+template <class M>
+requires(!std::is_arithmetic_v<M>) void set_flag(M& mask, int i, bool value) { mask[i] = value ? -1 : 0; }
+
+inline bool negated(bool mask) { return !mask; }
+template <class M>
+requires(!std::is_arithmetic_v<M>) M negated(const M& mask) { return ~mask; }
+
 inline bool any(bool mask) { return mask; }
 template <class M>
-requires(!std::is_same_v<M, bool>) bool any(const M& mask) {
+requires(!std::is_arithmetic_v<M>) bool any(const M& mask) {
+#if defined(__AVX__)
+  if constexpr (sizeof(M) == 32) return _mm256_movemask_pd(__m256d(mask)) != 0;
+#endif
+#if defined(__AVX512F__)
+  if constexpr (sizeof(M) == 64) return _mm512_test_epi64_mask(__m512i(mask), __m512i(mask)) != 0;
+#endif
   std::int64_t bits = 0;
   for (unsigned i = 0; i < sizeof(M) / sizeof(std::int64_t); ++i) bits |= mask[i];
   return bits != 0;
@@ -92,22 +118,37 @@ requires(!std::is_same_v<M, bool>) bool any(const M& mask) {
 
 inline bool all(bool mask) { return mask; }
 template <class M>
-requires(!std::is_same_v<M, bool>) bool all(const M& mask) {
-  std::int64_t bits = -1;
-  for (unsigned i = 0; i < sizeof(M) / sizeof(std::int64_t); ++i) bits &= mask[i];
-  return bits != 0;
-}
+requires(!std::is_arithmetic_v<M>) bool all(const M& mask) { return !any(~mask); }
 
+// |x|, of zeros and NaN too by clearing the sign.
 template <class R>
 R lane_abs(const R& x) {
-  return select(x < 0.0, R(-x), x);
+  constexpr std::int64_t all_but_sign = 0x7fffffffffffffff;
+  if constexpr (LaneTraits<R>::width == 1)
+    return std::fabs(x);
+  else
+    return R(Mask<R>(x) & (Mask<R>{} + all_but_sign));
 }
+
+// The second where neither is smaller (larger): what the processors' own instructions do.
 template <class R>
 R lane_min(const R& x, const R& y) {
+#if defined(__AVX__)
+  if constexpr (sizeof(R) == 32) return R(_mm256_min_pd(__m256d(x), __m256d(y)));
+#endif
+#if defined(__AVX512F__)
+  if constexpr (sizeof(R) == 64) return R(_mm512_min_pd(__m512d(x), __m512d(y)));
+#endif
   return select(x < y, x, y);
 }
 template <class R>
 R lane_max(const R& x, const R& y) {
+#if defined(__AVX__)
+  if constexpr (sizeof(R) == 32) return R(_mm256_max_pd(__m256d(x), __m256d(y)));
+#endif
+#if defined(__AVX512F__)
+  if constexpr (sizeof(R) == 64) return R(_mm512_max_pd(__m512d(x), __m512d(y)));
+#endif
   return select(x > y, x, y);
 }
 // -1, 0 or 1.

@@ -21,14 +21,17 @@ struct Bilinear {
   double stiffness;         // N/m
   double yield_shear;       // N
   double post_yield_ratio;  // -
+  double backbone;          // r k, N/m, from the others
+  Slider slider;            // the bounded part, from the others
+
+  // Unchecked; input goes through make(). Same units as the fields.
+  Bilinear(double k, double f_y, double r)
+      : stiffness(k), yield_shear(f_y), post_yield_ratio(r), backbone(r * k), slider((1 - r) * k, (1 - r) * f_y) {}
 
   template <class R>
   struct Memory {
     R slip;  // m
   };
-
-  double slider_stiffness() const { return (1 - post_yield_ratio) * stiffness; }   // N/m
-  double slider_strength() const { return (1 - post_yield_ratio) * yield_shear; }  // N
 
   static Bilinear make(std::span<const double> v) { return {v[0], v[1], v[2]}; }
   std::array<double, 3> values() const { return {stiffness, yield_shear, post_yield_ratio}; }
@@ -37,10 +40,8 @@ struct Bilinear {
 template <class R>
 Reply<R> reply(const Bilinear& law, const R& deformation, const R&, const Bilinear::Memory<R>& committed,
                Bilinear::Memory<R>& trial) {
-  const double backbone = law.post_yield_ratio * law.stiffness;
-  const Reply<R> slider =
-      slider_reply(law.slider_stiffness(), law.slider_strength(), deformation, committed.slip, trial.slip);
-  return {backbone * deformation + slider.force, backbone + slider.tangent};
+  const Reply<R> slider = slider_reply(law.slider, deformation, committed.slip, trial.slip);
+  return {law.backbone * deformation + slider.force, law.backbone + slider.tangent};
 }
 
 inline double initial_stiffness(const Bilinear& law) { return law.stiffness; }
@@ -48,12 +49,11 @@ inline double yield_deformation(const Bilinear& law) { return law.yield_shear / 
 
 template <class R>
 R stored_energy(const Bilinear& law, const Bilinear::Memory<R>& memory, const R& deformation) {
-  return 0.5 * law.post_yield_ratio * law.stiffness * deformation * deformation +
-         slider_stored_energy(law.slider_stiffness(), memory.slip, deformation);
+  return 0.5 * law.backbone * (deformation * deformation) + slider_stored_energy(law.slider, memory.slip, deformation);
 }
 template <class R>
 R dissipated_energy(const Bilinear& law, const Bilinear::Memory<R>& before, const Bilinear::Memory<R>& after) {
-  return slider_dissipated_energy(law.slider_strength(), before.slip, after.slip);
+  return slider_dissipated_energy(law.slider, before.slip, after.slip);
 }
 
 }  // namespace pilotis

@@ -63,7 +63,7 @@ struct Slope {
 // `direction` is the sign of d'.
 template <class R>
 Slope<R> slope(const BoucWen& law, const R& z, const R& direction) {
-  const R size = lane_abs<R>(z);
+  const R size = lane_abs(z);
   const R lower = law.exponent == 1.0 ? splat<R>(1) : lane_power<R>(size, law.exponent - 1);  // |z|^(n-1)
   const R weight = law.gamma + law.beta * direction * lane_sign<R>(z);
   return {law.A - lower * size * weight, -law.exponent * lower * weight * lane_sign<R>(z)};
@@ -88,7 +88,7 @@ Slope<R> stride(const BoucWen& law, const R& z, const R& h, const R& direction) 
 template <class R>
 R longest_stride(const BoucWen& law, const R& z, const R& direction) {
   const double n = law.exponent;
-  const R size = lane_abs<R>(z);
+  const R size = lane_abs(z);
   const R unloading_rate = n * (law.beta - law.gamma) * (n == 1.0 ? splat<R>(1) : lane_power<R>(size, n - 1));
   const R to_zero = lane_max<R>(size / law.A, splat<R>(1e-6));
   const R loading = splat<R>(0.25 / law.loading_rate);  // infinite when gamma = -beta: then dz/dx = A
@@ -108,13 +108,13 @@ Reply<R> reply(const BoucWen& law, const R& deformation, const R&, const BoucWen
   const R direction = lane_sign<R>(left);
   R z = committed.z;
   R longest = bouc_wen::longest_stride(law, z, direction);
-  auto long_way = lane_abs<R>(left) > longest;
+  auto long_way = lane_abs(left) > longest;
   for (int i = 0; i < bouc_wen::most_strides && any(long_way); ++i) {
     const R h = select(long_way, R(longest * direction), splat<R>(0));
     z = bouc_wen::stride(law, z, h, direction).value;
     left = left - h;
     longest = bouc_wen::longest_stride(law, z, direction);
-    long_way = lane_abs<R>(left) > longest;
+    long_way = lane_abs(left) > longest;
   }
   left = lane_min<R>(lane_max<R>(left, R(-longest)), longest);
   const auto last = bouc_wen::stride(law, z, left, direction);

@@ -7,26 +7,34 @@
 
 namespace pilotis {
 
-// k > 0 (N/m), strength > 0 (N). `slip` (m) is the committed one; `trial_slip` what it becomes at `deformation` (m).
+struct Slider {
+  double stiffness;    // k, N/m, > 0
+  double strength;     // N, > 0
+  double flexibility;  // 1/k, m/N
+
+  Slider(double k, double largest) : stiffness(k), strength(largest), flexibility(1 / k) {}
+};
+
+// `slip` (m) is the committed one; `trial_slip` what it becomes at `deformation` (m).
 template <class R>
-Reply<R> slider_reply(double k, double strength, const R& deformation, const R& slip, R& trial_slip) {
-  const R elastic = k * (deformation - slip);
-  const R force = lane_max<R>(lane_min<R>(elastic, splat<R>(strength)), splat<R>(-strength));
-  const auto slips = lane_abs<R>(elastic) > strength;
-  trial_slip = select(slips, R(deformation - force / k), slip);
-  return {force, select(slips, splat<R>(0), splat<R>(k))};
+Reply<R> slider_reply(const Slider& slider, const R& deformation, const R& slip, R& trial_slip) {
+  const R elastic = slider.stiffness * (deformation - slip);
+  const R force = lane_max<R>(lane_min<R>(elastic, splat<R>(slider.strength)), splat<R>(-slider.strength));
+  const auto slips = lane_abs(elastic) > slider.strength;
+  trial_slip = select(slips, R(deformation - force * slider.flexibility), slip);
+  return {force, select(slips, splat<R>(0), splat<R>(slider.stiffness))};
 }
 
 template <class R>
-R slider_stored_energy(double k, const R& slip, const R& deformation) {
+R slider_stored_energy(const Slider& slider, const R& slip, const R& deformation) {
   const R stretch = deformation - slip;
-  return 0.5 * k * stretch * stretch;
+  return 0.5 * slider.stiffness * (stretch * stretch);
 }
 
 // Between two committed slips the slider moved one way only, at its strength.
 template <class R>
-R slider_dissipated_energy(double strength, const R& before, const R& after) {
-  return strength * lane_abs<R>(after - before);
+R slider_dissipated_energy(const Slider& slider, const R& before, const R& after) {
+  return slider.strength * lane_abs(R(after - before));
 }
 
 }  // namespace pilotis

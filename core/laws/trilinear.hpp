@@ -27,6 +27,19 @@ struct Trilinear {
   double cracked_ratio;     // -
   double yield_shear;       // N
   double post_yield_ratio;  // -
+  double backbone;          // r_y k, N/m, from the others
+  Slider crack, yield;      // each stops carrying more at its own deformation; from the others
+
+  // Unchecked; input goes through make(). Same units as the fields.
+  Trilinear(double k, double f_c, double r_c, double f_y, double r_y)
+      : stiffness(k),
+        cracking_shear(f_c),
+        cracked_ratio(r_c),
+        yield_shear(f_y),
+        post_yield_ratio(r_y),
+        backbone(r_y * k),
+        crack((1 - r_c) * k, (1 - r_c) * k * cracking_deformation()),
+        yield((r_c - r_y) * k, (r_c - r_y) * k * yield_deformation()) {}
 
   template <class R>
   struct Memory {
@@ -37,11 +50,6 @@ struct Trilinear {
   double yield_deformation() const {                                          // m
     return cracking_deformation() + (yield_shear - cracking_shear) / (cracked_ratio * stiffness);
   }
-  // Stiffness and strength of the two Jenkin elements: each stops carrying more at its own deformation.
-  double crack_stiffness() const { return (1 - cracked_ratio) * stiffness; }
-  double crack_strength() const { return crack_stiffness() * cracking_deformation(); }
-  double yield_stiffness() const { return (cracked_ratio - post_yield_ratio) * stiffness; }
-  double yield_strength() const { return yield_stiffness() * yield_deformation(); }
 
   // Throws Error (input) when f_y <= f_c or r_y >= r_c.
   static Trilinear make(std::span<const double> values);
@@ -53,12 +61,9 @@ struct Trilinear {
 template <class R>
 Reply<R> reply(const Trilinear& law, const R& deformation, const R&, const Trilinear::Memory<R>& committed,
                Trilinear::Memory<R>& trial) {
-  const double backbone = law.post_yield_ratio * law.stiffness;
-  const Reply<R> crack =
-      slider_reply(law.crack_stiffness(), law.crack_strength(), deformation, committed.crack_slip, trial.crack_slip);
-  const Reply<R> yield =
-      slider_reply(law.yield_stiffness(), law.yield_strength(), deformation, committed.yield_slip, trial.yield_slip);
-  return {backbone * deformation + crack.force + yield.force, backbone + crack.tangent + yield.tangent};
+  const Reply<R> crack = slider_reply(law.crack, deformation, committed.crack_slip, trial.crack_slip);
+  const Reply<R> yield = slider_reply(law.yield, deformation, committed.yield_slip, trial.yield_slip);
+  return {law.backbone * deformation + crack.force + yield.force, law.backbone + crack.tangent + yield.tangent};
 }
 
 inline double initial_stiffness(const Trilinear& law) { return law.stiffness; }
@@ -66,14 +71,14 @@ inline double yield_deformation(const Trilinear& law) { return law.yield_deforma
 
 template <class R>
 R stored_energy(const Trilinear& law, const Trilinear::Memory<R>& memory, const R& deformation) {
-  return 0.5 * law.post_yield_ratio * law.stiffness * deformation * deformation +
-         slider_stored_energy(law.crack_stiffness(), memory.crack_slip, deformation) +
-         slider_stored_energy(law.yield_stiffness(), memory.yield_slip, deformation);
+  return 0.5 * law.backbone * (deformation * deformation) +
+         slider_stored_energy(law.crack, memory.crack_slip, deformation) +
+         slider_stored_energy(law.yield, memory.yield_slip, deformation);
 }
 template <class R>
 R dissipated_energy(const Trilinear& law, const Trilinear::Memory<R>& before, const Trilinear::Memory<R>& after) {
-  return slider_dissipated_energy(law.crack_strength(), before.crack_slip, after.crack_slip) +
-         slider_dissipated_energy(law.yield_strength(), before.yield_slip, after.yield_slip);
+  return slider_dissipated_energy(law.crack, before.crack_slip, after.crack_slip) +
+         slider_dissipated_energy(law.yield, before.yield_slip, after.yield_slip);
 }
 
 }  // namespace pilotis

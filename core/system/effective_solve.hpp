@@ -1,4 +1,4 @@
-// The effective solve a scheme asks for: (c_m M + c_c C + c_k K_tangent) x = b, with C's low-rank part by the
+// The effective solve a scheme asks for: (M + c_c C + c_k K_tangent) x = b, with C's low-rank part by the
 // Sherman-Morrison-Woodbury identity, so the band stays narrow. Over the lane scalar; allocates only when made.
 #pragma once
 
@@ -13,7 +13,8 @@ template <class R>
 class EffectiveSolve {
  public:
   explicit EffectiveSolve(const System& system)
-      : band_(system.stiffness.entries.size()),
+      : steady_(system.stiffness.entries.size()),
+        band_(system.stiffness.entries.size()),
         solved_(system.modal_damping.weight.size() * system.freedoms),
         small_(system.modal_damping.weight.size() * system.modal_damping.weight.size()),
         amount_(system.modal_damping.weight.size()),
@@ -21,11 +22,14 @@ class EffectiveSolve {
 
   // `tangent` [element]. Factors again only when a tangent or a coefficient has changed: never in a linear march of one
   // step, seldom while springs stay on their straight branches.
-  void factor(const System& system, double c_m, double c_c, double c_k, const R* tangent) noexcept {
-    if (c_m == c_m_ && c_c == c_c_ && c_k == c_k_ && same_tangents(tangent)) return;
-    c_m_ = c_m, c_c_ = c_c, c_k_ = c_k;
+  void factor(const System& system, const R& c_c, const R& c_k, const R* tangent) noexcept {
+    const bool same_step = all((c_c == c_c_) & (c_k == c_k_));
+    if (same_step && same_tangents(tangent)) return;
+    if (!same_step) steady_band(system, c_c, c_k, steady_.data());
+    c_c_ = c_c, c_k_ = c_k;
     std::copy_n(tangent, tangent_.size(), tangent_.begin());
-    effective_band(system, c_m, c_c, c_k, tangent, band_.data());
+    std::copy(steady_.begin(), steady_.end(), band_.begin());
+    add_tangents(system, c_k, tangent, band_.data());
     band_factor(band_.data(), system.freedoms, system.half);
     if (!amount_.empty()) factor_low_rank(system);
   }
@@ -75,8 +79,8 @@ class EffectiveSolve {
     return sum;
   }
 
-  double c_m_ = 0, c_c_ = 0, c_k_ = 0;
-  std::vector<R> band_;
+  R c_c_ = splat<R>(-1), c_k_ = splat<R>(-1);  // of the factors; no step has negative ones
+  std::vector<R> steady_, band_;
   std::vector<R> solved_;          // A^-1 W, [rank][freedom]
   std::vector<R> small_;           // factors of S
   mutable std::vector<R> amount_;  // scratch, [rank]

@@ -9,7 +9,8 @@
 
 namespace pilotis {
 
-// Keeps its own copies; immutable once made. Linear between the samples of the record and of the tables.
+// Refers to the record, which must outlive it; immutable once made. Linear between the samples of the record and of the
+// tables.
 class Load {
  public:
   // `ground` may be null; its samples are multiplied by `factor`. Floors of `forces` are floors of the system.
@@ -19,6 +20,15 @@ class Load {
   double ground(double t) const noexcept;
   // p(t) - M iota a_g(t), N, [freedom].
   void at(double t, double* out) const noexcept;
+  // Adds p(t), N, to lane `lane` of out, [freedom].
+  template <class R>
+  void add_floor_forces(double t, R* out, int lane) const noexcept {
+    for (const FreedomForce& force : forces_)
+      set_lane(out[force.freedom], lane, pilotis::lane(out[force.freedom], lane) + table_value(force, t));
+  }
+  bool has_floor_forces() const { return !forces_.empty(); }
+  // -M iota, kg, [freedom].
+  const std::vector<double>& minus_mass_influence() const { return minus_mass_influence_; }
 
   // s, when ground and forces have come to rest for good.
   double end() const { return end_; }
@@ -31,9 +41,19 @@ class Load {
     int freedom;
     std::vector<double> times, forces;
   };
-  std::vector<double> samples_;  // m/s2, with the factor, a zero before and after
-  double step_ = 0, first_ = 0;  // of samples_
-  std::vector<double> minus_mass_influence_;
+  static double table_value(const FreedomForce& force, double t) noexcept;
+  // The ground comes to rest one step after the last sample, and starts from rest one step before a first sample that
+  // is not at t = 0: sample i counts with those zeros.
+  double sample(std::size_t i) const noexcept {
+    const std::size_t k = i - leading_zeros_;  // wraps for the zero before
+    return k < ground_->samples.size() ? factor_ * ground_->samples[k] : 0.0;
+  }
+
+  const Accelerogram* ground_ = nullptr;
+  double factor_ = 1;
+  std::size_t leading_zeros_ = 0, count_ = 0;  // of the samples, zeros included
+  double step_ = 0, first_ = 0;                // s, of them
+  std::vector<double> minus_mass_influence_;   // kg, [freedom]
   std::vector<FreedomForce> forces_;
   double end_ = 0, largest_ = 0;
 };

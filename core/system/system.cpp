@@ -39,6 +39,27 @@ int add_element(System& system, const Law& law, int row) {
   return id;
 }
 
+namespace {
+
+PairRow pair_row(const Rows& rows, int row, const Band& shape) {
+  const int k = rows.start[row];
+  const bool two = rows.start[row + 1] - k == 2;
+  const int first = rows.freedom[k], second = two ? rows.freedom[k + 1] : first;
+  const double a = rows.coefficient[k], b = two ? rows.coefficient[k + 1] : 0.0;
+  const auto at = [&](int i, int j) { return static_cast<int>(shape.position(i, j)); };
+  return {first, second, a, b, at(first, first), at(second, second), at(first, second), a * a, b * b, a * b};
+}
+
+template <class L>
+void prepare_pairs(const Rows& rows, const Band& shape, ElementGroup<L>& group) {
+  group.pairs.clear();
+  for (int row : group.row)
+    if (rows.start[row + 1] - rows.start[row] > 2) return;
+  for (int row : group.row) group.pairs.push_back(pair_row(rows, row, shape));
+}
+
+}  // namespace
+
 void prepare_scatter(System& system) {
   const Rows& rows = system.rows;
   const Band shape(system.freedoms, system.half);
@@ -51,6 +72,7 @@ void prepare_scatter(System& system) {
       }
     system.scatter.start.push_back(static_cast<int>(system.scatter.position.size()));
   }
+  std::apply([&](auto&... group) { (prepare_pairs(rows, shape, group), ...); }, system.groups);
 }
 
 Band initial_stiffness(const System& system) {

@@ -30,12 +30,22 @@ struct Scatter {
   std::vector<double> weight;
 };
 
+// A row of one or two freedoms, as nearly all are, and where its B^T k B goes in a band: the same as in Rows and
+// Scatter, laid out for the hot path. One freedom: the second is the first again, with coefficient and weights 0.
+struct PairRow {
+  int first = 0, second = 0;
+  double a = 0, b = 0;                           // deformation = a u[first] + b u[second]
+  int at_first = 0, at_second = 0, at_both = 0;  // places in a band
+  double a_a = 0, b_b = 0, a_b = 0;              // += weight k
+};
+
 // All elements of one law: element e of the group has laws[e], deforms by row[e] and is number id[e] of the system.
 template <class L>
 struct ElementGroup {
   std::vector<L> laws;
   std::vector<int> row;
   std::vector<int> id;
+  std::vector<PairRow> pairs;  // [element of the group]; empty when some row has more than two freedoms
 };
 
 // C's part of low rank: sum over j of weight[j] w_j w_j^T (modal damping). Empty for the other kinds of damping.
@@ -79,7 +89,7 @@ void for_each_group(const System& system, F f) {
 // Adds one element with this law on a row; a linear law also goes into K. Gives the element's number.
 int add_element(System& system, const Law& law, int row);
 
-// Fills `scatter` from the rows, once they are all there.
+// Fills `scatter` and the groups' pairs from the rows, once they are all there.
 void prepare_scatter(System& system);
 
 // K and the initial tangents of all elements, P-Delta included.

@@ -3,7 +3,7 @@
 
 #include "core/error.hpp"
 #include "integrators/auto_step.hpp"
-#include "integrators/one_run.hpp"
+#include "integrators/runs.hpp"
 #include "tests/integrators/support.hpp"
 
 namespace pilotis::test {
@@ -48,7 +48,7 @@ TEST(Failure, AStepThatDoesNotConvergeIsHalved) {
   const Marched run = marched(fast.system, fast.load, *scheme_of("average_acceleration"), 0.02, 1, {{}, {0.2}}, 1e-3);
   EXPECT_EQ(run.end.ending, MarchEnding::done);
   EXPECT_EQ(run.track.seen, 3) << "the start and two halves";
-  EXPECT_EQ(run.state.step, 1);
+  EXPECT_EQ(run.state.clock[0].step, 1);
 }
 
 TEST(Failure, WithoutHalvingsItSaysNotConverged) {

@@ -3,7 +3,7 @@
 // after gtest, which it needs
 #include <rapidcheck/gtest.h>
 
-#include "integrators/one_run.hpp"
+#include "integrators/runs.hpp"
 #include "tests/integrators/support.hpp"
 
 namespace pilotis::test {

@@ -1,7 +1,7 @@
 // One freedom against printed tables and closed forms.
 #include <random>
 
-#include "integrators/one_run.hpp"
+#include "integrators/runs.hpp"
 #include "tests/integrators/support.hpp"
 
 namespace pilotis::test {

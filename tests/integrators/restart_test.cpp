@@ -29,8 +29,8 @@ bool same_bits(const std::vector<T>& a, const std::vector<T>& b) {
 }
 
 bool same_bits(const State<double>& a, const State<double>& b) {
-  bool same = same_bits(a.u, b.u) && same_bits(a.v, b.v) && same_bits(a.a, b.a) && a.step == b.step &&
-              a.fraction == b.fraction && a.inner_step == b.inner_step;
+  bool same = same_bits(a.u, b.u) && same_bits(a.v, b.v) && same_bits(a.a, b.a) && a.clock[0].step == b.clock[0].step &&
+              a.clock[0].fraction == b.clock[0].fraction && a.inner_step == b.inner_step;
   [&]<std::size_t... I>(std::index_sequence<I...>) {
     ((same = same && same_bits(std::get<I>(a.memory), std::get<I>(b.memory))), ...);
   }
@@ -52,7 +52,7 @@ State<double> through_plain_numbers(const System& system, const State<double>& s
   pour(state.u, copy.u), pour(state.v, copy.v), pour(state.a, copy.a);
   [&]<std::size_t... I>(std::index_sequence<I...>) { (pour(std::get<I>(state.memory), std::get<I>(copy.memory)), ...); }
   (std::make_index_sequence<std::tuple_size_v<Memories<double>>>{});
-  copy.step = state.step, copy.fraction = state.fraction, copy.inner_step = state.inner_step;
+  copy.clock = state.clock, copy.inner_step = state.inner_step;
   return copy;
 }
 

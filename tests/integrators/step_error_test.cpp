@@ -6,7 +6,7 @@
 
 #include "core/response/peaks.hpp"
 #include "integrators/auto_step.hpp"
-#include "integrators/one_run.hpp"
+#include "integrators/runs.hpp"
 #include "tests/integrators/cvode_reference.hpp"
 #include "tests/integrators/support.hpp"
 

@@ -18,12 +18,18 @@ class Screen {
     values[layout.offset(*find_quantity(name)) + place - 1] = value;
   }
   bool show(Observer& observer, double time, bool whole_step = true) {
-    return observer.see({time, whole_step, state, nullptr, 0, values.data(), nullptr, nullptr});
+    const bool go_on =
+        observer.see({time, whole_step, state, nullptr, 0, values.data(), nullptr, nullptr, nullptr, previous_.data()});
+    previous_ = values;
+    return go_on;
   }
 
   ResponseLayout layout;
   std::vector<double> values;
   State<double> state;
+
+ private:
+  std::vector<double> previous_ = values;
 };
 
 // A state of a system, with everything read off it.
@@ -36,14 +42,17 @@ class Stage {
     load_.at(time, forces_.data());
     const double ground = load_.ground(time);
     reader_.read(state, forces_.data(), ground, values_.data());
-    return observer.see({time, true, state, forces_.data(), ground, values_.data(), reader_.acceleration().data(),
-                         reader_.damping_force().data()});
+    const bool go_on =
+        observer.see({time, true, state, forces_.data(), ground, values_.data(), reader_.acceleration().data(),
+                      reader_.forces().damping.data(), reader_.forces().deformation.data(), previous_.data()});
+    previous_ = values_;
+    return go_on;
   }
 
  private:
   const Load& load_;
   ResponseReader reader_;
-  std::vector<double> forces_, values_;
+  std::vector<double> forces_, values_, previous_ = values_;
 };
 
 }  // namespace pilotis::test

@@ -94,7 +94,7 @@ TEST(HistoryKeeper, KeepsEveryNthWholeStepOfWhatWasAsked) {
   const std::vector<const Quantity*> kept{find_quantity("drift"), find_quantity("base_shear")};
   HistoryKeeper keeper(screen.layout, kept, 3, 7);
   for (int i = 0; i <= 7; ++i) {
-    screen.state.step = i;
+    screen.state.clock[0].step = i;
     screen.set("drift", 1, i);
     screen.set("drift", 2, -i);
     screen.set("base_shear", 1, 100 + i);

@@ -116,7 +116,7 @@ TEST(ModalDampingMatrix, ForceIsTheFullMatrixTimesVelocity) {
   }
 }
 
-// (c_m M + c_c C + c_k K_t) x = b against a dense solve with the full C, tangents drawn at random. Each solve errs by
+// (M + c_c C + c_k K_t) x = b against a dense solve with the full C, tangents drawn at random. Each solve errs by
 // about n eps times the condition (Higham, from memory); the low-rank correction passes through the band part, whose
 // condition therefore counts as well.
 double condition(const Eigen::MatrixXd& a) {
@@ -126,9 +126,7 @@ double condition(const Eigen::MatrixXd& a) {
 
 Eigen::MatrixXd tangent_stiffness(const System& system, const std::vector<double>& tangent) {
   Band band = system.stiffness;
-  std::vector<double> entries(band.entries.size());
-  effective_band(system, 0.0, 0.0, 1.0, tangent.data(), entries.data());
-  band.entries = entries;
+  add_tangents(system, 1.0, tangent.data(), band.entries.data());
   return dense(band);
 }
 
@@ -146,12 +144,12 @@ TEST(EffectiveSolve, AgreesWithADenseSolve) {
       for (double& k : tangent) k = share(dice) * 1e8;
       for (double& value : x) value = entry(dice);
       const Eigen::VectorXd b = Eigen::Map<Eigen::VectorXd>(x.data(), n);
-      const double dt = 0.01, c_m = 4 / (dt * dt), c_c = 2 / dt, c_k = 1;  // average acceleration
+      const double dt = 0.01, c_c = dt / 2, c_k = dt * dt / 4;  // average acceleration
       EffectiveSolve<double> solve(system);
-      solve.factor(system, c_m, c_c, c_k, tangent.data());
+      solve.factor(system, c_c, c_k, tangent.data());
       solve.solve(system, x.data());
       const Eigen::MatrixXd band =
-          c_m * mass_matrix(system) + c_c * dense(system.damping) + c_k * tangent_stiffness(system, tangent);
+          mass_matrix(system) + c_c * dense(system.damping) + c_k * tangent_stiffness(system, tangent);
       const Eigen::MatrixXd full = band + c_c * (dense_damping(system) - dense(system.damping));
       const Eigen::VectorXd expected = full.ldlt().solve(b);
       const double tolerance = 8 * n * 2.3e-16 * (condition(full) + condition(band)) * expected.norm();
@@ -168,8 +166,8 @@ TEST(EffectiveSolve, FactorsAgainWhenTheStepChanges) {
   for (const double dt : {0.01, 0.01, 0.005, 0.02}) {
     EffectiveSolve<double> fresh(system);
     std::vector<double> x{1e3, -2e3}, y = x, none(system.elements);
-    kept.factor(system, 4 / (dt * dt), 2 / dt, 1, none.data());
-    fresh.factor(system, 4 / (dt * dt), 2 / dt, 1, none.data());
+    kept.factor(system, dt / 2, dt * dt / 4, none.data());
+    fresh.factor(system, dt / 2, dt * dt / 4, none.data());
     kept.solve(system, x.data());
     fresh.solve(system, y.data());
     EXPECT_EQ(x, y) << dt;
@@ -188,11 +186,11 @@ TEST(EffectiveSolve, PacksGiveTheScalarBits) {
     for (int e = 0; e < system.elements; ++e) set_lane(tangent[e], w, tangents[w][e] = 1e7 * (1 + w + e));
     for (int i = 0; i < 5; ++i) set_lane(x[i], w, xs[w][i] = 1e3 * (i - w - 0.5));
     EffectiveSolve<double> solve(system);
-    solve.factor(system, 4e4, 200, 1, tangents[w].data());
+    solve.factor(system, 0.005, 2.5e-5, tangents[w].data());
     solve.solve(system, xs[w].data());
   }
   EffectiveSolve<R> solve(system);
-  solve.factor(system, 4e4, 200, 1, tangent.data());
+  solve.factor(system, splat<R>(0.005), splat<R>(2.5e-5), tangent.data());
   solve.solve(system, x.data());
   for (int w = 0; w < 4; ++w)
     for (int i = 0; i < 5; ++i) EXPECT_EQ(lane(x[i], w), xs[w][i]);

@@ -46,7 +46,12 @@ ordered_json motions_json(const Study& study) {
   for (const Motion& motion : study.motions) {
     ordered_json json = {{"name", motion.name},         {"file", motion.file},     {"format", motion.format},
                          {"unit_in_file", motion.unit}, {"factor", motion.factor}, {"digest", motion.digest}};
-    add_record(motion.record, json);
+    json["samples"] = motion.samples;
+    json["step_s"] = motion.step;
+    json["first_sample_at_s"] = motion.first_sample_at;
+    json["last_sample_at_s"] = motion.duration();
+    json["peak_m_per_s2"] = motion.peak.value;
+    json["peak_at_s"] = motion.peak.time;
     list.push_back(json);
   }
   return list;
@@ -101,10 +106,10 @@ nlohmann::ordered_json study_json(const Study& study) {
            {{"force", study.units.force}, {"length", study.units.length}, {"mass", study.units.name(Dimension::mass)}}},
           {"building",
            {{"kind", "stick"},
-            {"damping", damping_text(study.building.damping)},
-            {"p_delta", study.building.p_delta},
-            {"gravity_m_per_s2", study.building.gravity},
-            {"stories", stories_json(study.building)}}},
+            {"damping", damping_text(study.buildings[0].stick.damping)},
+            {"p_delta", study.buildings[0].stick.p_delta},
+            {"gravity_m_per_s2", study.buildings[0].stick.gravity},
+            {"stories", stories_json(study.buildings[0].stick)}}},
           {"motions", motions_json(study)},
           {"factors", study.factors},
           {"loads", loads_json(study)},

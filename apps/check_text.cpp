@@ -51,10 +51,10 @@ std::string stories_table(const Study& study) {
                    {titled("floor mass", Dimension::mass, units)},
                    {titled("dashpot", Dimension::dashpot, units)},
                    {"spring", Align::left}});
-  for (std::size_t i = 0; i < study.building.stories.size(); ++i) {
-    const Story& story = study.building.stories[i];
+  for (std::size_t i = 0; i < study.buildings[0].stick.stories.size(); ++i) {
+    const Story& story = study.buildings[0].stick.stories[i];
     table.add_row({fmt::format("{}", i + 1), story.label, in_units(story.height, Dimension::length, units),
-                   in_units(story.mass * study.building.gravity, Dimension::force, units),
+                   in_units(story.mass * study.buildings[0].stick.gravity, Dimension::force, units),
                    in_units(story.mass, Dimension::mass, units), in_units(story.dashpot, Dimension::dashpot, units),
                    law_text(story.spring, units)});
   }
@@ -62,7 +62,7 @@ std::string stories_table(const Study& study) {
 }
 
 std::string building_text(const Study& study) {
-  const Stick& stick = study.building;
+  const Stick& stick = study.buildings[0].stick;
   double height = 0, mass = 0;
   for (const Story& story : stick.stories) {
     height += story.height;
@@ -90,11 +90,10 @@ std::string motions_text(const Study& study) {
                    {"format", Align::left},
                    {"file", Align::left}});
   for (const Motion& motion : study.motions) {
-    const PeakSample peak = peak_of(motion.record);
-    table.add_row({motion.name, fmt::format("{}", motion.record.samples.size()), number(motion.record.step),
-                   number(motion.record.duration()), fmt::format("{:.4g}", peak.value / standard_gravity),
-                   fmt::format("{:.4g}", peak.value), number(peak.time), number(motion.factor), motion.unit,
-                   motion.format, motion.file});
+    const PeakSample& peak = motion.peak;
+    table.add_row({motion.name, fmt::format("{}", motion.samples), number(motion.step), number(motion.duration()),
+                   fmt::format("{:.4g}", peak.value / standard_gravity), fmt::format("{:.4g}", peak.value),
+                   number(peak.time), number(motion.factor), motion.unit, motion.format, motion.file});
   }
   return fmt::format("motions: {} (peaks with the motion's own factor)\n{}", study.motions.size(), table.text());
 }

@@ -67,7 +67,7 @@ std::string shapes_table(const BuildingSummary& building, int shown) {
 
 void print_text(const Study& study, const BuildingSummary& building, int shapes) {
   fmt::print("{}: modes at the initial stiffness{}\n\n{}\n", study.title,
-             study.building.p_delta ? ", P-Delta included" : "", modes_table(building, study.units));
+             study.buildings[0].stick.p_delta ? ", P-Delta included" : "", modes_table(building, study.units));
   fmt::print("total mass {:.5g} {}; shapes have the largest magnitude 1 and go with the participation factors\n\n{}",
              total_mass(building) / study.units.factor(Dimension::mass), study.units.name(Dimension::mass),
              shapes_table(building, shapes));
@@ -75,7 +75,7 @@ void print_text(const Study& study, const BuildingSummary& building, int shapes)
 
 void print_json(const Study& study, const BuildingSummary& building) {
   Json json{{"title", study.title},
-            {"p_delta", study.building.p_delta},
+            {"p_delta", study.buildings[0].stick.p_delta},
             {"total_mass_kg", total_mass(building)},
             {"modes", Json::array()}};
   for (const Mode& mode : building.modes)
@@ -89,7 +89,8 @@ void print_json(const Study& study, const BuildingSummary& building) {
 
 void show_modes(const Options& options) {
   const Study study = read_study(options.study, scheme_catalogue());
-  const BuildingSummary building = summary_of(study.building, assemble(study.building), study.title);
+  const BuildingSummary building =
+      summary_of(study.buildings[0].stick, assemble(study.buildings[0].stick), study.title);
   if (options.json)
     print_json(study, building);
   else

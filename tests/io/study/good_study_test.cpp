@@ -37,7 +37,7 @@ TEST_F(FullStudy, HeadingAndUnits) {
 }
 
 TEST_F(FullStudy, Stories) {
-  const auto& stories = study_.building.stories;
+  const auto& stories = study_.buildings[0].stick.stories;
   ASSERT_EQ(stories.size(), 3u);
   EXPECT_EQ(stories[0].label, "ground story");
   EXPECT_DOUBLE_EQ(stories[0].height, 4.5);
@@ -60,13 +60,13 @@ TEST_F(FullStudy, Stories) {
 }
 
 TEST_F(FullStudy, DampingAndPDelta) {
-  const auto& damping = std::get<RayleighByModes>(study_.building.damping);
+  const auto& damping = std::get<RayleighByModes>(study_.buildings[0].stick.damping);
   EXPECT_EQ(damping.ratio_first, 0.05);
   EXPECT_EQ(damping.ratio_second, 0.03);
   EXPECT_EQ(damping.first, 1);
   EXPECT_EQ(damping.second, 3);
-  EXPECT_TRUE(study_.building.p_delta);
-  EXPECT_EQ(study_.building.gravity, 9.80665);
+  EXPECT_TRUE(study_.buildings[0].stick.p_delta);
+  EXPECT_EQ(study_.buildings[0].stick.gravity, 9.80665);
 }
 
 TEST_F(FullStudy, Motions) {
@@ -76,15 +76,21 @@ TEST_F(FullStudy, Motions) {
   EXPECT_EQ(study_.motions[2].name, "site");
   const Motion& b = study_.motions[1];
   EXPECT_EQ(b.unit, "g");
-  EXPECT_EQ(b.record.step, 0.01);
-  ASSERT_EQ(b.record.samples.size(), 3u);
-  EXPECT_DOUBLE_EQ(b.record.samples[1], -0.2 * 9.80665);
+  EXPECT_EQ(b.step, 0.01);
+  EXPECT_EQ(b.samples, 3);
+  EXPECT_DOUBLE_EQ(b.peak.value, -0.2 * 9.80665);
+  EXPECT_DOUBLE_EQ(b.peak.time, 0.01);
+  EXPECT_DOUBLE_EQ(b.duration(), 0.02);
   const Motion& site = study_.motions[2];
   EXPECT_EQ(site.factor, -1.5);
-  EXPECT_DOUBLE_EQ(site.record.step, 0.005);
-  EXPECT_DOUBLE_EQ(site.record.first_sample_at, 0.005);
-  EXPECT_DOUBLE_EQ(site.record.samples[1], 0.3);  // -20 cm/s2 times -1.5
-  EXPECT_EQ(site.digest, digest_of(site.record));
+  EXPECT_DOUBLE_EQ(site.step, 0.005);
+  EXPECT_DOUBLE_EQ(site.first_sample_at, 0.005);
+  EXPECT_DOUBLE_EQ(site.peak.value, 0.3);  // -20 cm/s2 times -1.5
+  const auto samples = study_.motions.samples(2);
+  ASSERT_EQ(samples->samples.size(), 3u);
+  EXPECT_DOUBLE_EQ(samples->samples[0], -0.15);
+  EXPECT_DOUBLE_EQ(samples->samples[1], 0.3);
+  EXPECT_EQ(site.digest, digest_of(*samples));
   EXPECT_EQ(site.file, (folder_.path() / "site.txt").string());
   EXPECT_EQ(study_.factors, (std::vector<double>{0.5, 1.0}));
 }
@@ -148,14 +154,14 @@ TEST(GoodStudy, LeastAndItsDefaults) {
   const Folder folder;
   const Study study = read(folder, least_study);
   EXPECT_EQ(study.title, "study");  // the file's own name
-  const Story& story = study.building.stories.at(0);
+  const Story& story = study.buildings[0].stick.stories.at(0);
   EXPECT_DOUBLE_EQ(story.height, 144 * 0.0254);
   // 386.0886 in/s2 is standard gravity to seven digits, so this weighs 1 kip s2/in: 4448.222 N / 0.0254 m (NIST SP
   // 811).
   EXPECT_NEAR(story.mass, 4448.222 / 0.0254, 0.05);
   EXPECT_NEAR(std::get<Linear>(story.spring).stiffness, 100 * 175126.8, 100 * 0.05);
-  EXPECT_TRUE(std::holds_alternative<NoDamping>(study.building.damping));
-  EXPECT_FALSE(study.building.p_delta);
+  EXPECT_TRUE(std::holds_alternative<NoDamping>(study.buildings[0].stick.damping));
+  EXPECT_FALSE(study.buildings[0].stick.p_delta);
   EXPECT_DOUBLE_EQ(study.initial_displacement.at(0), 0.0254);
   EXPECT_TRUE(study.initial_velocity.empty());
   EXPECT_TRUE(study.motions.empty());
@@ -176,7 +182,7 @@ TEST(GoodStudy, WithoutUnitsIsSiAndSaysSo) {
   text = test::with_line(text, "force", "");
   text = test::with_line(text, "length", "");
   const Study study = read(folder, text);
-  EXPECT_DOUBLE_EQ(study.building.stories[0].height, 144);
+  EXPECT_DOUBLE_EQ(study.buildings[0].stick.stories[0].height, 144);
   ASSERT_EQ(study.notes.size(), 1u);
   EXPECT_NE(study.notes[0].find("N, m, s"), std::string::npos);
 }
@@ -185,15 +191,15 @@ TEST(GoodStudy, MassUnitAndGravityOfItsOwn) {
   const Folder folder;
   std::string text = test::with_line(least_study, "length", "length = \"in\"\nmass = \"slug\"");
   const Study by_mass = read(folder, test::with_line(text, "weight", "mass = 2"));
-  EXPECT_NEAR(by_mass.building.stories[0].mass, 2 * 14.59390, 2 * 5e-6);  // slug, NIST SP 811
+  EXPECT_NEAR(by_mass.buildings[0].stick.stories[0].mass, 2 * 14.59390, 2 * 5e-6);  // slug, NIST SP 811
   text = test::with_line(least_study, "kind", "kind = \"stick\"\ngravity = \"10 m/s2\"");
-  EXPECT_NEAR(read(folder, text).building.stories[0].mass, 386.0886 * 4448.222 / 10, 0.02);
+  EXPECT_NEAR(read(folder, text).buildings[0].stick.stories[0].mass, 386.0886 * 4448.222 / 10, 0.02);
 }
 
 TEST(GoodStudy, EveryKindOfDamping) {
   const Folder folder;
   const auto damping = [&](const std::string& value) {
-    return read(folder, test::with_line(least_study, "damping", "damping = " + value)).building.damping;
+    return read(folder, test::with_line(least_study, "damping", "damping = " + value)).buildings[0].stick.damping;
   };
   EXPECT_EQ(std::get<ModalDamping>(damping("{ kind = \"modal\", ratio = \"5 %\" }")).ratios, std::vector<double>{0.05});
   EXPECT_EQ(std::get<ModalDamping>(damping("{ kind = \"modal\", ratio = [0.02] }")).ratios, std::vector<double>{0.02});
@@ -207,7 +213,7 @@ TEST(GoodStudy, DampingInATableOfItsOwn) {
   const Folder folder;
   const std::string text =
       test::with_line(least_study, "damping", "[building.damping]\nkind = \"modal\"\nratio = 0.02");
-  EXPECT_EQ(std::get<ModalDamping>(read(folder, text).building.damping).ratios, std::vector<double>{0.02});
+  EXPECT_EQ(std::get<ModalDamping>(read(folder, text).buildings[0].stick.damping).ratios, std::vector<double>{0.02});
 }
 
 TEST(GoodStudy, ForceFromAFile) {
@@ -265,7 +271,7 @@ TEST(GoodStudy, EveryLawWithItsParameters) {
                    : parameter.key == "cracking_shear"    ? "10"
                                                           : "100");
     const Study study = read(folder, test::with_line(least_study, "spring", spring + " }"));
-    EXPECT_EQ(law_name(study.building.stories[0].spring), method.name);
+    EXPECT_EQ(law_name(study.buildings[0].stick.stories[0].spring), method.name);
   }
 }
 

@@ -52,7 +52,8 @@ StudyBuilding read_building_file(const fs::path& file, std::vector<std::string>&
 }
 
 bool is_building_file(const fs::path& file) {
-  const Node tree = parse_toml(read_whole(file, wanted), file.string());
+  const Node tree =
+      parse_toml(read_whole(file, "the path of a study or building file (TOML) is needed"), file.string());
   const bool building = tree.find("building") != nullptr || tree.find("story") != nullptr;
   return building && std::none_of(tree.entries.begin(), tree.entries.end(), only_of_a_study);
 }

@@ -55,6 +55,9 @@ MarchSettings read_march(TableReader table, std::span<const Method> schemes);
 // What holds without [march]: the first scheme of the catalogue with its defaults.
 MarchSettings default_march(std::span<const Method> schemes);
 
+// The quantities that can be kept, by name.
+std::vector<std::string_view> quantity_names();
+
 // [keep]
 KeepSettings read_keep(TableReader table);
 

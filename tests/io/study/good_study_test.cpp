@@ -237,6 +237,46 @@ TEST(GoodStudy, HistoriesAllAndNone) {
   EXPECT_EQ(kept("[]"), 0u);
 }
 
+TEST(GoodStudy, FormatOfHistories) {
+  const Folder folder;
+  const auto format = [&](const std::string& keys) {
+    return read(folder, least_study + "[keep]\nhistories = \"all\"\n" + keys).keep.format;
+  };
+  EXPECT_FALSE(format("").single);
+  EXPECT_EQ(format("").compression, 4);
+  EXPECT_TRUE(format("precision = \"single\"\n").single);
+  EXPECT_FALSE(format("precision = \"double\"\n").single);
+  EXPECT_EQ(format("compression = 0\n").compression, 0);
+  EXPECT_EQ(format("compression = 9\n").compression, 9);
+}
+
+// Arithmetic and geometric series; a factor is off by a rounding or two.
+TEST(GoodStudy, FactorsAsARange) {
+  const Folder folder;
+  folder.write("one.txt", "0.1\n0.2\n");
+  const auto factors = [&](const std::string& value, const std::string& more = "") {
+    return read(folder, least_study + "[suite]\nunits = \"g\"\nstep = 0.01\nmotions = [\"one.txt\"]\nfactors = " +
+                            value + "\n" + more)
+        .factors;
+  };
+  const std::vector<double> linear = factors("{ from = 0.1, to = 2.0, count = 20 }");
+  ASSERT_EQ(linear.size(), 20u);
+  EXPECT_EQ(linear.front(), 0.1);
+  EXPECT_EQ(linear.back(), 2.0);
+  for (int i = 0; i < 20; ++i) EXPECT_NEAR(linear[i], 0.1 * (i + 1), 4e-16 * (i + 1)) << i;
+  EXPECT_EQ(factors("{ from = 1, to = 3, count = 3, spacing = \"linear\" }"), (std::vector<double>{1, 2, 3}));
+  const std::vector<double> log = factors("{ from = 0.1, to = 1.6, count = 5, spacing = \"log\" }");
+  ASSERT_EQ(log.size(), 5u);
+  EXPECT_EQ(log.front(), 0.1);
+  EXPECT_EQ(log.back(), 1.6);
+  for (int i = 0; i < 5; ++i) EXPECT_NEAR(log[i], 0.1 * (1 << i), 1e-15 * (1 << i)) << i;
+  EXPECT_EQ(factors("{ from = 0.5, to = 2, count = 2 }"), (std::vector<double>{0.5, 2}));
+  // A limit may name one of them as a person would write it.
+  const std::string limit =
+      "[[limit]]\nquantity = \"drift_ratio\"\nstatistic = \"max\"\nvalue = 0.02\nsource = \"x\"\nfactors = [0.3]\n";
+  EXPECT_NO_THROW(factors("{ from = 0.1, to = 2.0, count = 20 }", limit));
+}
+
 TEST(GoodStudy, NamesOfMotionsAreMadeUniqueByTheirExtension) {
   const Folder folder;
   folder.write("one.ew", "0.1\n0.2\n");

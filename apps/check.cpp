@@ -1,4 +1,4 @@
-// `pilotis check`: what the program understood of a study or a record, before anything is run.
+// `pilotis check`: what the program understood of a study, a building file or a record, before anything is run.
 #include <fmt/format.h>
 
 #include <cstdio>
@@ -9,6 +9,7 @@
 #include "core/error.hpp"
 #include "integrators/catalogue.hpp"
 #include "io/records/file.hpp"
+#include "io/study/building_file.hpp"
 
 namespace pilotis {
 
@@ -30,8 +31,8 @@ struct Told {
   std::vector<std::string> notes;
 };
 
-// A study by its name, or by a [building] or [[story]] line.
-bool is_study(const fs::path& file) {
+// A study or a building file by its name, or by a [building] or [[story]] line.
+bool is_toml(const fs::path& file) {
   if (file.extension() == ".toml") return true;
   const std::string content = content_of(file);
   return content.starts_with("[building]") || content.starts_with("[[story]]") ||
@@ -64,10 +65,20 @@ RecordHints hints_of(const Options& options) {
   return hints;
 }
 
-Told told_of_study(const fs::path& file, const RecordHints& hints) {
+Told told_of_building_file(const fs::path& file) {
+  Told told;
+  const StudyBuilding building = read_building_file(file, told.notes);
+  told.text = building_file_text(building);
+  told.json = building_file_json(building);
+  told.json["notes"] = told.notes;
+  return told;
+}
+
+Told told_of_toml(const fs::path& file, const RecordHints& hints) {
   if (hints.unit || hints.step || hints.first_sample_at)
-    throw input_error(file.string(), "--units, --step and --first-sample-at are for records, and this is a study",
+    throw input_error(file.string(), "--units, --step and --first-sample-at are for records, and this is none",
                       "state them in the [suite] of the study");
+  if (is_building_file(file)) return told_of_building_file(file);
   const Study study = read_study(file, scheme_catalogue());
   return {study_text(study), study_json(study), study.notes};
 }
@@ -95,7 +106,7 @@ int check(const Options& options) {
   nlohmann::ordered_json list = nlohmann::ordered_json::array();
   for (const std::string& file : options.files) {
     try {
-      const Told told = is_study(file) ? told_of_study(file, hints) : told_of_record(file, hints);
+      const Told told = is_toml(file) ? told_of_toml(file, hints) : told_of_record(file, hints);
       text += (text.empty() ? "" : "\n") + told.text;
       list.push_back(told.json);
       for (const std::string& note : told.notes) fmt::print(stderr, "note: {}\n", note);
@@ -112,9 +123,11 @@ int check(const Options& options) {
 }  // namespace
 
 void add_check(CLI::App& app, int& status) {
-  CLI::App* command = app.add_subcommand("check", "tell what is understood of a study or a record, without running it");
+  CLI::App* command = app.add_subcommand(
+      "check", "tell what is understood of a study, a building file or a record, without running it");
   auto options = std::make_shared<Options>();
-  command->add_option("FILE", options->files, "study files (TOML) and records of ground motion")->required();
+  command->add_option("FILE", options->files, "study files and building files (TOML), records of ground motion")
+      ->required();
   command->add_option("--units", options->unit,
                       "acceleration unit of a record that does not state it: g, m/s2, cm/s2, gal, ...");
   command->add_option("--step", options->step, "time step in s of a record that does not state it");

@@ -31,6 +31,32 @@ ordered_json stories_json(const Stick& stick) {
   return list;
 }
 
+ordered_json building_json(const StudyBuilding& building) {
+  const Stick& stick = building.stick;
+  const BuildingFacts facts = facts_of(building);
+  return {{"name", building.name},
+          {"title", building.title},
+          {"file", building.file.string()},
+          {"kind", "stick"},
+          {"height_m", facts.height},
+          {"weight_N", facts.weight},
+          {"first_periods_s", facts.first_periods},
+          {"damping", damping_text(stick.damping)},
+          {"p_delta", stick.p_delta},
+          {"gravity_m_per_s2", stick.gravity},
+          {"stories", stories_json(stick)}};
+}
+
+ordered_json buildings_json(const Study& study) {
+  ordered_json list = ordered_json::array();
+  for (const StudyBuilding& building : study.buildings) list.push_back(building_json(building));
+  return list;
+}
+
+ordered_json units_json(const StudyUnits& units) {
+  return {{"force", units.force}, {"length", units.length}, {"mass", units.name(Dimension::mass)}};
+}
+
 void add_record(const Accelerogram& record, ordered_json& json) {
   const PeakSample peak = peak_of(record);
   json["samples"] = record.samples.size();
@@ -46,7 +72,12 @@ ordered_json motions_json(const Study& study) {
   for (const Motion& motion : study.motions) {
     ordered_json json = {{"name", motion.name},         {"file", motion.file},     {"format", motion.format},
                          {"unit_in_file", motion.unit}, {"factor", motion.factor}, {"digest", motion.digest}};
-    add_record(motion.record, json);
+    json["samples"] = motion.samples;
+    json["step_s"] = motion.step;
+    json["first_sample_at_s"] = motion.first_sample_at;
+    json["last_sample_at_s"] = motion.duration();
+    json["peak_m_per_s2"] = motion.peak.value;
+    json["peak_at_s"] = motion.peak.time;
     list.push_back(json);
   }
   return list;
@@ -97,22 +128,28 @@ nlohmann::ordered_json study_json(const Study& study) {
   return {{"file", study.file.string()},
           {"kind", "study"},
           {"title", study.title},
-          {"units",
-           {{"force", study.units.force}, {"length", study.units.length}, {"mass", study.units.name(Dimension::mass)}}},
-          {"building",
-           {{"kind", "stick"},
-            {"damping", damping_text(study.building.damping)},
-            {"p_delta", study.building.p_delta},
-            {"gravity_m_per_s2", study.building.gravity},
-            {"stories", stories_json(study.building)}}},
+          {"units", units_json(study.units)},
+          {"buildings", buildings_json(study)},
           {"motions", motions_json(study)},
           {"factors", study.factors},
           {"loads", loads_json(study)},
           {"march", march_json(study.march)},
-          {"keep", {{"histories", histories}, {"every", study.keep.every}}},
+          {"keep",
+           {{"histories", histories},
+            {"every", study.keep.every},
+            {"precision", study.keep.format.single ? "single" : "double"},
+            {"compression", study.keep.format.compression}}},
           {"limits", limits_json(study)},
           {"runs", run_count(study)},
           {"notes", study.notes}};
+}
+
+nlohmann::ordered_json building_file_json(const StudyBuilding& building) {
+  return {{"file", building.file.string()},
+          {"kind", "building"},
+          {"title", building.title},
+          {"units", units_json(building.units)},
+          {"building", building_json(building)}};
 }
 
 nlohmann::ordered_json record_json(const std::string& file, const RecordFile& record) {

@@ -6,7 +6,7 @@
 #include "apps/check_show.hpp"
 #include "apps/engine.hpp"
 #include "apps/text_table.hpp"
-#include "core/laws/law_values.hpp"
+#include "apps/units_text.hpp"
 #include "integrators/catalogue.hpp"
 
 namespace pilotis {
@@ -14,67 +14,6 @@ namespace pilotis {
 namespace {
 
 using Align = TextTable::Align;
-
-std::string number(double value) { return fmt::format("{:.6g}", value); }
-
-// In the study's unit, without its name.
-std::string in_units(double si, Dimension dimension, const StudyUnits& units) {
-  return number(si / units.factor(dimension));
-}
-
-// In the study's unit, with its name.
-std::string with_unit(double si, Dimension dimension, const StudyUnits& units) {
-  const std::string value = in_units(si, dimension, units);
-  return dimension == Dimension::none ? value : value + " " + units.name(dimension);
-}
-
-std::string titled(const std::string& title, Dimension dimension, const StudyUnits& units) {
-  return fmt::format("{} ({})", title, units.name(dimension));
-}
-
-std::string law_text(const Law& law, const StudyUnits& units) {
-  const Method& method = law_method(law);
-  const std::vector<double> values = law_values(law);
-  std::vector<std::string> parts;
-  for (std::size_t i = 0; i < values.size(); ++i)
-    parts.push_back(
-        fmt::format("{} {}", method.parameters[i].key, with_unit(values[i], method.parameters[i].dimension, units)));
-  return fmt::format("{}: {}", method.name, fmt::join(parts, ", "));
-}
-
-std::string stories_table(const Study& study) {
-  const StudyUnits& units = study.units;
-  TextTable table({{"story"},
-                   {"label", Align::left},
-                   {titled("height", Dimension::length, units)},
-                   {titled("floor weight", Dimension::force, units)},
-                   {titled("floor mass", Dimension::mass, units)},
-                   {titled("dashpot", Dimension::dashpot, units)},
-                   {"spring", Align::left}});
-  for (std::size_t i = 0; i < study.building.stories.size(); ++i) {
-    const Story& story = study.building.stories[i];
-    table.add_row({fmt::format("{}", i + 1), story.label, in_units(story.height, Dimension::length, units),
-                   in_units(story.mass * study.building.gravity, Dimension::force, units),
-                   in_units(story.mass, Dimension::mass, units), in_units(story.dashpot, Dimension::dashpot, units),
-                   law_text(story.spring, units)});
-  }
-  return table.text();
-}
-
-std::string building_text(const Study& study) {
-  const Stick& stick = study.building;
-  double height = 0, mass = 0;
-  for (const Story& story : stick.stories) {
-    height += story.height;
-    mass += story.mass;
-  }
-  const StudyUnits& units = study.units;
-  return fmt::format("building: stick, {} {}, height {}, weight {}, P-Delta {}, gravity {:.6g} m/s2\n{}damping: {}\n",
-                     stick.stories.size(), stick.stories.size() == 1 ? "story" : "stories",
-                     with_unit(height, Dimension::length, units),
-                     with_unit(mass * stick.gravity, Dimension::force, units), stick.p_delta ? "on" : "off",
-                     stick.gravity, stories_table(study), damping_text(stick.damping));
-}
 
 std::string motions_text(const Study& study) {
   if (study.motions.empty()) return "motions: none\n";
@@ -90,11 +29,10 @@ std::string motions_text(const Study& study) {
                    {"format", Align::left},
                    {"file", Align::left}});
   for (const Motion& motion : study.motions) {
-    const PeakSample peak = peak_of(motion.record);
-    table.add_row({motion.name, fmt::format("{}", motion.record.samples.size()), number(motion.record.step),
-                   number(motion.record.duration()), fmt::format("{:.4g}", peak.value / standard_gravity),
-                   fmt::format("{:.4g}", peak.value), number(peak.time), number(motion.factor), motion.unit,
-                   motion.format, motion.file});
+    const PeakSample& peak = motion.peak;
+    table.add_row({motion.name, fmt::format("{}", motion.samples), shown(motion.step), shown(motion.duration()),
+                   fmt::format("{:.4g}", peak.value / standard_gravity), fmt::format("{:.4g}", peak.value),
+                   shown(peak.time), shown(motion.factor), motion.unit, motion.format, motion.file});
   }
   return fmt::format("motions: {} (peaks with the motion's own factor)\n{}", study.motions.size(), table.text());
 }
@@ -142,8 +80,9 @@ std::string keep_text(const KeepSettings& keep) {
   if (keep.histories.empty()) return "histories kept: none\n";
   std::vector<std::string_view> names;
   for (const Quantity* quantity : keep.histories) names.push_back(quantity->name);
-  return fmt::format("histories kept: {}; every {}\n", fmt::join(names, ", "),
-                     keep.every == 1 ? "step" : fmt::format("{} steps", keep.every));
+  return fmt::format("histories kept: {}; every {}; {} precision, compression {}\n", fmt::join(names, ", "),
+                     keep.every == 1 ? "step" : fmt::format("{} steps", keep.every),
+                     keep.format.single ? "single" : "double", keep.format.compression);
 }
 
 std::string limit_text(const Limit& limit, const StudyUnits& units) {
@@ -151,6 +90,17 @@ std::string limit_text(const Limit& limit, const StudyUnits& units) {
   return limit.quantity->dimension == Dimension::acceleration
              ? fmt::format("{} ({:.6g} g)", text, limit.value / standard_gravity)
              : text;
+}
+
+std::string units_text(const StudyUnits& units) {
+  return fmt::format("units of bare numbers: force {}, length {}, mass {}, time s\n", units.force, units.length,
+                     units.name(Dimension::mass));
+}
+
+std::string runs_text(const Study& study) {
+  if (study.motions.empty()) return fmt::format("runs: {}\n", run_count(study));
+  return fmt::format("runs: {} (buildings {} x motions {} x factors {})\n", run_count(study), study.buildings.size(),
+                     study.motions.size(), study.factors.size());
 }
 
 std::string limits_text(const Study& study) {
@@ -174,14 +124,15 @@ std::string statistic_text(const Limit& limit) {
 }
 
 std::string study_text(const Study& study) {
-  const StudyUnits& units = study.units;
   std::string text = fmt::format("{}: study \"{}\"\n", study.file.string(), study.title);
-  text += fmt::format("units of bare numbers: force {}, length {}, mass {}, time s\n", units.force, units.length,
-                      units.name(Dimension::mass));
-  text += building_text(study) + motions_text(study) + loads_text(study);
+  text += units_text(study.units) + buildings_text(study) + motions_text(study) + loads_text(study);
   text += fmt::format("factors: {:g}\n", fmt::join(study.factors, ", "));
-  text += march_text(study.march) + keep_text(study.keep) + limits_text(study);
-  return text + fmt::format("runs: {}\n", run_count(study));
+  return text + march_text(study.march) + keep_text(study.keep) + limits_text(study) + runs_text(study);
+}
+
+std::string building_file_text(const StudyBuilding& building) {
+  return fmt::format("{}: building \"{}\"\n{}{}", building.file.string(), building.title, units_text(building.units),
+                     building_text(building, building.units));
 }
 
 std::string record_text(const std::string& file, const RecordFile& record) {

@@ -15,12 +15,7 @@ namespace pilotis {
 namespace {
 
 MotionSummary summary_of(const Motion& motion) {
-  return {motion.name,
-          motion.file,
-          motion.digest,
-          motion.record.step,
-          static_cast<long>(motion.record.samples.size()),
-          peak_of(motion.record).value};
+  return {motion.name, motion.file, motion.digest, motion.step, motion.samples, motion.peak.value};
 }
 
 // What is the same for every run of a study.
@@ -32,8 +27,11 @@ struct Setting {
 };
 
 Setting prepared(const Study& study) {
-  Setting setting{study, assemble(study.building), {}, {}};
-  setting.building = summary_of(study.building, setting.system, study.title);
+  if (study.buildings.size() > 1)
+    throw input_error(study.file.string(), "several buildings cannot be run yet", "give one");
+  const Stick& stick = study.buildings[0].stick;
+  Setting setting{study, assemble(stick), {}, {}};
+  setting.building = summary_of(stick, setting.system, study.title);
   const MarchSettings& march = study.march;
   RunPlan& plan = setting.plan;
   plan.scheme = make_scheme(march.scheme.name, march.scheme.values, "march.scheme");
@@ -50,16 +48,16 @@ Setting prepared(const Study& study) {
 }
 
 StepChoice step_for(const Setting& setting, const Motion* motion) {
-  const StepNeeds needs{setting.building.modes, motion != nullptr ? motion->record.step : 0.0,
-                        !setting.system.is_linear()};
+  const StepNeeds needs{setting.building.modes, motion != nullptr ? motion->step : 0.0, !setting.system.is_linear()};
   const Traits traits = setting.plan.scheme->traits();
   return setting.study.march.step
              ? check_step(traits, needs, *setting.study.march.step, setting.plan.scheme->description())
              : choose_step(traits, needs);
 }
 
-RunResult run(const Setting& setting, const Motion* motion, double factor) {
-  const Load load(setting.system, motion != nullptr ? &motion->record : nullptr, factor, setting.study.forces);
+// `record` holds the samples of `motion`; both null without ground motion.
+RunResult run(const Setting& setting, const Motion* motion, const Accelerogram* record, double factor) {
+  const Load load(setting.system, record, factor, setting.study.forces);
   const StepChoice choice = step_for(setting, motion);
   RunPlan plan = setting.plan;
   plan.step = choice.step;
@@ -75,7 +73,8 @@ RunResult run(const Setting& setting, const Motion* motion, double factor) {
 }  // namespace
 
 long run_count(const Study& study) {
-  return study.motions.empty() ? 1 : static_cast<long>(study.motions.size() * study.factors.size());
+  const std::size_t of_each = study.motions.empty() ? 1 : study.motions.size() * study.factors.size();
+  return static_cast<long>(study.buildings.size() * of_each);
 }
 
 StudyRun run_study(const Study& study, const RunWatch& watch) {
@@ -90,12 +89,12 @@ StudyRun run_study(const Study& study, const RunWatch& watch) {
     return !done.stopped;
   };
   if (study.motions.empty()) {
-    keep(run(setting, nullptr, 1));
+    keep(run(setting, nullptr, nullptr, 1));
     return done;
   }
   for (double factor : study.factors)
-    for (const Motion& motion : study.motions)
-      if (!keep(run(setting, &motion, factor))) return done;
+    for (std::size_t i = 0; i < study.motions.size(); ++i)
+      if (!keep(run(setting, &study.motions[i], study.motions.samples(i).get(), factor))) return done;
   return done;
 }
 

@@ -1,15 +1,15 @@
-// `pilotis modes`: periods, shapes, participation and effective masses of a study's building.
+// `pilotis modes`: periods, shapes, participation and effective masses of a building.
 #include <fmt/format.h>
 
 #include <cstdio>
 #include <memory>
 #include <nlohmann/json.hpp>
 
+#include "apps/buildings.hpp"
 #include "apps/commands.hpp"
 #include "apps/text_table.hpp"
-#include "core/system/assemble_stick.hpp"
-#include "core/system/summary.hpp"
 #include "integrators/catalogue.hpp"
+#include "io/study/building_file.hpp"
 #include "io/study/study.hpp"
 
 namespace pilotis {
@@ -19,7 +19,7 @@ namespace {
 using Json = nlohmann::ordered_json;
 
 struct Options {
-  std::string study;
+  std::string file, building;
   int shapes = 5;
   bool json = false;
 };
@@ -65,17 +65,25 @@ std::string shapes_table(const BuildingSummary& building, int shown) {
   return table.text();
 }
 
-void print_text(const Study& study, const BuildingSummary& building, int shapes) {
-  fmt::print("{}: modes at the initial stiffness{}\n\n{}\n", study.title,
-             study.building.p_delta ? ", P-Delta included" : "", modes_table(building, study.units));
+// The building that is meant, and the units to show it in.
+struct Chosen {
+  StudyBuilding building;
+  StudyUnits units;
+};
+
+void print_text(const Chosen& chosen, const BuildingSummary& building, int shapes) {
+  const StudyUnits& units = chosen.units;
+  fmt::print("{}: modes at the initial stiffness{}\n\n{}\n", building.title,
+             chosen.building.stick.p_delta ? ", P-Delta included" : "", modes_table(building, units));
   fmt::print("total mass {:.5g} {}; shapes have the largest magnitude 1 and go with the participation factors\n\n{}",
-             total_mass(building) / study.units.factor(Dimension::mass), study.units.name(Dimension::mass),
+             total_mass(building) / units.factor(Dimension::mass), units.name(Dimension::mass),
              shapes_table(building, shapes));
 }
 
-void print_json(const Study& study, const BuildingSummary& building) {
-  Json json{{"title", study.title},
-            {"p_delta", study.building.p_delta},
+void print_json(const Chosen& chosen, const BuildingSummary& building) {
+  Json json{{"title", building.title},
+            {"building", chosen.building.name},
+            {"p_delta", chosen.building.stick.p_delta},
             {"total_mass_kg", total_mass(building)},
             {"modes", Json::array()}};
   for (const Mode& mode : building.modes)
@@ -87,13 +95,23 @@ void print_json(const Study& study, const BuildingSummary& building) {
   fmt::print("{}\n", json.dump(2));
 }
 
+Chosen chosen(const Options& options) {
+  if (is_building_file(options.file)) {
+    std::vector<std::string> notes;
+    const StudyBuilding building = read_building_file(options.file, notes);
+    return {building_called({building}, options.building, options.file), building.units};
+  }
+  const Study study = read_study(options.file, scheme_catalogue());
+  return {building_called(study.buildings, options.building, options.file), study.units};
+}
+
 void show_modes(const Options& options) {
-  const Study study = read_study(options.study, scheme_catalogue());
-  const BuildingSummary building = summary_of(study.building, assemble(study.building), study.title);
+  const Chosen shown = chosen(options);
+  const BuildingSummary building = assembled(shown.building).summary;
   if (options.json)
-    print_json(study, building);
+    print_json(shown, building);
   else
-    print_text(study, building, options.shapes);
+    print_text(shown, building, options.shapes);
 }
 
 }  // namespace
@@ -101,7 +119,8 @@ void show_modes(const Options& options) {
 void add_modes(CLI::App& app, int& status) {
   const auto options = std::make_shared<Options>();
   CLI::App* command = app.add_subcommand("modes", "Periods, shapes, participation and effective modal masses");
-  command->add_option("study", options->study, "study file (TOML)")->required();
+  command->add_option("study", options->file, "study file or building file (TOML)")->required();
+  command->add_option("--building", options->building, "which building, by name, of a study with several");
   command->add_option("--shapes", options->shapes, "how many shapes to print")
       ->capture_default_str()
       ->check(CLI::NonNegativeNumber);

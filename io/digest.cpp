@@ -28,17 +28,23 @@ std::vector<unsigned char> bytes_of(const Accelerogram& record) {
   return bytes;
 }
 
-}  // namespace
-
-std::string digest_of(const Accelerogram& record) {
-  const std::vector<unsigned char> bytes = bytes_of(record);
+std::string sha256(const void* bytes, std::size_t count) {
   std::array<unsigned char, EVP_MAX_MD_SIZE> digest{};
   unsigned int length = 0;
-  if (EVP_Digest(bytes.data(), bytes.size(), digest.data(), &length, EVP_sha256(), nullptr) != 1)
-    throw outside_error("digest of a motion", "the cryptographic library refused SHA-256", "check its configuration");
+  if (EVP_Digest(bytes, count, digest.data(), &length, EVP_sha256(), nullptr) != 1)
+    throw outside_error("digest", "the cryptographic library refused SHA-256", "check its configuration");
   std::string text;
   for (unsigned int i = 0; i < length; ++i) text += fmt::format("{:02x}", digest[i]);
   return text;
 }
+
+}  // namespace
+
+std::string digest_of(const Accelerogram& record) {
+  const std::vector<unsigned char> bytes = bytes_of(record);
+  return sha256(bytes.data(), bytes.size());
+}
+
+std::string digest_of(std::string_view bytes) { return sha256(bytes.data(), bytes.size()); }
 
 }  // namespace pilotis

@@ -27,15 +27,22 @@ struct PeakSample {
 };
 PeakSample peak_of(const Accelerogram& record);
 
-// One event at one station, as a study uses it. A stick takes one horizontal component.
+// One event at one station, as a study uses it: all but its samples, which io/study/motion_store.hpp hands out. A stick
+// takes one horizontal component.
 struct Motion {
-  std::string name;    // unique in the suite
-  std::string file;    // as found, for messages; empty for a made one
-  std::string format;  // what the reader recognised, e.g. "PEER database header"
-  std::string unit;    // unit in the file or as the study states it, e.g. "g"
-  std::string digest;  // SHA-256 of step, first sample time and samples (little-endian doubles), lower-case hex
-  double factor = 1;   // the study's own factor for this motion, already applied to `record`
-  Accelerogram record;
+  std::string name;            // unique in the suite
+  std::string file;            // as found, for messages; empty for a made one
+  std::string format;          // what the reader recognised, e.g. "PEER database header"
+  std::string unit;            // unit in the file or as the study states it, e.g. "g"
+  std::string digest;          // SHA-256 of step, first sample time and samples (little-endian doubles), lower-case hex
+  double factor = 1;           // the study's own factor for this motion; it is in the peak and the digest
+  double step = 0;             // s
+  double first_sample_at = 0;  // s
+  long samples = 0;            // how many
+  PeakSample peak;             // the factor applied
+
+  // s, time of the last sample.
+  double duration() const { return first_sample_at + step * static_cast<double>(samples - 1); }
 };
 
 }  // namespace pilotis

@@ -18,7 +18,7 @@ constexpr std::array<std::string_view, 3> kinds{"stick", "frame", "plan"};
 constexpr double most_repeats = 1000;
 
 TableReader building_table(const TableReader& root) {
-  TableReader table(root.at("building", "a study needs a [building] table"));
+  TableReader table(root.at("building", "a [building] table is needed"));
   table.known_keys({"kind", "damping", "p_delta", "gravity"});
   const ValueReader kind = table.at("kind", "name the kind of building: stick");
   if (kind.choice("kind of building", kinds) != "stick")

@@ -23,12 +23,6 @@ constexpr std::array<NamedStatistic, 4> statistics{{{"mean", Statistic::mean},
                                                     {"median", Statistic::median},
                                                     {"percentile", Statistic::percentile}}};
 
-std::vector<std::string_view> quantity_names() {
-  std::vector<std::string_view> names;
-  for (const Quantity& quantity : quantities()) names.push_back(quantity.name);
-  return names;
-}
-
 const Quantity& limited_quantity(const ValueReader& value) {
   std::vector<std::string_view> names = quantity_names();
   names.push_back(residual_drift_ratio().name);
@@ -80,36 +74,12 @@ Limit read_limit(TableReader table, const std::vector<double>& factors) {
   return limit;
 }
 
-const Quantity* kept_quantity(const ValueReader& item, const std::vector<const Quantity*>& already) {
-  const Quantity* quantity = find_quantity(item.choice("quantity", quantity_names()));
-  if (std::find(already.begin(), already.end(), quantity) != already.end())
-    throw item.wrong(fmt::format("found \"{}\" a second time", quantity->name), "name each quantity once");
-  return quantity;
-}
-
-std::vector<const Quantity*> read_histories(const ValueReader& value) {
-  std::vector<const Quantity*> kept;
-  if (value.node().kind == NodeKind::text) {
-    const std::array<std::string_view, 2> words{"all", "none"};
-    if (value.choice("choice of histories", words) == "all")
-      for (const Quantity& quantity : quantities()) kept.push_back(&quantity);
-    return kept;
-  }
-  if (value.node().kind != NodeKind::array)
-    throw value.wrong_type("\"all\", \"none\" or a list of quantities is needed");
-  for (const ValueReader& item : value.items()) kept.push_back(kept_quantity(item, kept));
-  return kept;
-}
-
 }  // namespace
 
-KeepSettings read_keep(TableReader table) {
-  table.known_keys({"histories", "every"});
-  KeepSettings keep;
-  keep.histories = read_histories(table.at("histories", "say \"all\", \"none\" or a list of quantities"));
-  keep.every =
-      static_cast<int>(table.quantity(whole_number("every", "how many steps apart instants are kept", 1, 1e6, 1.0)));
-  return keep;
+std::vector<std::string_view> quantity_names() {
+  std::vector<std::string_view> names;
+  for (const Quantity& quantity : quantities()) names.push_back(quantity.name);
+  return names;
 }
 
 std::vector<Limit> read_limits(const TableReader& root, const std::vector<double>& factors) {

@@ -50,24 +50,47 @@ FloorForce over_time(const TableReader& table, const fs::path& folder) {
   return from_table(*points);
 }
 
-FloorForce read_force(TableReader table, int floors, const fs::path& folder) {
+int floors_of(const StudyBuilding& building) { return static_cast<int>(building.stick.stories.size()); }
+
+// `building "B" (towers/b.toml)`; a study's own building needs no name.
+std::string called(const StudyBuilding& building) {
+  if (building.file.empty()) return "the building";
+  return fmt::format("building \"{}\" ({})", building.name, building.file.string());
+}
+
+int read_floor(const TableReader& table, std::span<const StudyBuilding> buildings) {
+  int most = 0;
+  for (const StudyBuilding& building : buildings) most = std::max(most, floors_of(building));
+  const double floor = table.quantity(whole_number("floor", "the number of the floor", 1, most));
+  for (const StudyBuilding& building : buildings)
+    if (floor > floors_of(building))
+      throw table.at("floor", "")
+          .wrong(fmt::format("found {:g}, and {} has {} floor(s)", floor, called(building), floors_of(building)),
+                 "name a floor that every building has, from floor 1 up");
+  return static_cast<int>(floor);
+}
+
+FloorForce read_force(TableReader table, std::span<const StudyBuilding> buildings, const fs::path& folder) {
   table.known_keys({"floor", "factor", "table", "file", "units"});
-  const double floor = table.quantity(whole_number("floor", "the number of the floor", 1, floors));
+  const int floor = read_floor(table, buildings);
   const double factor = table.quantity(force_factor);
   if (factor == 0) throw table.at("factor", "").wrong("found 0", "a force with the factor 0 is no force");
   FloorForce force = over_time(table, folder);
-  force.floor = static_cast<int>(floor);
+  force.floor = floor;
   for (double& value : force.forces) value *= factor;
   return force;
 }
 
-std::vector<double> per_floor(const TableReader& table, const Parameter& parameter, int floors) {
+std::vector<double> per_floor(const TableReader& table, const Parameter& parameter,
+                              std::span<const StudyBuilding> buildings) {
   const auto value = table.find(parameter.key);
   if (!value) return {};
   const std::vector<double> values = value->quantities(parameter);
-  if (static_cast<int>(values.size()) != floors)
-    throw value->wrong(fmt::format("found {} value(s) for a building with {} floor(s)", values.size(), floors),
-                       "give one for each floor, from floor 1 up");
+  for (const StudyBuilding& building : buildings)
+    if (static_cast<int>(values.size()) != floors_of(building))
+      throw value->wrong(fmt::format("found {} value(s), and {} has {} floor(s)", values.size(), called(building),
+                                     floors_of(building)),
+                         "give one for each floor, from floor 1 up");
   return values;
 }
 
@@ -77,15 +100,16 @@ bool all_zero(const std::vector<double>& values) {
 
 }  // namespace
 
-std::vector<FloorForce> read_forces(const TableReader& root, int floors, const fs::path& folder) {
+std::vector<FloorForce> read_forces(const TableReader& root, std::span<const StudyBuilding> buildings,
+                                    const fs::path& folder) {
   std::vector<FloorForce> forces;
-  for (const TableReader& table : root.tables("force")) forces.push_back(read_force(table, floors, folder));
+  for (const TableReader& table : root.tables("force")) forces.push_back(read_force(table, buildings, folder));
   return forces;
 }
 
-InitialState read_initial(TableReader table, int floors) {
+InitialState read_initial(TableReader table, std::span<const StudyBuilding> buildings) {
   table.known_keys({"displacement", "velocity"});
-  InitialState state{per_floor(table, displacement, floors), per_floor(table, velocity, floors)};
+  InitialState state{per_floor(table, displacement, buildings), per_floor(table, velocity, buildings)};
   if (all_zero(state.displacement) && all_zero(state.velocity))
     throw table.wrong("found no displacement and no velocity other than 0",
                       "give displacement = [...] or velocity = [...], or leave [initial] out");

@@ -12,8 +12,8 @@
 
 namespace pilotis {
 
-// [units]: force and length, mass if another than force s2/length.
-StudyUnits read_units(TableReader table);
+// [units]: force and length, mass if another than force s2/length. Without it SI, which is added to `notes`.
+StudyUnits read_units(const TableReader& root, std::vector<std::string>& notes);
 
 // [building] and the [[story]] tables; validated as a whole.
 Stick read_building(const TableReader& root);
@@ -24,15 +24,19 @@ Damping read_damping(const ValueReader& value, int floors);
 // The spring of a story: a law of law_catalogue() and its parameters.
 Law read_spring(const ValueReader& value);
 
-// The motions of [suite], loaded. Adds what the record readers assumed to `notes`.
-std::vector<Motion> read_motions(const TableReader& suite, const std::filesystem::path& folder,
-                                 std::vector<std::string>& notes);
+// The buildings of the study: its own, or those of the files under `buildings`. `units` and `title` are the study's.
+// Adds what was assumed to `notes`.
+std::vector<StudyBuilding> read_buildings(const TableReader& root, const Study& study, std::vector<std::string>& notes);
+
+TableReader suite_table(const ValueReader& value);
+// What [suite] asks for, its files found but not read.
+std::vector<MotionSource> read_suite(const TableReader& suite, const std::filesystem::path& folder);
 // The factors of [suite]; {1} when not given.
 std::vector<double> read_factors(const TableReader& suite);
-TableReader suite_table(const ValueReader& value);
 
-// The [[force]] tables.
-std::vector<FloorForce> read_forces(const TableReader& root, int floors, const std::filesystem::path& folder);
+// The [[force]] tables; every building must have their floors.
+std::vector<FloorForce> read_forces(const TableReader& root, std::span<const StudyBuilding> buildings,
+                                    const std::filesystem::path& folder);
 
 // Times (s) and forces (N, with `factor_to_si`) from two columns of numbers; blank lines and lines that start with #
 // are passed over. Throws Error with the file and its line.
@@ -43,13 +47,16 @@ void require_rising(const FloorForce& force, const std::string& where);
 struct InitialState {
   std::vector<double> displacement, velocity;  // m, m/s, [floor]
 };
-// [initial]
-InitialState read_initial(TableReader table, int floors);
+// [initial]; every building must have as many floors.
+InitialState read_initial(TableReader table, std::span<const StudyBuilding> buildings);
 
 // [march]
 MarchSettings read_march(TableReader table, std::span<const Method> schemes);
 // What holds without [march]: the first scheme of the catalogue with its defaults.
 MarchSettings default_march(std::span<const Method> schemes);
+
+// The quantities that can be kept, by name.
+std::vector<std::string_view> quantity_names();
 
 // [keep]
 KeepSettings read_keep(TableReader table);

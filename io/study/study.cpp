@@ -1,7 +1,5 @@
 #include "io/study/study.hpp"
 
-#include <fmt/format.h>
-
 #include "io/study/motion_files.hpp"
 #include "io/study/sections.hpp"
 #include "io/study/toml_tree.hpp"
@@ -19,10 +17,9 @@ std::optional<TableReader> suite_of(const TableReader& root) {
 }
 
 void read_loads(const TableReader& root, const fs::path& folder, Study& study) {
-  const int floors = static_cast<int>(study.building.stories.size());
-  study.forces = read_forces(root, floors, folder);
+  study.forces = read_forces(root, study.buildings, folder);
   if (const auto value = root.find("initial")) {
-    const InitialState state = read_initial(TableReader(*value), floors);
+    const InitialState state = read_initial(TableReader(*value), study.buildings);
     study.initial_displacement = state.displacement;
     study.initial_velocity = state.velocity;
   }
@@ -44,12 +41,8 @@ void require_an_end(const TableReader& root, const Study& study) {
 // Motions last: loading them takes longest, and what is wrong in the study itself should be told first.
 void read_sections(const TableReader& root, std::span<const Method> schemes, StudySource& source, Study& study) {
   study.title = root.text_or("title", study.file.stem().string());
-  if (const auto units = root.find("units"))
-    source.units = read_units(TableReader(*units));
-  else
-    study.notes.push_back(fmt::format("{}: no [units], so bare numbers are in N, m, s and kg", source.file));
-  study.units = source.units;
-  study.building = read_building(root);
+  study.units = source.units = read_units(root, study.notes);
+  study.buildings = read_buildings(root, study, study.notes);
   require_something_to_do(root);
   const auto march = root.find("march");
   study.march = march ? read_march(TableReader(*march), schemes) : default_march(schemes);
@@ -59,7 +52,8 @@ void read_sections(const TableReader& root, std::span<const Method> schemes, Stu
   const auto suite = suite_of(root);
   study.factors = suite ? read_factors(*suite) : std::vector<double>{1.0};
   study.limits = read_limits(root, study.factors);
-  if (suite) study.motions = read_motions(*suite, folder, study.notes);
+  if (suite) study.motions = MotionStore(read_suite(*suite, folder));
+  study.notes.insert(study.notes.end(), study.motions.notes().begin(), study.motions.notes().end());
   require_an_end(root, study);
 }
 
@@ -72,7 +66,8 @@ Study read_study(const fs::path& file, std::span<const Method> schemes) {
   StudySource source{file.string(), {}};
   const Node tree = parse_toml(study.text, source.file);
   TableReader root(source, tree, 1, "");
-  root.known_keys({"title", "units", "building", "story", "suite", "force", "initial", "march", "keep", "limit"});
+  root.known_keys(
+      {"title", "units", "buildings", "building", "story", "suite", "force", "initial", "march", "keep", "limit"});
   read_sections(root, schemes, source, study);
   return study;
 }

@@ -9,10 +9,11 @@
 #include <vector>
 
 #include "core/building/stick.hpp"
-#include "core/motion/accelerogram.hpp"
 #include "core/motion/floor_force.hpp"
 #include "core/parameter.hpp"
+#include "core/response/history_format.hpp"
 #include "core/verdict/limit.hpp"
+#include "io/study/motion_store.hpp"
 
 namespace pilotis {
 
@@ -45,16 +46,27 @@ struct MarchSettings {
 struct KeepSettings {
   std::vector<const Quantity*> histories;
   int every = 1;  // keep every n-th step
+  HistoryFormat format;
+};
+
+// A building of the study, in a file of its own or in the study itself.
+struct StudyBuilding {
+  std::string name;            // unique in the study; of a study's own building its title, or "building"
+  std::filesystem::path file;  // as found; empty when the building stands in the study itself
+  std::string text;            // the file as read; empty likewise
+  std::string title;           // as its file gives it, or else its name
+  StudyUnits units;            // of bare numbers in its file
+  Stick stick;
 };
 
 struct Study {
   std::filesystem::path file;
-  std::string text;  // the file as read
+  std::string text;  // the file as read; with the texts of the buildings it is the whole of what was asked
   std::string title;
   StudyUnits units;
-  Stick building;
-  std::vector<Motion> motions;  // loaded, in the order of the study, the study's own factors applied
-  std::vector<double> factors;  // at least one; {1} by default
+  std::vector<StudyBuilding> buildings;  // at least one, in the order of the study
+  MotionStore motions;                   // in the order of the study, the study's own factors applied
+  std::vector<double> factors;           // at least one; {1} by default
   std::vector<FloorForce> forces;
   std::vector<double> initial_displacement, initial_velocity;  // m, m/s, [floor]; empty: at rest
   MarchSettings march;
@@ -64,7 +76,7 @@ struct Study {
 };
 
 // Throws Error with file, line, key, what was found and what is allowed (with the nearest known key).
-// `schemes` is the catalogue a study may choose from. Motion files are relative to the study file.
+// `schemes` is the catalogue a study may choose from. Motion and building files are relative to the study file.
 Study read_study(const std::filesystem::path& file, std::span<const Method> schemes);
 
 }  // namespace pilotis

@@ -1,15 +1,9 @@
 #include <fmt/format.h>
-#include <fmt/ranges.h>
 
-#include <algorithm>
-#include <cmath>
-#include <map>
-#include <set>
-
-#include "io/digest.hpp"
 #include "io/records/record.hpp"
 #include "io/study/motion_files.hpp"
 #include "io/study/sections.hpp"
+#include "io/study/unique_names.hpp"
 
 namespace pilotis {
 
@@ -20,7 +14,6 @@ namespace {
 constexpr Parameter step{"step", Dimension::time, "the time step of the record", {}, 0.0, 1e300, false};
 constexpr Parameter first_sample_at{"first_sample_at", Dimension::time, "the time of the first sample", {}, 0.0};
 constexpr Parameter motion_factor{"factor", Dimension::none, "the factor of this motion", 1.0};
-constexpr Parameter suite_factor{"factors", Dimension::none, "a factor of the suite", {}, 0.0, 1e300, false};
 
 // A motion to be loaded.
 struct Wanted {
@@ -82,30 +75,6 @@ std::vector<Wanted> wanted_motions(const TableReader& suite, const fs::path& fol
   return wanted;
 }
 
-// File names without extension; with it where two would be called alike.
-void name_motions(std::vector<Wanted>& wanted) {
-  std::map<std::string, int> stems;
-  for (const Wanted& motion : wanted) ++stems[motion.name.empty() ? motion.file.stem().string() : motion.name];
-  for (Wanted& motion : wanted) {
-    const std::string stem = motion.file.stem().string();
-    if (motion.name.empty()) motion.name = stems[stem] == 1 ? stem : motion.file.filename().string();
-  }
-  std::set<std::string> taken;
-  for (const Wanted& motion : wanted)
-    if (!taken.insert(motion.name).second)
-      throw motion.place.wrong(fmt::format("a second motion is called \"{}\" ({})", motion.name, motion.file.string()),
-                               "name it differently with { file = \"...\", name = \"...\" }, or list it once");
-}
-
-Motion loaded(const Wanted& wanted, std::vector<std::string>& notes) {
-  RecordFile file = read_record(wanted.file, wanted.hints);
-  for (double& sample : file.record.samples) sample *= wanted.factor;
-  for (const std::string& note : file.notes) notes.push_back(fmt::format("{}: {}", wanted.file.string(), note));
-  Motion motion{wanted.name, wanted.file.string(), file.format, file.unit, "", wanted.factor, std::move(file.record)};
-  motion.digest = digest_of(motion.record);
-  return motion;
-}
-
 }  // namespace
 
 TableReader suite_table(const ValueReader& value) {
@@ -114,25 +83,12 @@ TableReader suite_table(const ValueReader& value) {
   return table;
 }
 
-std::vector<Motion> read_motions(const TableReader& suite, const fs::path& folder, std::vector<std::string>& notes) {
+std::vector<MotionSource> read_suite(const TableReader& suite, const fs::path& folder) {
   std::vector<Wanted> wanted = wanted_motions(suite, folder);
-  name_motions(wanted);
-  std::vector<Motion> motions;
-  for (const Wanted& motion : wanted) motions.push_back(loaded(motion, notes));
-  return motions;
-}
-
-std::vector<double> read_factors(const TableReader& suite) {
-  const auto value = suite.find("factors");
-  if (!value) return {1.0};
-  std::vector<double> factors;
-  for (const ValueReader& item : value->items()) {
-    factors.push_back(item.quantity(suite_factor));
-    if (std::count(factors.begin(), factors.end(), factors.back()) > 1)
-      throw item.wrong(fmt::format("found the factor {:g} a second time", factors.back()), "give each factor once");
-  }
-  if (factors.empty()) throw value->wrong("found an empty list", "give a factor, or leave the key out for [1.0]");
-  return factors;
+  name_by_file(wanted, "motion");
+  std::vector<MotionSource> sources;
+  for (const Wanted& motion : wanted) sources.push_back({motion.file, motion.name, motion.factor, motion.hints});
+  return sources;
 }
 
 }  // namespace pilotis

@@ -15,7 +15,7 @@
 
 namespace pilotis {
 
-// What every section needs to know of the file it stands in. Outlives its readers.
+// What every section needs to know of the file it stands in, a study or a building file. Outlives its readers.
 struct StudySource {
   std::string file;  // as the user named it
   StudyUnits units;  // set once [units] has been read
@@ -68,6 +68,7 @@ class TableReader {
 
   std::string where() const { return self_.where(); }
   const std::string& path() const { return self_.path(); }
+  const StudySource& source() const { return self_.source(); }
   Error wrong(const std::string& found, const std::string& needed) const { return self_.wrong(found, needed); }
 
   bool has(std::string_view key) const;

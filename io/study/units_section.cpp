@@ -69,7 +69,13 @@ double StudyUnits::factor(Dimension dimension) const {
   return 1;
 }
 
-StudyUnits read_units(TableReader table) {
+StudyUnits read_units(const TableReader& root, std::vector<std::string>& notes) {
+  const auto given = root.find("units");
+  if (!given) {
+    notes.push_back(fmt::format("{}: no [units], so bare numbers are in N, m, s and kg", root.source().file));
+    return {};
+  }
+  TableReader table(*given);
   table.known_keys({"force", "length", "mass"});
   StudyUnits units;
   units.force = checked_unit(table.at("force", "give the unit of bare forces, such as \"kN\""), Dimension::force);

@@ -18,5 +18,10 @@ TEST(Digest, TellsEveryFieldApart) {
   EXPECT_NE(digest_of({0.02, 0, {1, 2, 0}}), digest);
 }
 
+// FIPS 180-4's example of one block, "abc" (value from memory; sha256sum of GNU coreutils gives the same).
+TEST(Digest, OfText) {
+  EXPECT_EQ(digest_of(std::string_view("abc")), "ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad");
+}
+
 }  // namespace
 }  // namespace pilotis

@@ -37,7 +37,7 @@ TEST_F(FullStudy, HeadingAndUnits) {
 }
 
 TEST_F(FullStudy, Stories) {
-  const auto& stories = study_.building.stories;
+  const auto& stories = study_.buildings[0].stick.stories;
   ASSERT_EQ(stories.size(), 3u);
   EXPECT_EQ(stories[0].label, "ground story");
   EXPECT_DOUBLE_EQ(stories[0].height, 4.5);
@@ -60,13 +60,13 @@ TEST_F(FullStudy, Stories) {
 }
 
 TEST_F(FullStudy, DampingAndPDelta) {
-  const auto& damping = std::get<RayleighByModes>(study_.building.damping);
+  const auto& damping = std::get<RayleighByModes>(study_.buildings[0].stick.damping);
   EXPECT_EQ(damping.ratio_first, 0.05);
   EXPECT_EQ(damping.ratio_second, 0.03);
   EXPECT_EQ(damping.first, 1);
   EXPECT_EQ(damping.second, 3);
-  EXPECT_TRUE(study_.building.p_delta);
-  EXPECT_EQ(study_.building.gravity, 9.80665);
+  EXPECT_TRUE(study_.buildings[0].stick.p_delta);
+  EXPECT_EQ(study_.buildings[0].stick.gravity, 9.80665);
 }
 
 TEST_F(FullStudy, Motions) {
@@ -76,15 +76,21 @@ TEST_F(FullStudy, Motions) {
   EXPECT_EQ(study_.motions[2].name, "site");
   const Motion& b = study_.motions[1];
   EXPECT_EQ(b.unit, "g");
-  EXPECT_EQ(b.record.step, 0.01);
-  ASSERT_EQ(b.record.samples.size(), 3u);
-  EXPECT_DOUBLE_EQ(b.record.samples[1], -0.2 * 9.80665);
+  EXPECT_EQ(b.step, 0.01);
+  EXPECT_EQ(b.samples, 3);
+  EXPECT_DOUBLE_EQ(b.peak.value, -0.2 * 9.80665);
+  EXPECT_DOUBLE_EQ(b.peak.time, 0.01);
+  EXPECT_DOUBLE_EQ(b.duration(), 0.02);
   const Motion& site = study_.motions[2];
   EXPECT_EQ(site.factor, -1.5);
-  EXPECT_DOUBLE_EQ(site.record.step, 0.005);
-  EXPECT_DOUBLE_EQ(site.record.first_sample_at, 0.005);
-  EXPECT_DOUBLE_EQ(site.record.samples[1], 0.3);  // -20 cm/s2 times -1.5
-  EXPECT_EQ(site.digest, digest_of(site.record));
+  EXPECT_DOUBLE_EQ(site.step, 0.005);
+  EXPECT_DOUBLE_EQ(site.first_sample_at, 0.005);
+  EXPECT_DOUBLE_EQ(site.peak.value, 0.3);  // -20 cm/s2 times -1.5
+  const auto samples = study_.motions.samples(2);
+  ASSERT_EQ(samples->samples.size(), 3u);
+  EXPECT_DOUBLE_EQ(samples->samples[0], -0.15);
+  EXPECT_DOUBLE_EQ(samples->samples[1], 0.3);
+  EXPECT_EQ(site.digest, digest_of(*samples));
   EXPECT_EQ(site.file, (folder_.path() / "site.txt").string());
   EXPECT_EQ(study_.factors, (std::vector<double>{0.5, 1.0}));
 }
@@ -148,14 +154,14 @@ TEST(GoodStudy, LeastAndItsDefaults) {
   const Folder folder;
   const Study study = read(folder, least_study);
   EXPECT_EQ(study.title, "study");  // the file's own name
-  const Story& story = study.building.stories.at(0);
+  const Story& story = study.buildings[0].stick.stories.at(0);
   EXPECT_DOUBLE_EQ(story.height, 144 * 0.0254);
   // 386.0886 in/s2 is standard gravity to seven digits, so this weighs 1 kip s2/in: 4448.222 N / 0.0254 m (NIST SP
   // 811).
   EXPECT_NEAR(story.mass, 4448.222 / 0.0254, 0.05);
   EXPECT_NEAR(std::get<Linear>(story.spring).stiffness, 100 * 175126.8, 100 * 0.05);
-  EXPECT_TRUE(std::holds_alternative<NoDamping>(study.building.damping));
-  EXPECT_FALSE(study.building.p_delta);
+  EXPECT_TRUE(std::holds_alternative<NoDamping>(study.buildings[0].stick.damping));
+  EXPECT_FALSE(study.buildings[0].stick.p_delta);
   EXPECT_DOUBLE_EQ(study.initial_displacement.at(0), 0.0254);
   EXPECT_TRUE(study.initial_velocity.empty());
   EXPECT_TRUE(study.motions.empty());
@@ -176,7 +182,7 @@ TEST(GoodStudy, WithoutUnitsIsSiAndSaysSo) {
   text = test::with_line(text, "force", "");
   text = test::with_line(text, "length", "");
   const Study study = read(folder, text);
-  EXPECT_DOUBLE_EQ(study.building.stories[0].height, 144);
+  EXPECT_DOUBLE_EQ(study.buildings[0].stick.stories[0].height, 144);
   ASSERT_EQ(study.notes.size(), 1u);
   EXPECT_NE(study.notes[0].find("N, m, s"), std::string::npos);
 }
@@ -185,15 +191,15 @@ TEST(GoodStudy, MassUnitAndGravityOfItsOwn) {
   const Folder folder;
   std::string text = test::with_line(least_study, "length", "length = \"in\"\nmass = \"slug\"");
   const Study by_mass = read(folder, test::with_line(text, "weight", "mass = 2"));
-  EXPECT_NEAR(by_mass.building.stories[0].mass, 2 * 14.59390, 2 * 5e-6);  // slug, NIST SP 811
+  EXPECT_NEAR(by_mass.buildings[0].stick.stories[0].mass, 2 * 14.59390, 2 * 5e-6);  // slug, NIST SP 811
   text = test::with_line(least_study, "kind", "kind = \"stick\"\ngravity = \"10 m/s2\"");
-  EXPECT_NEAR(read(folder, text).building.stories[0].mass, 386.0886 * 4448.222 / 10, 0.02);
+  EXPECT_NEAR(read(folder, text).buildings[0].stick.stories[0].mass, 386.0886 * 4448.222 / 10, 0.02);
 }
 
 TEST(GoodStudy, EveryKindOfDamping) {
   const Folder folder;
   const auto damping = [&](const std::string& value) {
-    return read(folder, test::with_line(least_study, "damping", "damping = " + value)).building.damping;
+    return read(folder, test::with_line(least_study, "damping", "damping = " + value)).buildings[0].stick.damping;
   };
   EXPECT_EQ(std::get<ModalDamping>(damping("{ kind = \"modal\", ratio = \"5 %\" }")).ratios, std::vector<double>{0.05});
   EXPECT_EQ(std::get<ModalDamping>(damping("{ kind = \"modal\", ratio = [0.02] }")).ratios, std::vector<double>{0.02});
@@ -207,7 +213,7 @@ TEST(GoodStudy, DampingInATableOfItsOwn) {
   const Folder folder;
   const std::string text =
       test::with_line(least_study, "damping", "[building.damping]\nkind = \"modal\"\nratio = 0.02");
-  EXPECT_EQ(std::get<ModalDamping>(read(folder, text).building.damping).ratios, std::vector<double>{0.02});
+  EXPECT_EQ(std::get<ModalDamping>(read(folder, text).buildings[0].stick.damping).ratios, std::vector<double>{0.02});
 }
 
 TEST(GoodStudy, ForceFromAFile) {
@@ -229,6 +235,46 @@ TEST(GoodStudy, HistoriesAllAndNone) {
   EXPECT_EQ(kept("\"all\""), quantities().size());
   EXPECT_EQ(kept("\"none\""), 0u);
   EXPECT_EQ(kept("[]"), 0u);
+}
+
+TEST(GoodStudy, FormatOfHistories) {
+  const Folder folder;
+  const auto format = [&](const std::string& keys) {
+    return read(folder, least_study + "[keep]\nhistories = \"all\"\n" + keys).keep.format;
+  };
+  EXPECT_FALSE(format("").single);
+  EXPECT_EQ(format("").compression, 4);
+  EXPECT_TRUE(format("precision = \"single\"\n").single);
+  EXPECT_FALSE(format("precision = \"double\"\n").single);
+  EXPECT_EQ(format("compression = 0\n").compression, 0);
+  EXPECT_EQ(format("compression = 9\n").compression, 9);
+}
+
+// Arithmetic and geometric series; a factor is off by a rounding or two.
+TEST(GoodStudy, FactorsAsARange) {
+  const Folder folder;
+  folder.write("one.txt", "0.1\n0.2\n");
+  const auto factors = [&](const std::string& value, const std::string& more = "") {
+    return read(folder, least_study + "[suite]\nunits = \"g\"\nstep = 0.01\nmotions = [\"one.txt\"]\nfactors = " +
+                            value + "\n" + more)
+        .factors;
+  };
+  const std::vector<double> linear = factors("{ from = 0.1, to = 2.0, count = 20 }");
+  ASSERT_EQ(linear.size(), 20u);
+  EXPECT_EQ(linear.front(), 0.1);
+  EXPECT_EQ(linear.back(), 2.0);
+  for (int i = 0; i < 20; ++i) EXPECT_NEAR(linear[i], 0.1 * (i + 1), 4e-16 * (i + 1)) << i;
+  EXPECT_EQ(factors("{ from = 1, to = 3, count = 3, spacing = \"linear\" }"), (std::vector<double>{1, 2, 3}));
+  const std::vector<double> log = factors("{ from = 0.1, to = 1.6, count = 5, spacing = \"log\" }");
+  ASSERT_EQ(log.size(), 5u);
+  EXPECT_EQ(log.front(), 0.1);
+  EXPECT_EQ(log.back(), 1.6);
+  for (int i = 0; i < 5; ++i) EXPECT_NEAR(log[i], 0.1 * (1 << i), 1e-15 * (1 << i)) << i;
+  EXPECT_EQ(factors("{ from = 0.5, to = 2, count = 2 }"), (std::vector<double>{0.5, 2}));
+  // A limit may name one of them as a person would write it.
+  const std::string limit =
+      "[[limit]]\nquantity = \"drift_ratio\"\nstatistic = \"max\"\nvalue = 0.02\nsource = \"x\"\nfactors = [0.3]\n";
+  EXPECT_NO_THROW(factors("{ from = 0.1, to = 2.0, count = 20 }", limit));
 }
 
 TEST(GoodStudy, NamesOfMotionsAreMadeUniqueByTheirExtension) {
@@ -265,7 +311,7 @@ TEST(GoodStudy, EveryLawWithItsParameters) {
                    : parameter.key == "cracking_shear"    ? "10"
                                                           : "100");
     const Study study = read(folder, test::with_line(least_study, "spring", spring + " }"));
-    EXPECT_EQ(law_name(study.building.stories[0].spring), method.name);
+    EXPECT_EQ(law_name(study.buildings[0].stick.stories[0].spring), method.name);
   }
 }
 

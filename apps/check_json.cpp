@@ -1,5 +1,5 @@
+#include "apps/batch/plan.hpp"
 #include "apps/check_show.hpp"
-#include "apps/engine.hpp"
 #include "core/laws/law_values.hpp"
 #include "integrators/catalogue.hpp"
 

@@ -3,8 +3,8 @@
 
 #include <cmath>
 
+#include "apps/batch/plan.hpp"
 #include "apps/check_show.hpp"
-#include "apps/engine.hpp"
 #include "apps/text_table.hpp"
 #include "apps/units_text.hpp"
 #include "integrators/catalogue.hpp"

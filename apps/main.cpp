@@ -12,7 +12,7 @@ void complain(const std::string& message) { std::fputs(("pilotis: " + message + 
 
 int shown(const pilotis::Error& error) {
   complain(error.what());
-  return error.kind() == pilotis::ErrorKind::input ? pilotis::wrong_input : pilotis::outside_failed;
+  return pilotis::exit_status_of(error);
 }
 
 }  // namespace

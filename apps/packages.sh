@@ -3,12 +3,12 @@
 build_packages=(
   g++ cmake ninja-build ccache
   libeigen3-dev libboost-dev libhdf5-dev libfmt-dev libtomlplusplus-dev libcli11-dev libudunits2-dev libssl-dev
-  nlohmann-json3-dev
+  nlohmann-json3-dev libtbb-dev
 )
 test_packages=(
   libgtest-dev libgmock-dev libbenchmark-dev librapidcheck-dev libsundials-dev
   python3 python3-h5py python3-xarray python3-h5netcdf python3-netcdf4 python3-scipy
-  clang-format
+  clang-format openmpi-bin libopenmpi-dev
 )
 
 # Prints the packages among the arguments that are not installed.

@@ -4,6 +4,7 @@
 
 #include <atomic>
 #include <memory>
+#include <optional>
 #include <vector>
 
 namespace pilotis {
@@ -27,10 +28,15 @@ class Job {
   virtual long runs_done() const = 0;
   virtual long failures() const = 0;
 
-  // Tells the others that this process has no more to do; then, whether all have. Main thread; may be asked again.
-  virtual bool all_finished() = 0;
+  // Tells the others that this process has come to its end, and whether all that it drew is kept. Nothing while others
+  // are still at work; then the same on all: whether every process said true. Main thread; asked again and again.
+  virtual std::optional<bool> finished(bool whole) = 0;
   // Lets messages of other processes through while this one waits or works. Main thread, many times a second.
   virtual void breathe() {}
+
+  // Ends every process of the job with this exit status: after an error that the others need not wait for. Does not
+  // return in a job of several.
+  virtual void give_up(int /*status*/) {}
 };
 
 // One process alone.

@@ -3,8 +3,7 @@
 #include <algorithm>
 #include <cmath>
 
-#include "core/system/assemble_stick.hpp"
-#include "core/system/summary.hpp"
+#include "apps/buildings.hpp"
 #include "integrators/catalogue.hpp"
 
 namespace pilotis {
@@ -36,11 +35,10 @@ RunSettings settings_of(const Study& study, const BuildingSummary& summary) {
 }
 
 PreparedBuilding prepared(const Study& study, const StudyBuilding& building) {
-  PreparedBuilding made{assemble(building.stick), {}, {}};
-  made.summary = summary_of(building.stick, made.system, building.title);
+  AssembledBuilding made = assembled(building);
+  RunSettings settings = settings_of(study, made.summary);
   made.summary.name = building.name;
-  made.settings = settings_of(study, made.summary);
-  return made;
+  return {std::move(made.system), std::move(made.summary), std::move(settings)};
 }
 
 // s; about when ground and forces have come to rest.
@@ -60,6 +58,11 @@ double values_kept(const Study& study, int stories) {
 
 }  // namespace
 
+std::size_t run_count(const Study& study) {
+  const std::size_t motions_by_factors = study.motions.empty() ? 1 : study.motions.size() * study.factors.size();
+  return study.buildings.size() * motions_by_factors;
+}
+
 BatchPlan::BatchPlan(const Study& study) : study_(study) {
   for (const StudyBuilding& building : study.buildings) buildings_.push_back(prepared(study, building));
   for (std::size_t i = 0; i < buildings_.size(); ++i) {
@@ -75,10 +78,6 @@ std::vector<BuildingSummary> BatchPlan::summaries() const {
   std::vector<BuildingSummary> all;
   for (const PreparedBuilding& building : buildings_) all.push_back(building.summary);
   return all;
-}
-
-std::size_t BatchPlan::runs_per_building() const {
-  return study_.motions.empty() ? 1 : study_.motions.size() * study_.factors.size();
 }
 
 RunId BatchPlan::id(std::size_t run) const {

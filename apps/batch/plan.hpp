@@ -31,6 +31,8 @@ struct Shard {
   std::size_t building = 0, first = 0, count = 0;
 };
 
+std::size_t run_count(const Study& study);
+
 class BatchPlan {
  public:
   // Refers to the study, which must outlive it. Throws Error (input) when the study asks for what a building or the
@@ -41,7 +43,7 @@ class BatchPlan {
   const PreparedBuilding& building(std::size_t i) const { return buildings_[i]; }
   std::vector<BuildingSummary> summaries() const;
 
-  std::size_t runs() const { return study_.buildings.size() * runs_per_building(); }
+  std::size_t runs() const { return run_count(study_); }
   RunId id(std::size_t run) const;
   const std::vector<Shard>& shards() const { return shards_; }
 
@@ -60,7 +62,7 @@ class BatchPlan {
   struct Work {
     double story_steps = 0, history_bytes = 0;
   };
-  std::size_t runs_per_building() const;
+  std::size_t runs_per_building() const { return runs() / study_.buildings.size(); }
   Work work_of(std::size_t building) const;
   void cut(std::size_t building, const Work& work);
 

@@ -14,7 +14,7 @@ class SingleJob : public Job {
   void add_done(long runs, long failures) override { runs_ += runs, failures_ += failures; }
   long runs_done() const override { return runs_; }
   long failures() const override { return failures_; }
-  bool all_finished() override { return true; }
+  std::optional<bool> finished(bool whole) override { return whole; }
 
  private:
   std::atomic<long> next_ = 0;

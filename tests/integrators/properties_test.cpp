@@ -83,7 +83,8 @@ Stick in_other_units(Stick stick, double length, double force) {
     story.height *= length;
     story.mass *= force / length;
     if (auto* law = std::get_if<Linear>(&story.spring)) law->stiffness *= force / length;
-    if (auto* law = std::get_if<Bilinear>(&story.spring)) law->stiffness *= force / length, law->yield_shear *= force;
+    if (auto* law = std::get_if<Bilinear>(&story.spring))
+      *law = {law->stiffness * force / length, law->yield_shear * force, law->post_yield_ratio};
     if (auto* law = std::get_if<BoucWen>(&story.spring)) law->stiffness *= force / length, law->yield_shear *= force;
   }
   return stick;

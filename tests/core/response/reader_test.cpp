@@ -42,7 +42,7 @@ Reading read(const System& system, const State<double>& state, const Load& load,
   std::vector<double> p(system.freedoms), values(reader.layout().size(), NAN);
   load.at(t, p.data());
   reader.read(state, p.data(), load.ground(t), values.data());
-  return {reader.layout(), values, reader.acceleration(), reader.damping_force()};
+  return {reader.layout(), values, reader.acceleration(), reader.forces().damping};
 }
 
 void expect_values(const std::vector<double>& found, const std::vector<double>& expected, const char* what) {

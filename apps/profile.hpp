@@ -6,12 +6,16 @@
 #include "apps/profile_facts.hpp"
 #include "apps/terminal.hpp"
 #include "core/verdict/limit.hpp"
+#include "core/verdict/run_table.hpp"
 #include "io/results/store.hpp"
 
 namespace pilotis {
 
-// Title, building, runs; per factor the stories from the roof down; the verdict; an overall statement. Every number has
-// its unit. No line is wider than style.width where that is at least 80.
+// Title, building, runs; per building and factor the stories from the roof down; the verdict; an overall statement.
+// With more than 12 sets of building and factor: one line for each, the worst only beyond 40, and the stories of the
+// one that governs. Every number has its unit. No line is wider than style.width where that is at least 80.
+std::string profile_text(const StudyHeader& header, const RunTable& table, const Verdict& verdict,
+                         const ScreenStyle& style);
 std::string profile_text(const StoredStudy& stored, const Verdict& verdict, const ScreenStyle& style);
 
 // The parts it is put together from.

@@ -8,6 +8,8 @@
 
 namespace pilotis {
 
+class RunTable;
+
 enum class Statistic { mean, max, median, percentile };
 
 // What the suite's peaks of one quantity may reach at most.
@@ -33,7 +35,8 @@ enum class Finding {
 // One limit at one factor. "Place" is the story or floor (from 1) where the statistic is largest; 0 for whole-run
 // quantities.
 struct Outcome {
-  int limit = 0;  // index into the limits
+  int limit = 0;     // index into the limits
+  int building = 0;  // index into the study's buildings
   double factor = 1;
   double value = 0;  // SI; infinity when collapsed runs decide it
   // SI, of the statistic: mean of the errors for a mean, the governing run's for max, the larger error of the runs it
@@ -57,6 +60,8 @@ struct Verdict {
 // others already exceed it: whatever it would have given (0 or more), the statistic of all is above the limit. The
 // value shown is that of the runs that gave one. A factor without runs is undetermined. Percentile: linear
 // interpolation between order statistics (Hyndman & Fan 1996, type 7).
+// Each building and each of its factors is judged by itself, one column of the table at a time.
+Verdict judge(const RunTable& table, const std::vector<Limit>& limits);
 Verdict judge(const StudyResults& results, const std::vector<Limit>& limits);
 
 // 0 all hold, 1 a limit is exceeded or a run collapsed, 3 a run was not completed or a limit is undetermined.

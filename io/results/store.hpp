@@ -7,6 +7,7 @@
 
 #include "core/response/results.hpp"
 #include "core/verdict/limit.hpp"
+#include "io/results/study_header.hpp"
 #include "io/study/study.hpp"
 
 namespace pilotis {

@@ -81,7 +81,7 @@ long run_count(const Study& study) {
 StudyRun run_study(const Study& study, const RunWatch& watch) {
   const Setting setting = prepared(study);
   StudyRun done;
-  done.results.building = setting.building;
+  done.results.buildings = {setting.building};
   for (const Motion& motion : study.motions) done.results.motions.push_back(summary_of(motion));
   const long all = run_count(study);
   const auto keep = [&](RunResult result) {

@@ -15,7 +15,9 @@
 #include "apps/progress.hpp"
 #include "apps/report_json.hpp"
 #include "core/error.hpp"
+#include "core/verdict/memory_table.hpp"
 #include "integrators/catalogue.hpp"
+#include "io/results/store.hpp"
 #include "io/whole_file.hpp"
 
 namespace pilotis {
@@ -53,8 +55,9 @@ std::filesystem::path output_of(const Options& options) {
 
 StoredStudy stored(const Study& study, StudyResults results) {
   const auto now = fmt::format("{:%Y-%m-%dT%H:%M:%SZ}", fmt::gmtime(std::time(nullptr)));
-  return {study.title, study.text,  study.file.string(), PILOTIS_VERSION,
-          now,         study.units, std::move(results),  study.limits};
+  StudyHeader header{study.title, study.text,   study.file.string(),          PILOTIS_VERSION,           now,
+                     study.units, study.limits, std::move(results.buildings), std::move(results.motions)};
+  return {std::move(header), std::move(results.runs)};
 }
 
 // What the user should know beside the result: the reader's assumptions, why each step, runs that ended early.
@@ -94,12 +97,12 @@ int run_to_verdict(const Options& options) {
   }
   if (!options.quiet) print_notes(study, run.results);
   const StoredStudy result = stored(study, std::move(run.results));
-  const Verdict verdict = judge(result.results, result.limits);
-  write_results(output, result, verdict);
+  const Verdict verdict = write_results(output, result);
+  const MemoryTable table(result.buildings, result.runs);
   if (options.json)
-    fmt::print("{}\n", report_json(result, verdict).dump(2));
+    write_report_json(result, table, verdict, print_out);
   else
-    fmt::print("{}", profile_text(result, verdict, screen_style(stdout)));
+    print_out(profile_text(result, table, verdict, screen_style(stdout)));
   if (!options.quiet) fmt::print(stderr, "results: {}\n", output.string());
   return exit_status(verdict);
 }

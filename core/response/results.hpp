@@ -74,7 +74,7 @@ struct MotionSummary {
 };
 
 struct StudyResults {
-  BuildingSummary building;
+  std::vector<BuildingSummary> buildings;
   std::vector<MotionSummary> motions;
   std::vector<RunResult> runs;  // all motions at the first factor, then at the next
 };

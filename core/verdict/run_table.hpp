@@ -53,4 +53,7 @@ class RunTable {
   std::vector<double> factors_of(int building) const;
 };
 
+// Run `run`, the one after those in `sets`, joins the last set when that is its own and opens a new one when not.
+void add_to_sets(std::vector<RunSet>& sets, int building, double factor, std::size_t run);
+
 }  // namespace pilotis

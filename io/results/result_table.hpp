@@ -29,6 +29,7 @@ class ResultTable : public RunTable {
   void numbers(double RunResult::*member, std::size_t first, std::span<double> into) const override;
   std::vector<RunResult> rows(std::size_t first, std::size_t count, RowParts parts) const override;
 
+  bool keeps_histories(std::size_t run) const;
   // One run with times and histories, empty where it kept none. Throws Error (input) when there is no such run.
   RunResult with_histories(std::size_t run) const;
 

@@ -6,6 +6,7 @@
 #include <span>
 
 #include "core/response/history_format.hpp"
+#include "io/results/shard_folder.hpp"
 #include "io/results/study_header.hpp"
 
 namespace pilotis {
@@ -29,9 +30,9 @@ class ResultWriter {
   // Rows first_run, first_run + 1, ... Throws Error (outside), e.g. on a full disk: then only the destructor is left.
   void add(std::size_t first_run, std::span<const RunResult> results);
 
-  // As add(), from a file of a ShardFolder; histories are copied as they are stored. Throws Error (outside) when the
-  // file is damaged or of another study; nothing of it is taken then.
-  void add_shard(const std::filesystem::path& shard);
+  // As add(), from a shard that is whole; histories are copied as they are stored. Throws Error (outside) when it is
+  // not whole; nothing of it is taken then.
+  void add_shard(const ShardFolder& folder, std::size_t shard);
 
   // Judges, writes the verdict, syncs, renames. Once, after every run was added (std::logic_error otherwise). Throws
   // Error (outside), also when another process holds the target open.

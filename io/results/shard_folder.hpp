@@ -9,15 +9,9 @@
 
 #include "core/response/history_format.hpp"
 #include "core/response/results.hpp"
+#include "io/results/shard_key.hpp"
 
 namespace pilotis {
-
-// What the shards of a folder belong to. Two with equal keys cut the same runs into the same shards.
-struct ShardKey {
-  std::string study_digest;  // SHA-256 of all that decides the results, 64 hexadecimal digits
-  std::string program_version;
-  std::size_t runs = 0, shards = 0;
-};
 
 // Several processes of one job share a folder: the first makes it and takes the lock, the others are started on it when
 // it stands and take none.
@@ -40,6 +34,9 @@ class ShardFolder {
   const std::filesystem::path& path() const { return folder_; }
   std::filesystem::path file(std::size_t shard) const;
 
+  // The seal of a whole shard. Throws Error (outside) when it is not whole.
+  ShardSeal whole(std::size_t shard) const;
+
   // There under its name, of this key and undamaged (its digest is computed). `note` tells why a file that is there
   // will not do; it is then as good as absent.
   bool is_whole(std::size_t shard, std::string* note = nullptr) const;
@@ -54,6 +51,11 @@ class ShardFolder {
   void remove();
 
  private:
+  void require_key() const;
+  void write_key() const;
+  void give_lock_back();
+  std::optional<ShardSeal> seal_of(std::size_t shard, std::string* note) const;
+
   std::filesystem::path folder_;
   ShardKey key_;
   const std::vector<BuildingSummary>& buildings_;

@@ -1,6 +1,8 @@
 // `pilotis export`: parts of a result file as CSV.
 #include <fmt/format.h>
 
+#include <algorithm>
+#include <functional>
 #include <memory>
 #include <optional>
 
@@ -8,6 +10,7 @@
 #include "apps/export_tables.hpp"
 #include "apps/terminal.hpp"
 #include "core/error.hpp"
+#include "io/results/result_table.hpp"
 #include "io/whole_file.hpp"
 
 namespace pilotis {
@@ -16,7 +19,7 @@ namespace {
 
 struct Options {
   std::string file, output, part;
-  int run = -1;
+  long run = -1;
   bool study_units = false;
 };
 
@@ -48,22 +51,45 @@ class Output {
                     "name them in the study, [keep] histories = [\"drift\"] or \"all\", and run it again");
 }
 
-void write_histories(const StoredStudy& stored, const Options& options, const TableUnits& units, Output& output) {
-  const int runs = static_cast<int>(stored.results.runs.size());
-  const int from = options.run < 0 ? 0 : options.run, to = options.run < 0 ? runs : options.run + 1;
+using Rows = std::function<std::string(const NumberedRun&, const TableUnits&)>;
+
+NumberedRun numbered(const ResultTable& table, const RunResult& run, std::size_t number) {
+  return {run, number, table.buildings().at(static_cast<std::size_t>(run.building))};
+}
+
+// The runs asked for, a few at a time.
+void write_runs(const ResultTable& table, const Options& options, const TableUnits& units, RowParts parts,
+                const Rows& rows, Output& output) {
+  constexpr std::size_t at_once = 128;
+  const std::size_t from = options.run < 0 ? 0 : static_cast<std::size_t>(options.run);
+  const std::size_t to = options.run < 0 ? table.runs() : from + 1;
+  for (std::size_t first = from; first < to; first += at_once) {
+    const std::vector<RunResult> runs = table.rows(first, std::min(at_once, to - first), parts);
+    for (std::size_t i = 0; i < runs.size(); ++i) output.write(rows(numbered(table, runs[i], first + i), units));
+  }
+}
+
+void write_histories(const ResultTable& table, const Options& options, const TableUnits& units, Output& output) {
+  const std::size_t from = options.run < 0 ? 0 : static_cast<std::size_t>(options.run);
+  const std::size_t to = options.run < 0 ? table.runs() : from + 1;
   bool any = false;
-  for (int i = from; i < to; ++i) {
-    const RunResult run = read_run(options.file, i);
-    if (run.histories.empty()) continue;
+  for (std::size_t i = from; i < to; ++i) {
+    if (!table.keeps_histories(i)) continue;
+    const RunResult run = table.with_histories(i);
     if (!any) output.write(history_header());
     any = true;
-    output.write(history_rows(run, i, static_cast<int>(stored.results.building.heights.size()), units));
+    output.write(history_rows(numbered(table, run, i), units));
   }
   if (!any) no_histories(options);
 }
 
-void require_run(const StoredStudy& stored, const Options& options) {
-  const int runs = static_cast<int>(stored.results.runs.size());
+void write_buildings(const ResultTable& table, const TableUnits& units, Output& output) {
+  output.write(building_header());
+  for (const BuildingSummary& building : table.buildings()) output.write(building_rows(building, units));
+}
+
+void require_run(const ResultTable& table, const Options& options) {
+  const auto runs = static_cast<long>(table.runs());
   if (options.run >= runs)
     throw input_error("--run", fmt::format("found {}, and {} has {} runs", options.run, options.file, runs),
                       fmt::format("runs are counted from 0 to {}", runs - 1));
@@ -71,21 +97,31 @@ void require_run(const StoredStudy& stored, const Options& options) {
     throw input_error("--run", fmt::format("does not go with {}", options.part), "leave it out");
 }
 
-void write_part(const StoredStudy& stored, const Options& options, Output& output) {
-  const TableUnits units(options.study_units, stored.units);
-  if (options.part == "--peaks") output.write(peaks_csv(stored, units, options.run));
-  if (options.part == "--residual") output.write(residuals_csv(stored, units, options.run));
-  if (options.part == "--histories") write_histories(stored, options, units, output);
-  if (options.part == "--runs") output.write(runs_csv(stored, units, options.run));
-  if (options.part == "--motions") output.write(motions_csv(stored, units));
-  if (options.part == "--building") output.write(building_csv(stored, units));
+void write_part(const ResultTable& table, const Options& options, Output& output) {
+  const TableUnits units(options.study_units, table.header().units);
+  if (options.part == "--peaks") {
+    output.write(peaks_header());
+    write_runs(table, options, units, RowParts::all, peaks_rows, output);
+  } else if (options.part == "--residual") {
+    output.write(residuals_header(units));
+    write_runs(table, options, units, RowParts::all, residuals_rows, output);
+  } else if (options.part == "--runs") {
+    output.write(runs_header(units));
+    write_runs(table, options, units, RowParts::heads, runs_rows, output);
+  } else if (options.part == "--histories") {
+    write_histories(table, options, units, output);
+  } else if (options.part == "--motions") {
+    output.write(motions_csv(table.header().motions, units));
+  } else {
+    write_buildings(table, units, output);
+  }
 }
 
 void export_part(const Options& options) {
-  const StoredStudy stored = read_results(options.file);
-  require_run(stored, options);
+  const ResultTable table(options.file);
+  require_run(table, options);
   Output output(options.output);
-  write_part(stored, options, output);
+  write_part(table, options, output);
   output.finish();
 }
 

@@ -2,8 +2,10 @@
 #pragma once
 
 #include <string>
+#include <vector>
 
-#include "io/results/store.hpp"
+#include "core/response/results.hpp"
+#include "io/study/study.hpp"
 
 namespace pilotis {
 
@@ -23,14 +25,28 @@ struct TableUnits {
 // A cell as RFC 4180 has it: quoted when it holds a comma, a quote or a line break.
 std::string csv_cell(const std::string& text);
 
-// `run`: -1 for all runs.
-std::string peaks_csv(const StoredStudy& stored, const TableUnits& units, int run);
-std::string residuals_csv(const StoredStudy& stored, const TableUnits& units, int run);
-std::string runs_csv(const StoredStudy& stored, const TableUnits& units, int run);
-std::string motions_csv(const StoredStudy& stored, const TableUnits& units);
-std::string building_csv(const StoredStudy& stored, const TableUnits& units);
-// Without the header row, so that runs may follow each other.
-std::string history_rows(const RunResult& run, int number, int stories, const TableUnits& units);
+// Header rows, each with its line end.
+std::string peaks_header();
+std::string residuals_header(const TableUnits& units);
+std::string runs_header(const TableUnits& units);
 std::string history_header();
+
+// A run of the file with its number, from 0, and its building.
+struct NumberedRun {
+  const RunResult& run;
+  std::size_t number;
+  const BuildingSummary& building;
+};
+
+// The rows of one run, so that runs may follow each other without being in memory together.
+std::string peaks_rows(const NumberedRun& of, const TableUnits& units);
+std::string residuals_rows(const NumberedRun& of, const TableUnits& units);
+std::string runs_rows(const NumberedRun& of, const TableUnits& units);
+std::string history_rows(const NumberedRun& of, const TableUnits& units);
+
+// Whole tables.
+std::string motions_csv(const std::vector<MotionSummary>& motions, const TableUnits& units);
+std::string building_header();
+std::string building_rows(const BuildingSummary& building, const TableUnits& units);
 
 }  // namespace pilotis

@@ -5,6 +5,7 @@
 #include <algorithm>
 #include <cmath>
 
+#include "apps/profile_sets.hpp"
 #include "apps/text_layout.hpp"
 
 namespace pilotis {
@@ -16,13 +17,13 @@ std::string length_text(double meters, const StudyUnits& units) {
   return fmt::format("{:.{}f} {}", value, decimals_for(value), units.name(Dimension::length));
 }
 
-std::string building_line(const StoredStudy& stored, const ProfileFacts& facts, const Signs& signs) {
-  const BuildingSummary& building = stored.results.building;
-  const double weight = facts.weight / stored.units.factor(Dimension::force);
-  std::string line = fmt::format("{} {}{}height {}{}weight {:.{}f} {}", building.heights.size(),
-                                 building.heights.size() == 1 ? "story" : "stories", signs.separator,
-                                 length_text(facts.height, stored.units), signs.separator, weight, decimals_for(weight),
-                                 stored.units.name(Dimension::force));
+std::string building_line(const BuildingSummary& building, const StudyUnits& units, const Signs& signs) {
+  const Bulk bulk = bulk_of(building);
+  const double weight = bulk.weight / units.factor(Dimension::force);
+  std::string line =
+      fmt::format("{} {}{}height {}{}weight {:.{}f} {}", building.heights.size(),
+                  building.heights.size() == 1 ? "story" : "stories", signs.separator, length_text(bulk.height, units),
+                  signs.separator, weight, decimals_for(weight), units.name(Dimension::force));
   const std::size_t shown = std::min<std::size_t>(building.modes.size(), 3);
   for (std::size_t i = 0; i < shown; ++i)
     line += fmt::format("{}T{} {:.{}f} s", signs.separator, i + 1, building.modes[i].period,
@@ -39,21 +40,17 @@ std::string runs_line(const Verdict& verdict) {
 }
 
 // How it was marched; of the first run where runs differ.
-std::string march_line(const StudyResults& results, const Signs& signs) {
-  if (results.runs.empty()) return "";
-  double least = INFINITY, most = 0, energy = 0;
-  for (const RunResult& run : results.runs) {
-    least = std::min(least, run.step);
-    most = std::max(most, run.step);
-    energy = std::fmax(energy, run.energy_error);
-  }
-  const std::string steps =
-      least == most ? fmt::format("step {:g} s", least) : fmt::format("steps {:g} to {:g} s", least, most);
-  return fmt::format("{}{}{}{}energy error up to {:.1g} of the input", results.runs.front().scheme, signs.separator,
-                     steps, signs.separator, energy);
+std::string march_line(const RunTable& table, const Signs& signs) {
+  if (table.runs() == 0) return "";
+  const MarchFacts march = march_facts(table);
+  const std::string steps = march.least_step == march.largest_step
+                                ? fmt::format("step {:g} s", march.least_step)
+                                : fmt::format("steps {:g} to {:g} s", march.least_step, march.largest_step);
+  return fmt::format("{}{}{}{}energy error up to {:.1g} of the input", march.scheme, signs.separator, steps,
+                     signs.separator, march.energy_error);
 }
 
-std::string factor_title(const FactorFacts& facts, const ScreenStyle& style) {
+std::string set_title(const SetFacts& facts, const ScreenStyle& style) {
   const Signs signs(style);
   const bool still = facts.runs == 1 && facts.stories.front().drift_ratio.motion == "none";
   const std::string ground =
@@ -100,40 +97,83 @@ std::string ratio_line(const std::string& name, const Largest& largest, double o
   return line + right(number_text(largest.mean / of / unit, decimals, signs), 9) + "\n";
 }
 
+// A building by its name, where there are several: a line before its sets.
+std::string building_heading(const BuildingSummary& building, const StudyUnits& units, const ScreenStyle& style) {
+  const auto width = static_cast<std::size_t>(style.width);
+  std::string text = painted(clipped(building.name, width, style), Tone::strong, style) + "\n";
+  return text + clipped(building_line(building, units, Signs(style)), width, style) + "\n";
+}
+
+std::string set_text(const SetFacts& facts, double scale, const BuildingSummary& building, const StudyUnits& units,
+                     const ScreenStyle& style) {
+  return set_title(facts, style) + "\n" + story_table(facts, scale, units, style) + "\n" +
+         set_summary(facts, building, units, style) + "\n";
+}
+
+// Every set with its stories.
+std::string all_sets(const StudyHeader& header, const RunTable& table, const ScreenStyle& style) {
+  std::vector<SetFacts> sets;
+  for (const RunSet& set : table.sets()) sets.push_back(set_facts(table, set, header.limits));
+  const double scale = bar_scale(sets);
+  std::string text;
+  int headed = table.buildings().size() > 1 ? -1 : 0;
+  for (const SetFacts& set : sets) {
+    const BuildingSummary& building = table.buildings().at(static_cast<std::size_t>(set.building));
+    if (set.building != headed) text += building_heading(building, header.units, style) + "\n";
+    headed = set.building;
+    text += set_text(set, scale, building, header.units, style);
+  }
+  return text;
+}
+
+// A line for each set, or the worst of them, and the governing one with its stories.
+std::string worst_sets(const StudyHeader& header, const RunTable& table, const Verdict& verdict,
+                       const ScreenStyle& style) {
+  const RankedSets ranked(table, verdict);
+  std::string text = ranked.text(table, most_sets_listed, style) + "\n";
+  const SetFacts worst = set_facts(table, table.sets()[ranked.order().front()], header.limits);
+  const BuildingSummary& building = table.buildings().at(static_cast<std::size_t>(worst.building));
+  text += painted("The governing one", Tone::quiet, style) + "\n";
+  if (table.buildings().size() > 1) text += building_heading(building, header.units, style);
+  return text + set_text(worst, bar_scale({worst}), building, header.units, style);
+}
+
+std::string study_lines(const StudyHeader& header, const RunTable& table, const ScreenStyle& style) {
+  const Signs signs(style);
+  const auto width = static_cast<std::size_t>(style.width);
+  const std::size_t buildings = table.buildings().size();
+  std::string text = painted(clipped(header.title, width, style), Tone::strong, style) + "\n";
+  text += buildings == 1 ? clipped(building_line(table.buildings()[0], header.units, signs), width, style)
+                         : fmt::format("{} buildings", buildings);
+  return text + "\n" + clipped(march_line(table, signs), width, style) + "\n";
+}
+
 }  // namespace
 
-std::string factor_summary(const FactorFacts& facts, const ProfileFacts& building, const StudyUnits& units,
-                           const ScreenStyle& style) {
+std::string set_summary(const SetFacts& facts, const BuildingSummary& building, const StudyUnits& units,
+                        const ScreenStyle& style) {
   const Signs signs(style);
+  const Bulk bulk = bulk_of(building);
   const std::string head = left("", 30) + right("largest", 9) + right(signs.plus_minus + "step", 9) + right("mean", 9) +
                            "   " + left("where", 9) + "motion";
   std::string text = painted(head, Tone::quiet, style) + "\n";
   text += summary_line("base shear", facts.base_shear, *find_quantity("base_shear"), units, style);
-  text += ratio_line("base shear over weight", facts.base_shear, building.weight, 0.01, "%", 1, style);
+  text += ratio_line("base shear over weight", facts.base_shear, bulk.weight, 0.01, "%", 1, style);
   text +=
       summary_line("roof displacement", facts.roof_displacement, *find_quantity("floor_displacement"), units, style);
-  text += ratio_line("roof drift (over height)", facts.roof_displacement, building.height, 0.01, "%", 2, style);
+  text += ratio_line("roof drift (over height)", facts.roof_displacement, bulk.height, 0.01, "%", 2, style);
   text +=
       summary_line("floor acceleration", facts.floor_acceleration, *find_quantity("floor_acceleration"), units, style);
   return text;
 }
 
-std::string profile_text(const StoredStudy& stored, const Verdict& verdict, const ScreenStyle& style) {
-  const Signs signs(style);
-  const ProfileFacts facts = profile_facts(stored);
-  const auto width = static_cast<std::size_t>(style.width);
-  std::string text = painted(clipped(stored.title, width, style), Tone::strong, style) + "\n";
-  text += clipped(building_line(stored, facts, signs), width, style) + "\n";
-  text += clipped(march_line(stored.results, signs), width, style) + "\n";
-  text +=
-      painted(runs_line(verdict), verdict.collapsed + verdict.not_converged > 0 ? Tone::warning : Tone::plain, style) +
-      "\n\n";
-  const double scale = bar_scale(facts);
-  for (const FactorFacts& factor : facts.factors) {
-    text += factor_title(factor, style) + "\n" + story_table(factor, scale, stored.units, style) + "\n";
-    text += factor_summary(factor, facts, stored.units, style) + "\n";
-  }
-  return text + verdict_text(stored, verdict, style);
+std::string profile_text(const StudyHeader& header, const RunTable& table, const Verdict& verdict,
+                         const ScreenStyle& style) {
+  const Tone tone = verdict.collapsed + verdict.not_converged > 0 ? Tone::warning : Tone::plain;
+  return study_lines(header, table, style) + painted(runs_line(verdict), tone, style) + "\n\n" +
+         (table.sets().size() <= most_sets_whole ? all_sets(header, table, style)
+                                                 : worst_sets(header, table, verdict, style)) +
+         verdict_text(header, table, verdict, style);
 }
 
 }  // namespace pilotis

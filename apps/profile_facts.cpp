@@ -5,34 +5,28 @@
 #include <limits>
 #include <numeric>
 
+#include "core/verdict/statistics.hpp"
+
 namespace pilotis {
 
 namespace {
 
 constexpr double unknown = std::numeric_limits<double>::quiet_NaN();
-using Runs = std::vector<const RunResult*>;
 
-Runs done_of(const Runs& runs) {
-  Runs done;
-  for (const RunResult* run : runs)
-    if (run->status == RunStatus::done) done.push_back(run);
-  return done;
+const BuildingSummary& building_of(const RunTable& table, const RunSet& set) {
+  return table.buildings().at(static_cast<std::size_t>(set.building));
 }
 
-Largest largest_at(const StudyResults& results, const Runs& done, const Quantity& quantity, int place) {
-  std::vector<RunPeak> peaks;
-  for (const RunResult* run : done) peaks.push_back(run_peak(results, *run, quantity, place));
-  const SuiteValue largest = suite_value(peaks, Statistic::max, 0);
-  Largest found{largest.value, largest.step_error, suite_value(peaks, Statistic::mean, 0).value, place, ""};
-  if (largest.governing) found.motion = largest.governing->motion;
-  return found;
+Largest largest_at(const RunTable& table, const RunSet& set, const Quantity& quantity, int place) {
+  const DoneValue found = done_value(suite_column(table, set, quantity, place));
+  return {found.largest, found.step_error, found.mean, place, found.run ? table.motion(set.first + *found.run) : ""};
 }
 
 // Over all stories or floors.
-Largest largest_of(const StudyResults& results, const Runs& done, const Quantity& quantity) {
-  Largest worst = largest_at(results, done, quantity, 1);
-  for (int place = 2; place <= places_of(quantity, results); ++place)
-    if (Largest here = largest_at(results, done, quantity, place); here.value > worst.value) worst = here;
+Largest largest_of(const RunTable& table, const RunSet& set, const Quantity& quantity) {
+  Largest worst = largest_at(table, set, quantity, 1);
+  for (int place = 2; place <= places_of(quantity, building_of(table, set)); ++place)
+    if (Largest here = largest_at(table, set, quantity, place); here.value > worst.value) worst = here;
   if (quantity.per == Per::run) worst.place = 0;
   return worst;
 }
@@ -46,59 +40,78 @@ const Limit* drift_limit_for(const std::vector<Limit>& limits, double factor) {
   return nullptr;
 }
 
-double statistic_at(const StudyResults& results, const Runs& runs, const Limit& limit, int place) {
-  std::vector<RunPeak> peaks;
-  for (const RunResult* run : runs) peaks.push_back(run_peak(results, *run, *limit.quantity, place));
-  return suite_value(peaks, limit.statistic, limit.percentile).value;
+// Quantity by quantity over all stories: a file is then read block by block.
+void fill_stories(const RunTable& table, const RunSet& set, const Quantity& quantity, Largest StoryFacts::*member,
+                  std::vector<StoryFacts>& stories) {
+  for (StoryFacts& story : stories) story.*member = largest_at(table, set, quantity, story.story);
 }
 
-StoryFacts story_facts(const StudyResults& results, const Runs& runs, const Runs& done, const Limit* limit, int story) {
-  StoryFacts facts;
-  facts.story = story;
-  const auto& labels = results.building.labels;
-  if (static_cast<std::size_t>(story) <= labels.size()) facts.label = labels[static_cast<std::size_t>(story) - 1];
-  facts.drift_ratio = largest_at(results, done, *find_quantity("drift_ratio"), story);
-  facts.residual_drift_ratio = largest_at(results, done, residual_drift_ratio(), story);
-  facts.ductility = largest_at(results, done, *find_quantity("ductility"), story);
-  facts.story_shear = largest_at(results, done, *find_quantity("story_shear"), story);
-  facts.statistic = limit ? statistic_at(results, runs, *limit, story) : unknown;
-  facts.margin = limit ? (limit->value - facts.statistic) / limit->value : unknown;
-  return facts;
-}
-
-int count_of(const Runs& runs, RunStatus status) {
-  return static_cast<int>(
-      std::count_if(runs.begin(), runs.end(), [=](const RunResult* r) { return r->status == status; }));
-}
-
-FactorFacts factor_facts(const StoredStudy& stored, double factor) {
-  const StudyResults& results = stored.results;
-  const Runs runs = runs_at(results, factor), done = done_of(runs);
-  const int stories = static_cast<int>(results.building.heights.size());
-  FactorFacts facts;
-  facts.factor = factor;
-  facts.runs = static_cast<int>(runs.size());
-  facts.done = static_cast<int>(done.size());
-  facts.collapsed = count_of(runs, RunStatus::collapsed);
-  facts.not_converged = count_of(runs, RunStatus::not_converged);
-  facts.limit = drift_limit_for(stored.limits, factor);
-  for (int story = 1; story <= stories; ++story)
-    facts.stories.push_back(story_facts(results, runs, done, facts.limit, story));
-  facts.base_shear = largest_of(results, done, *find_quantity("base_shear"));
-  facts.roof_displacement = largest_at(results, done, *find_quantity("floor_displacement"), stories);
-  facts.floor_acceleration = largest_of(results, done, *find_quantity("floor_acceleration"));
-  facts.overturning_moment = largest_at(results, done, *find_quantity("overturning_moment"), 1);
-  return facts;
+std::vector<StoryFacts> stories_of(const RunTable& table, const RunSet& set, const Limit* limit) {
+  const BuildingSummary& building = building_of(table, set);
+  std::vector<StoryFacts> stories(building.heights.size());
+  for (std::size_t i = 0; i < stories.size(); ++i) {
+    StoryFacts& story = stories[i];
+    story.story = static_cast<int>(i) + 1;
+    if (i < building.labels.size()) story.label = building.labels[i];
+    story.statistic = limit ? suite_value(suite_column(table, set, *limit->quantity, story.story), limit->statistic,
+                                          limit->percentile)
+                                  .value
+                            : unknown;
+    story.margin = limit ? (limit->value - story.statistic) / limit->value : unknown;
+  }
+  fill_stories(table, set, *find_quantity("drift_ratio"), &StoryFacts::drift_ratio, stories);
+  fill_stories(table, set, residual_drift_ratio(), &StoryFacts::residual_drift_ratio, stories);
+  fill_stories(table, set, *find_quantity("ductility"), &StoryFacts::ductility, stories);
+  fill_stories(table, set, *find_quantity("story_shear"), &StoryFacts::story_shear, stories);
+  return stories;
 }
 
 }  // namespace
 
-ProfileFacts profile_facts(const StoredStudy& stored) {
-  const BuildingSummary& building = stored.results.building;
-  ProfileFacts facts;
-  facts.height = std::accumulate(building.heights.begin(), building.heights.end(), 0.0);
-  facts.weight = std::accumulate(building.masses.begin(), building.masses.end(), 0.0) * standard_gravity;
-  for (double factor : factors_of(stored.results)) facts.factors.push_back(factor_facts(stored, factor));
+SetFacts set_facts(const RunTable& table, const RunSet& set, const std::vector<Limit>& limits) {
+  SetFacts facts;
+  facts.building = set.building;
+  facts.factor = set.factor;
+  for (RunStatus status : table.statuses().subspan(set.first, set.count)) {
+    ++facts.runs;
+    facts.done += status == RunStatus::done;
+    facts.collapsed += status == RunStatus::collapsed;
+    facts.not_converged += status == RunStatus::not_converged;
+  }
+  facts.limit = drift_limit_for(limits, set.factor);
+  facts.stories = stories_of(table, set, facts.limit);
+  facts.base_shear = largest_of(table, set, *find_quantity("base_shear"));
+  facts.roof_displacement =
+      largest_at(table, set, *find_quantity("floor_displacement"), static_cast<int>(facts.stories.size()));
+  facts.floor_acceleration = largest_of(table, set, *find_quantity("floor_acceleration"));
+  facts.overturning_moment = largest_at(table, set, *find_quantity("overturning_moment"), 1);
+  return facts;
+}
+
+Largest largest_drift_ratio(const RunTable& table, const RunSet& set) {
+  return largest_of(table, set, *find_quantity("drift_ratio"));
+}
+
+Bulk bulk_of(const BuildingSummary& building) {
+  return {std::accumulate(building.heights.begin(), building.heights.end(), 0.0),
+          std::accumulate(building.masses.begin(), building.masses.end(), 0.0) * standard_gravity};
+}
+
+MarchFacts march_facts(const RunTable& table) {
+  MarchFacts facts{"", INFINITY, 0, 0};
+  if (table.runs() == 0) return facts;
+  facts.scheme = table.rows(0, 1, RowParts::heads)[0].scheme;
+  std::vector<double> part;
+  for (std::size_t first = 0; first < table.runs(); first += part.size()) {
+    part.resize(std::min<std::size_t>(4096, table.runs() - first));
+    table.numbers(&RunResult::step, first, part);
+    for (double step : part) {
+      facts.least_step = std::min(facts.least_step, step);
+      facts.largest_step = std::max(facts.largest_step, step);
+    }
+    table.numbers(&RunResult::energy_error, first, part);
+    for (double error : part) facts.energy_error = std::fmax(facts.energy_error, error);
+  }
   return facts;
 }
 

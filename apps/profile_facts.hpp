@@ -5,12 +5,11 @@
 #include <vector>
 
 #include "core/verdict/limit.hpp"
-#include "core/verdict/statistics.hpp"
-#include "io/results/store.hpp"
+#include "core/verdict/run_table.hpp"
 
 namespace pilotis {
 
-// The largest magnitude over the motions at one factor, of the runs that were done. All NaN when none was.
+// The largest magnitude over the runs of a set that were done. All NaN when none was.
 struct Largest {
   double value = 0;       // SI, magnitude
   double step_error = 0;  // SI; NaN: not estimated
@@ -28,7 +27,9 @@ struct StoryFacts {
   double margin = 0;  // (limit - statistic) / limit; NaN: no limit
 };
 
-struct FactorFacts {
+// Of one building at one factor.
+struct SetFacts {
+  int building = 0;
   double factor = 1;
   int runs = 0, done = 0, collapsed = 0, not_converged = 0;
   const Limit* limit = nullptr;     // the first drift_ratio limit for this factor; nullptr: none
@@ -36,12 +37,23 @@ struct FactorFacts {
   Largest base_shear, roof_displacement, floor_acceleration, overturning_moment;
 };
 
-struct ProfileFacts {
-  double height = 0, weight = 0;     // m, N
-  std::vector<FactorFacts> factors;  // in the order of the study
-};
+// Points at one of `limits`.
+SetFacts set_facts(const RunTable& table, const RunSet& set, const std::vector<Limit>& limits);
 
-// `stored` must outlive the result, which points at its limits.
-ProfileFacts profile_facts(const StoredStudy& stored);
+// The largest drift ratio over the stories of the runs that were done.
+Largest largest_drift_ratio(const RunTable& table, const RunSet& set);
+
+struct Bulk {
+  double height = 0, weight = 0;  // m, N
+};
+Bulk bulk_of(const BuildingSummary& building);
+
+// How all runs were marched.
+struct MarchFacts {
+  std::string scheme;                       // of the first run
+  double least_step = 0, largest_step = 0;  // s
+  double energy_error = 0;                  // largest, fraction of the input
+};
+MarchFacts march_facts(const RunTable& table);
 
 }  // namespace pilotis

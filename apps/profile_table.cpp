@@ -1,4 +1,4 @@
-// The stories of one factor from the roof down, each with its drift ratio as a bar against the limit.
+// The stories of one set from the roof down, each with its drift ratio as a bar against the limit.
 #include <fmt/format.h>
 
 #include <algorithm>
@@ -82,7 +82,7 @@ struct Decimals {
   int drift = 2, residual = 2, ductility = 2, shear = 0;
 };
 
-Decimals decimals_of(const FactorFacts& facts, const ShownUnit& force) {
+Decimals decimals_of(const SetFacts& facts, const ShownUnit& force) {
   double residual = 0, ductility = 0, shear = 0, drift = 0;
   for (const StoryFacts& story : facts.stories) {
     drift = std::fmax(drift, story.drift_ratio.value);
@@ -147,17 +147,17 @@ std::string heading(const Limit* limit, const Widths& widths, const ShownUnit& f
 
 }  // namespace
 
-double bar_scale(const ProfileFacts& facts) {
+double bar_scale(const std::vector<SetFacts>& sets) {
   double largest = 0, limit = 0;
-  for (const FactorFacts& factor : facts.factors) {
-    if (factor.limit) limit = std::max(limit, factor.limit->value);
-    for (const StoryFacts& story : factor.stories) largest = std::fmax(largest, story.drift_ratio.value);
+  for (const SetFacts& set : sets) {
+    if (set.limit) limit = std::max(limit, set.limit->value);
+    for (const StoryFacts& story : set.stories) largest = std::fmax(largest, story.drift_ratio.value);
   }
   if (limit == 0) return largest > 0 ? largest : 1;
   return std::clamp(largest, 1.15 * limit, 2.5 * limit);
 }
 
-std::string story_table(const FactorFacts& facts, double largest_shown, const StudyUnits& units,
+std::string story_table(const SetFacts& facts, double largest_shown, const StudyUnits& units,
                         const ScreenStyle& style) {
   const ShownUnit force = shown_unit(*find_quantity("story_shear"), units);
   const Widths widths = widths_for(style, facts.limit != nullptr);

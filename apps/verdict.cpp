@@ -9,8 +9,8 @@
 #include "apps/profile.hpp"
 #include "apps/report_json.hpp"
 #include "core/error.hpp"
-#include "core/verdict/statistics.hpp"
 #include "integrators/catalogue.hpp"
+#include "io/results/result_table.hpp"
 
 namespace pilotis {
 
@@ -21,9 +21,16 @@ struct Options {
   bool json = false;
 };
 
+std::vector<double> factors_with_runs(const RunTable& table) {
+  std::vector<double> factors;
+  for (const RunSet& set : table.sets())
+    if (std::find(factors.begin(), factors.end(), set.factor) == factors.end()) factors.push_back(set.factor);
+  return factors;
+}
+
 // A limit for a factor that was never run would be passed over in silence.
-void require_factors(const std::vector<Limit>& limits, const StudyResults& results, const Options& options) {
-  const auto run = factors_of(results);
+void require_factors(const std::vector<Limit>& limits, const RunTable& table, const Options& options) {
+  const auto run = factors_with_runs(table);
   for (std::size_t i = 0; i < limits.size(); ++i)
     for (double factor : limits[i].factors)
       if (std::find(run.begin(), run.end(), factor) == run.end())
@@ -34,12 +41,15 @@ void require_factors(const std::vector<Limit>& limits, const StudyResults& resul
 }
 
 int judged(const Options& options) {
-  StoredStudy stored = read_results(options.file);
-  if (!options.limits.empty()) stored.limits = read_study(options.limits, scheme_catalogue()).limits;
-  require_factors(stored.limits, stored.results, options);
-  const Verdict verdict = judge(stored.results, stored.limits);
-  print_out(options.json ? report_json(stored, verdict).dump(2) + "\n"
-                         : profile_text(stored, verdict, screen_style(stdout)));
+  const ResultTable table(options.file);
+  StudyHeader header = table.header();
+  if (!options.limits.empty()) header.limits = read_study(options.limits, scheme_catalogue()).limits;
+  require_factors(header.limits, table, options);
+  const Verdict verdict = judge(table, header.limits);
+  if (options.json)
+    write_report_json(header, table, verdict, print_out);
+  else
+    print_out(profile_text(header, table, verdict, screen_style(stdout)));
   return exit_status(verdict);
 }
 

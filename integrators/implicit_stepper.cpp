@@ -15,6 +15,8 @@ class ImplicitStepper : public Stepper {
     return {converged ? StepStatus::done : StepStatus::retry_smaller, 1};
   }
 
+  Forces<double>* forces() noexcept override { return &workspace_.forces; }
+
  private:
   const System& system_;
   ImplicitCoefficients coefficients_;

@@ -62,7 +62,8 @@ class LaneLoop {
       const Taken<R> taken = take(state_, {dt_, before_.data(), after_.data()});
       const Mask<R> accepted = judged(taken);
       move_on(taken, accepted);
-      const Mask<R> stopped = negated(show(accepted, taken.forces)) & accepted;
+      Mask<R> stopped{};
+      if (any(accepted)) stopped = negated(show(accepted, taken.forces)) & accepted;
       for (int i = 0; i < width; ++i) {
         Lane& lane = lanes_[i];
         if (!lane.busy) continue;

@@ -7,7 +7,7 @@
 #include <memory>
 #include <string>
 
-#include "core/system/state.hpp"
+#include "core/system/kernel.hpp"
 
 namespace pilotis {
 
@@ -45,6 +45,8 @@ class Stepper {
   // Takes u, v, a and the memories of `state` over the step (its clock is the loop's business). Unless done, the state
   // is left as it was. Does not allocate or throw; may leave non-finite numbers, which the loop checks for.
   virtual StepResult step(State<double>& state, const LoadStep& load) noexcept = 0;
+  // The internal forces at the state of the last step that was done, where the scheme has them at hand; else null.
+  virtual Forces<double>* forces() noexcept { return nullptr; }
 };
 
 // How a stepper is to be prepared.

@@ -11,7 +11,7 @@ struct StepperTake {
 
   Taken<double> operator()(State<double>& state, const LoadStep& load) noexcept {
     const StepResult result = stepper.step(state, load);
-    return {result.status == StepStatus::done, result.status == StepStatus::failed, result.share};
+    return {result.status == StepStatus::done, result.status == StepStatus::failed, result.share, stepper.forces()};
   }
 };
 

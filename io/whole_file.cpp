@@ -45,7 +45,7 @@ WholeFile::WholeFile(fs::path target) : target_(std::move(target)), folder_(targ
   if (fs::is_directory(target_, ignored)) fail(target_, "cannot be written", EISDIR);
   for (int attempt = 0; file_ < 0; ++attempt) {
     passing_ = passing_name(target_, attempt);
-    file_ = ::open(passing_.c_str(), O_CREAT | O_EXCL | O_WRONLY | O_CLOEXEC, 0666);
+    file_ = ::open(passing_.c_str(), O_CREAT | O_EXCL | O_RDWR | O_CLOEXEC, 0666);
     if (file_ < 0 && errno != EEXIST) fail(target_, "cannot be written", errno);
   }
 }

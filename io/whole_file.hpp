@@ -15,6 +15,9 @@ class WholeFile {
   WholeFile(const WholeFile&) = delete;
   WholeFile& operator=(const WholeFile&) = delete;
 
+  // Of the file under its passing name, for who writes it at chosen places; -1 after commit().
+  int descriptor() const { return file_; }
+
   // Appends. Throws Error (outside).
   void write(std::span<const char> bytes);
 

@@ -8,7 +8,7 @@
 
 namespace pilotis {
 
-enum class RunStatus { done, collapsed, not_converged };
+enum class RunStatus : unsigned char { done, collapsed, not_converged };
 std::string_view status_name(RunStatus status);  // "done", "collapsed", "not converged"
 
 // The extreme of largest magnitude over the run.
@@ -24,7 +24,9 @@ struct History {
   std::vector<double> values;  // SI, [time][story|floor], row-major
 };
 
+// Runs are counted from 0: ((building * factors + factor) * motions + motion). A study without motions has one, "none".
 struct RunResult {
+  int building = 0;         // which of the study's, counted from 0
   std::string motion;       // name; "none" without ground motion
   double factor = 1;        // on the ground motion
   std::string scheme;       // name with its parameters
@@ -54,6 +56,7 @@ struct Mode {
 };
 
 struct BuildingSummary {
+  std::string name;  // unique in the study
   std::string title;
   std::vector<std::string> labels;  // [story]
   std::vector<double> heights;      // m, [story]
@@ -71,7 +74,7 @@ struct MotionSummary {
 };
 
 struct StudyResults {
-  BuildingSummary building;
+  std::vector<BuildingSummary> buildings;
   std::vector<MotionSummary> motions;
   std::vector<RunResult> runs;  // all motions at the first factor, then at the next
 };

@@ -21,14 +21,14 @@ bool further(const SuiteValue& a, const SuiteValue& b) {
   return std::isinf(a.value) && a.recorded > b.recorded;
 }
 
-Placed governing_place(const StudyResults& results, const std::vector<const RunResult*>& runs, const Limit& limit) {
+Placed governing_place(const RunTable& table, const RunSet& set, const Limit& limit) {
+  const BuildingSummary& building = table.buildings().at(static_cast<std::size_t>(set.building));
   Placed worst;
   double at_least = 0;
   int open = 0;
-  for (int place = 1; place <= places_of(*limit.quantity, results); ++place) {
-    std::vector<RunPeak> peaks;
-    for (const RunResult* run : runs) peaks.push_back(run_peak(results, *run, *limit.quantity, place));
-    const SuiteValue suite = suite_value(peaks, limit.statistic, limit.percentile);
+  for (int place = 1; place <= places_of(*limit.quantity, building); ++place) {
+    const SuiteValue suite =
+        suite_value(suite_column(table, set, *limit.quantity, place), limit.statistic, limit.percentile);
     at_least = std::fmax(at_least, suite.at_least);
     open = std::max(open, suite.open);
     if (worst.place == 0 || further(suite, worst.suite)) worst = {place, suite};
@@ -45,27 +45,41 @@ Finding finding_of(const SuiteValue& suite, double limit) {
   return suite.value > limit ? Finding::exceeded : Finding::holds;
 }
 
-void count(const RunResult& run, int& runs, int& collapsed, int& not_converged) {
-  ++runs;
-  collapsed += run.status == RunStatus::collapsed;
-  not_converged += run.status == RunStatus::not_converged;
+void count(std::span<const RunStatus> statuses, int& runs, int& collapsed, int& not_converged) {
+  for (RunStatus status : statuses) {
+    ++runs;
+    collapsed += status == RunStatus::collapsed;
+    not_converged += status == RunStatus::not_converged;
+  }
 }
 
-Outcome outcome_of(const StudyResults& results, const Limit& limit, int index, double factor) {
+Outcome outcome_of(const RunTable& table, const RunSet& set, const Limit& limit, std::size_t index) {
   Outcome outcome;
-  outcome.limit = index;
-  outcome.factor = factor;
-  const auto runs = runs_at(results, factor);
-  for (const RunResult* run : runs) count(*run, outcome.runs, outcome.collapsed, outcome.not_converged);
-  const Placed worst = governing_place(results, runs, limit);
+  outcome.limit = static_cast<int>(index);
+  outcome.building = set.building;
+  outcome.factor = set.factor;
+  count(table.statuses().subspan(set.first, set.count), outcome.runs, outcome.collapsed, outcome.not_converged);
+  const Placed worst = governing_place(table, set, limit);
   outcome.value = worst.suite.value;
   outcome.step_error = worst.suite.step_error;
   outcome.place = limit.quantity->per == Per::run || std::isnan(outcome.value) ? 0 : worst.place;
-  if (worst.suite.governing) outcome.motion = worst.suite.governing->motion;
+  if (worst.suite.governing) outcome.motion = table.motion(set.first + *worst.suite.governing);
   outcome.margin = (limit.value - outcome.value) / limit.value;
   outcome.exceeded = outcome.value > limit.value;
   outcome.finding = finding_of(worst.suite, limit.value);
   return outcome;
+}
+
+// The sets a limit is for; one of no runs where a building has none at a factor the limit names.
+std::vector<RunSet> sets_for(const RunTable& table, const Limit& limit) {
+  if (limit.factors.empty()) return table.sets();
+  std::vector<RunSet> sets;
+  for (std::size_t building = 0; building < table.buildings().size(); ++building)
+    for (double factor : limit.factors) sets.push_back({static_cast<int>(building), factor, 0, 0});
+  for (const RunSet& set : table.sets())
+    for (std::size_t i = 0; i < limit.factors.size(); ++i)
+      if (limit.factors[i] == set.factor) sets[set.building * limit.factors.size() + i] = set;
+  return sets;
 }
 
 }  // namespace
@@ -82,14 +96,12 @@ bool Verdict::any_exceeded() const {
   return false;
 }
 
-Verdict judge(const StudyResults& results, const std::vector<Limit>& limits) {
+Verdict judge(const RunTable& table, const std::vector<Limit>& limits) {
   Verdict verdict;
-  for (const RunResult& run : results.runs) count(run, verdict.runs, verdict.collapsed, verdict.not_converged);
-  for (std::size_t i = 0; i < limits.size(); ++i) {
-    const auto factors = limits[i].factors.empty() ? factors_of(results) : limits[i].factors;
-    for (double factor : factors)
-      verdict.outcomes.push_back(outcome_of(results, limits[i], static_cast<int>(i), factor));
-  }
+  count(table.statuses(), verdict.runs, verdict.collapsed, verdict.not_converged);
+  for (std::size_t i = 0; i < limits.size(); ++i)
+    for (const RunSet& set : sets_for(table, limits[i]))
+      verdict.outcomes.push_back(outcome_of(table, set, limits[i], i));
   return verdict;
 }
 

@@ -2,8 +2,10 @@
 
 #include <algorithm>
 #include <cmath>
+#include <cstdint>
 #include <limits>
-#include <numeric>
+#include <utility>
+#include <vector>
 
 namespace pilotis {
 
@@ -12,74 +14,105 @@ namespace {
 constexpr double unknown = std::numeric_limits<double>::quiet_NaN();
 constexpr double beyond = std::numeric_limits<double>::infinity();
 
-Peak residual_ratio(const StudyResults& results, const RunResult& run, int place) {
-  const std::size_t i = static_cast<std::size_t>(place) - 1;
-  if (i >= run.residual_drift.size()) return {unknown, 0, unknown};
-  const double height = results.building.heights.at(i);
-  const double error = i < run.residual_error.size() ? run.residual_error[i] : unknown;
-  return {run.residual_drift[i] / height, run.time_reached, error / height};
+double magnitude(const SuiteColumn& column, std::size_t i) {
+  if (column.statuses[i] == RunStatus::collapsed) return beyond;
+  return column.statuses[i] == RunStatus::done ? std::abs(column.values[i].value) : unknown;
 }
 
-Peak listed_peak(const StudyResults& results, const RunResult& run, const Quantity& quantity, int place) {
-  const ResponseLayout layout(static_cast<int>(results.building.heights.size()));
-  const std::size_t at = layout.offset(quantity) + static_cast<std::size_t>(place) - 1;
-  return at < run.peaks.size() ? run.peaks[at] : Peak{unknown, 0, unknown};
+double step_error(const SuiteColumn& column, std::size_t i) {
+  return column.statuses[i] == RunStatus::done ? column.values[i].step_error : unknown;
 }
 
-double statistic_of(const std::vector<double>& values, Statistic statistic, double percentile) {
-  switch (statistic) {
-    case Statistic::mean:
-      return mean_of(values);
-    case Statistic::max:
-      return percentile_of(values, 100);
-    case Statistic::median:
-      return percentile_of(values, 50);
-    case Statistic::percentile:
-      return percentile_of(values, percentile);
-  }
-  return unknown;
+// As far as the run went; 0 when nothing was recorded.
+double recorded(const SuiteColumn& column, std::size_t i) {
+  const double value = std::abs(column.values[i].value);
+  return std::isfinite(value) ? value : 0;
 }
 
-// The larger error of the runs an order statistic falls on or between; NaN when one of them is unknown.
-double order_error(std::vector<RunPeak> peaks, double percentile) {
-  std::stable_sort(peaks.begin(), peaks.end(),
-                   [](const RunPeak& a, const RunPeak& b) { return a.magnitude < b.magnitude; });
-  const OrderPosition at = percentile_position(peaks.size(), percentile);
-  const double lower = peaks[at.lower].step_error, upper = peaks[at.upper].step_error;
-  if (at.fraction == 0) return lower;
-  if (std::isnan(lower) || std::isnan(upper)) return unknown;
-  return std::max(lower, upper);
-}
-
-double statistic_error(const std::vector<RunPeak>& peaks, Statistic statistic, double percentile) {
-  switch (statistic) {
-    case Statistic::mean: {
-      double sum = 0;
-      for (const RunPeak& peak : peaks) sum += peak.step_error;
-      return sum / static_cast<double>(peaks.size());
+// Fills governing, recorded and open. Larger peak first; among collapsed runs the one that had gone further.
+void find_governing(const SuiteColumn& column, SuiteValue& suite) {
+  double largest = unknown;
+  for (std::size_t i = 0; i < column.values.size(); ++i) {
+    const double here = magnitude(column, i), reached = recorded(column, i);
+    if (std::isnan(here)) {
+      ++suite.open;
+      continue;
     }
-    case Statistic::max:
-      return order_error(peaks, 100);
-    case Statistic::median:
-      return order_error(peaks, 50);
-    case Statistic::percentile:
-      return order_error(peaks, percentile);
+    const bool governs = !suite.governing || here > largest || (here == largest && reached > suite.recorded);
+    if (!governs) continue;
+    largest = here;
+    suite.governing = i;
+    suite.recorded = reached;
   }
-  return unknown;
 }
 
-// Larger peak first; among collapsed runs the one that had gone further.
-bool governs(const RunPeak& a, const RunPeak& b) {
-  if (a.magnitude != b.magnitude) return a.magnitude > b.magnitude;
-  return a.recorded > b.recorded;
+void take_mean(const SuiteColumn& column, SuiteValue& suite) {
+  double sum = 0, errors = 0;
+  for (std::size_t i = 0; i < column.values.size(); ++i) {
+    const double here = magnitude(column, i);
+    if (std::isnan(here)) continue;
+    sum += here;
+    errors += step_error(column, i);
+  }
+  const auto all = static_cast<double>(column.values.size()), known = all - suite.open;
+  suite.value = sum / known;
+  suite.step_error = errors / known;
+  suite.at_least = sum / all;
+}
+
+// The known magnitudes with their runs, to be put in order as far as an order statistic needs it.
+class Ranks {
+ public:
+  explicit Ranks(const SuiteColumn& column) {
+    ranks_.reserve(column.values.size());
+    for (std::size_t i = 0; i < column.values.size(); ++i)
+      if (const double here = magnitude(column, i); !std::isnan(here))
+        ranks_.emplace_back(here, static_cast<std::uint32_t>(i));
+  }
+  std::size_t size() const { return ranks_.size(); }
+
+  // Magnitude and run of the k-th smallest, from 0.
+  std::pair<double, std::uint32_t> at(std::size_t k) {
+    std::nth_element(ranks_.begin(), ranks_.begin() + static_cast<std::ptrdiff_t>(k), ranks_.end());
+    return ranks_[k];
+  }
+
+ private:
+  std::vector<std::pair<double, std::uint32_t>> ranks_;
+};
+
+// Not lower + fraction (upper - lower) where that is infinity minus infinity or 0 times infinity.
+double between(double lower, double upper, double fraction) {
+  return fraction == 0 || lower == upper ? lower : lower + fraction * (upper - lower);
+}
+
+// With the open runs as so many zeros below the known ones.
+double percentile_at_least(Ranks& ranks, std::size_t open, double percentile) {
+  const OrderPosition at = percentile_position(ranks.size() + open, percentile);
+  const auto value = [&](std::size_t k) { return k < open ? 0.0 : ranks.at(k - open).first; };
+  return between(value(at.lower), value(at.upper), at.fraction);
+}
+
+void take_percentile(const SuiteColumn& column, double percentile, SuiteValue& suite) {
+  Ranks ranks(column);
+  const OrderPosition at = percentile_position(ranks.size(), percentile);
+  const auto lower = ranks.at(at.lower), upper = ranks.at(at.upper);
+  suite.value = between(lower.first, upper.first, at.fraction);
+  suite.at_least =
+      suite.open > 0 ? percentile_at_least(ranks, static_cast<std::size_t>(suite.open), percentile) : suite.value;
+  const double below = step_error(column, lower.second), above = step_error(column, upper.second);
+  if (at.fraction == 0)
+    suite.step_error = below;
+  else
+    suite.step_error = std::isnan(below) || std::isnan(above) ? unknown : std::max(below, above);
+}
+
+void take_largest(const SuiteColumn& column, SuiteValue& suite) {
+  suite.value = suite.at_least = magnitude(column, *suite.governing);
+  suite.step_error = step_error(column, *suite.governing);
 }
 
 }  // namespace
-
-double mean_of(std::span<const double> values) {
-  if (values.empty()) return unknown;
-  return std::accumulate(values.begin(), values.end(), 0.0) / static_cast<double>(values.size());
-}
 
 OrderPosition percentile_position(std::size_t n, double percentile) {
   const double position = static_cast<double>(n - 1) * percentile / 100;
@@ -88,63 +121,51 @@ OrderPosition percentile_position(std::size_t n, double percentile) {
   return {lower, std::min(lower + 1, n - 1), position - whole};
 }
 
-double percentile_of(std::vector<double> values, double percentile) {
-  if (values.empty()) return unknown;
-  std::sort(values.begin(), values.end());
-  const OrderPosition at = percentile_position(values.size(), percentile);
-  const double lower = values[at.lower], upper = values[at.upper];
-  // Not lower + fraction (upper - lower) where that is infinity minus infinity or 0 times infinity.
-  if (at.fraction == 0 || lower == upper) return lower;
-  return lower + at.fraction * (upper - lower);
+SuiteColumn suite_column(const RunTable& table, const RunSet& set, const Quantity& quantity, int place) {
+  return {table.column(set, quantity, place), table.statuses().subspan(set.first, set.count)};
 }
 
-RunPeak run_peak(const StudyResults& results, const RunResult& run, const Quantity& quantity, int place) {
-  const bool residual = &quantity == &residual_drift_ratio();
-  const Peak peak = residual ? residual_ratio(results, run, place) : listed_peak(results, run, quantity, place);
-  RunPeak found{&run, std::abs(peak.value), peak.step_error, std::isfinite(peak.value) ? std::abs(peak.value) : 0};
-  if (run.status == RunStatus::done) return found;
-  found.magnitude = run.status == RunStatus::collapsed ? beyond : unknown;
-  found.step_error = unknown;
-  return found;
-}
-
-SuiteValue suite_value(std::span<const RunPeak> peaks, Statistic statistic, double percentile) {
-  std::vector<RunPeak> known;
-  std::vector<double> values, at_least;
-  for (const RunPeak& peak : peaks) {
-    const bool is_known = !std::isnan(peak.magnitude);
-    at_least.push_back(is_known ? peak.magnitude : 0);
-    if (!is_known) continue;
-    known.push_back(peak);
-    values.push_back(peak.magnitude);
+SuiteValue suite_value(const SuiteColumn& column, Statistic statistic, double percentile) {
+  SuiteValue suite{unknown, unknown, 0, {}, 0, 0};
+  find_governing(column, suite);
+  if (!suite.governing) return suite;
+  switch (statistic) {
+    case Statistic::mean:
+      take_mean(column, suite);
+      break;
+    case Statistic::max:
+      take_largest(column, suite);
+      break;
+    case Statistic::median:
+      take_percentile(column, 50, suite);
+      break;
+    case Statistic::percentile:
+      take_percentile(column, percentile, suite);
+      break;
   }
-  SuiteValue suite{unknown, unknown, statistic_of(at_least, statistic, percentile), nullptr, 0, 0};
-  suite.open = static_cast<int>(peaks.size() - known.size());
-  if (known.empty()) return suite;
-  suite.value = statistic_of(values, statistic, percentile);
-  suite.step_error = std::isfinite(suite.value) ? statistic_error(known, statistic, percentile) : unknown;
-  const RunPeak& largest = *std::min_element(known.begin(), known.end(), governs);
-  suite.governing = largest.run;
-  suite.recorded = largest.recorded;
+  if (!std::isfinite(suite.value)) suite.step_error = unknown;
   return suite;
 }
 
-int places_of(const Quantity& quantity, const StudyResults& results) {
-  return quantity.per == Per::run ? 1 : static_cast<int>(results.building.heights.size());
-}
-
-std::vector<const RunResult*> runs_at(const StudyResults& results, double factor) {
-  std::vector<const RunResult*> found;
-  for (const RunResult& run : results.runs)
-    if (run.factor == factor) found.push_back(&run);
+DoneValue done_value(const SuiteColumn& column) {
+  DoneValue found{unknown, unknown, unknown, {}};
+  double sum = 0;
+  int known = 0;
+  for (std::size_t i = 0; i < column.values.size(); ++i) {
+    const double here = std::abs(column.values[i].value);
+    if (column.statuses[i] != RunStatus::done || std::isnan(here)) continue;
+    sum += here;
+    ++known;
+    if (!found.run || here > found.largest) found.run = i, found.largest = here;
+  }
+  if (!found.run) return found;
+  found.step_error = column.values[*found.run].step_error;
+  found.mean = sum / known;
   return found;
 }
 
-std::vector<double> factors_of(const StudyResults& results) {
-  std::vector<double> found;
-  for (const RunResult& run : results.runs)
-    if (std::find(found.begin(), found.end(), run.factor) == found.end()) found.push_back(run.factor);
-  return found;
+int places_of(const Quantity& quantity, const BuildingSummary& building) {
+  return quantity.per == Per::run ? 1 : static_cast<int>(building.heights.size());
 }
 
 }  // namespace pilotis

@@ -8,9 +8,8 @@
 
 namespace pilotis {
 
-// Scales story and floor, 1..stories.
-inline void write_places(GroupWriter& group, int stories) {
-  const auto count = static_cast<std::size_t>(stories);
+// Scales story and floor, 1..count.
+inline void write_places(GroupWriter& group, std::size_t count) {
   group.count_scale("story", 1, count, "story, counted from the ground up");
   group.count_scale("floor", 1, count, "floor, counted from the ground up; floor 0 is the ground");
 }

@@ -3,18 +3,13 @@
 #include <fmt/format.h>
 
 #include "core/error.hpp"
+#include "io/results/row_array.hpp"
 
 namespace pilotis {
 
 namespace {
 
 constexpr const char* remedy = "give a result file that `pilotis run` wrote";
-
-H5::StrType text_type() {
-  H5::StrType type(H5::PredType::C_S1, H5T_VARIABLE);
-  type.setCset(H5T_CSET_UTF8);
-  return type;
-}
 
 // H5Lexists and H5Aexists want every parent to be there; ours are.
 H5::Group opened(const H5::H5File& file, const std::string& where, const std::string& path) {
@@ -65,13 +60,15 @@ std::vector<double> GroupReader::numbers(const std::string& name, std::size_t co
 }
 
 std::vector<std::string> GroupReader::texts(const std::string& name, std::size_t count) const {
-  const H5::DataSet data = array(name, count, H5T_STRING);
-  std::vector<char*> pointers(count, nullptr);
-  data.read(pointers.data(), text_type());
-  std::vector<std::string> values;
-  for (const char* pointer : pointers) values.emplace_back(pointer ? pointer : "");
-  H5Dvlen_reclaim(text_type().getId(), data.getSpace().getId(), H5P_DEFAULT, pointers.data());
-  return values;
+  return read_all_texts(array(name, count, H5T_STRING));
+}
+
+H5::DataSet GroupReader::number_array(const std::string& name, std::size_t count) const {
+  return array(name, count, H5T_FLOAT);
+}
+
+H5::DataSet GroupReader::text_array(const std::string& name, std::size_t count) const {
+  return array(name, count, H5T_STRING);
 }
 
 std::string GroupReader::text_attribute(const std::string& name) const {

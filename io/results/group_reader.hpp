@@ -20,6 +20,10 @@ class GroupReader {
   std::vector<double> numbers(const std::string& name, std::size_t count) const;
   std::vector<std::string> texts(const std::string& name, std::size_t count) const;
 
+  // The same arrays opened, to be read by rows.
+  H5::DataSet number_array(const std::string& name, std::size_t count) const;
+  H5::DataSet text_array(const std::string& name, std::size_t count) const;
+
   std::string text_attribute(const std::string& name) const;
   double number_attribute(const std::string& name) const;
 

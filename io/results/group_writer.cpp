@@ -4,22 +4,16 @@
 #include <hdf5_hl.h>
 
 #include <algorithm>
-#include <cmath>
 #include <limits>
 #include <stdexcept>
+
+#include "io/results/row_array.hpp"
 
 namespace pilotis {
 
 namespace {
 
 constexpr hsize_t chunk_values = 16384;  // about 128 KiB of doubles
-constexpr unsigned deflate_level = 4;
-
-H5::StrType text_type() {
-  H5::StrType type(H5::PredType::C_S1, H5T_VARIABLE);
-  type.setCset(H5T_CSET_UTF8);
-  return type;
-}
 
 // Links and attributes keep the order they were made in: readers of netCDF-4 ask for it.
 H5::Group made_group(H5::H5File& file, const std::string& path) {
@@ -44,14 +38,29 @@ std::vector<hsize_t> chunk_of(const std::vector<hsize_t>& lengths) {
   return chunk;
 }
 
-H5::DSetCreatPropList layout(const std::vector<hsize_t>& lengths, Packing packing) {
+// The same results give the same bytes: no times of day. Attributes keep their order, as readers of netCDF-4 ask.
+H5::DSetCreatPropList plain() {
   H5::DSetCreatPropList properties;
-  H5Pset_obj_track_times(properties.getId(), false);  // the same results give the same bytes
+  H5Pset_obj_track_times(properties.getId(), false);
   H5Pset_attr_creation_order(properties.getId(), H5P_CRT_ORDER_TRACKED | H5P_CRT_ORDER_INDEXED);
-  if (packing == Packing::plain || lengths.empty()) return properties;
+  return properties;
+}
+
+// NaN is the fill value readers are told of; nothing is filled, because all is written.
+H5::DSetCreatPropList plain_numbers() {
+  const double unknown = std::numeric_limits<double>::quiet_NaN();
+  H5::DSetCreatPropList properties = plain();
+  properties.setFillValue(H5::PredType::NATIVE_DOUBLE, &unknown);
+  properties.setFillTime(H5D_FILL_TIME_NEVER);
+  return properties;
+}
+
+H5::DSetCreatPropList packed_numbers(const std::vector<hsize_t>& lengths, HistoryFormat format) {
+  H5::DSetCreatPropList properties = plain_numbers();
   properties.setChunk(static_cast<int>(lengths.size()), chunk_of(lengths).data());
+  if (format.compression == 0) return properties;
   properties.setShuffle();
-  properties.setDeflate(deflate_level);
+  properties.setDeflate(static_cast<unsigned>(format.compression));
   return properties;
 }
 
@@ -86,23 +95,46 @@ void GroupWriter::describe(H5::DataSet& data, std::string_view units, std::strin
   write_text(data, "long_name", long_name);
 }
 
-H5::DataSet GroupWriter::array(const std::string& name, const Axes& axes, const H5::DataType& type, std::size_t count,
-                               Packing packing) {
+std::vector<hsize_t> GroupWriter::lengths_of(const Axes& axes) const {
   std::vector<hsize_t> lengths;
+  for (const std::string& axis : axes) lengths.push_back(scales_.at(axis).length);
+  return lengths;
+}
+
+void GroupWriter::require_count(const std::string& name, const Axes& axes, std::size_t count) const {
   std::size_t expected = 1;
-  for (const std::string& axis : axes) {
-    lengths.push_back(scales_.at(axis).length);
-    expected *= lengths.back();
-  }
+  for (hsize_t length : lengths_of(axes)) expected *= length;
   if (count != expected)
     throw std::logic_error(fmt::format("{}/{}: {} values where {} are expected", path_, name, count, expected));
-  H5::DSetCreatPropList properties = layout(lengths, packing);
-  const double unknown = std::numeric_limits<double>::quiet_NaN();
-  if (type == H5::PredType::IEEE_F64LE) properties.setFillValue(H5::PredType::NATIVE_DOUBLE, &unknown);
-  H5::DataSet data = group_.createDataSet(name, type, space_of(lengths), properties);
+}
+
+H5::DataSet GroupWriter::array(const std::string& name, const Axes& axes, const H5::DataType& type,
+                               const H5::DSetCreatPropList& properties) {
+  H5::DataSet data = group_.createDataSet(name, type, space_of(lengths_of(axes)), properties);
   for (std::size_t i = 0; i < axes.size(); ++i)
     check(H5DSattach_scale(data.getId(), scales_.at(axes[i]).data.getId(), static_cast<unsigned>(i)),
           "H5DSattach_scale", name);
+  return data;
+}
+
+H5::DataSet GroupWriter::empty_numbers(const std::string& name, const Axes& axes, std::string_view units,
+                                       std::string_view long_name) {
+  H5::DataSet data = array(name, axes, H5::PredType::IEEE_F64LE, plain_numbers());
+  describe(data, units, long_name);
+  return data;
+}
+
+H5::DataSet GroupWriter::empty_texts(const std::string& name, const Axes& axes, std::string_view long_name) {
+  H5::DataSet data = array(name, axes, text_type(), plain());
+  describe(data, "1", long_name);
+  return data;
+}
+
+H5::DataSet GroupWriter::empty_history(const std::string& name, const Axes& axes, HistoryFormat format,
+                                       std::string_view units, std::string_view long_name) {
+  H5::DataSet data = array(name, axes, format.single ? H5::PredType::IEEE_F32LE : H5::PredType::IEEE_F64LE,
+                           packed_numbers(lengths_of(axes), format));
+  describe(data, units, long_name);
   return data;
 }
 
@@ -114,8 +146,7 @@ void GroupWriter::as_scale(const std::string& name, H5::DataSet& data, std::size
 void GroupWriter::scale(const std::string& name, const std::vector<double>& values, std::string_view units,
                         std::string_view long_name) {
   const std::vector<hsize_t> lengths{values.size()};
-  H5::DataSet data =
-      group_.createDataSet(name, H5::PredType::IEEE_F64LE, space_of(lengths), layout(lengths, Packing::plain));
+  H5::DataSet data = group_.createDataSet(name, H5::PredType::IEEE_F64LE, space_of(lengths), plain());
   data.write(values.data(), H5::PredType::NATIVE_DOUBLE);
   describe(data, units, long_name);
   as_scale(name, data, values.size());
@@ -126,34 +157,32 @@ void GroupWriter::count_scale(const std::string& name, std::int64_t first, std::
   std::vector<std::int64_t> values(count);
   for (std::size_t i = 0; i < count; ++i) values[i] = first + static_cast<std::int64_t>(i);
   const std::vector<hsize_t> lengths{count};
-  H5::DataSet data =
-      group_.createDataSet(name, H5::PredType::STD_I64LE, space_of(lengths), layout(lengths, Packing::plain));
+  H5::DataSet data = group_.createDataSet(name, H5::PredType::STD_I64LE, space_of(lengths), plain());
   data.write(values.data(), H5::PredType::NATIVE_INT64);
   describe(data, "1", long_name);
   as_scale(name, data, count);
 }
 
 void GroupWriter::numbers(const std::string& name, const Axes& axes, const std::vector<double>& values,
-                          std::string_view units, std::string_view long_name, Packing packing) {
-  H5::DataSet data = array(name, axes, H5::PredType::IEEE_F64LE, values.size(), packing);
-  data.write(values.data(), H5::PredType::NATIVE_DOUBLE);
-  describe(data, units, long_name);
+                          std::string_view units, std::string_view long_name) {
+  require_count(name, axes, values.size());
+  empty_numbers(name, axes, units, long_name).write(values.data(), H5::PredType::NATIVE_DOUBLE);
 }
 
 void GroupWriter::integers(const std::string& name, const Axes& axes, const std::vector<std::int64_t>& values,
                            std::string_view long_name) {
-  H5::DataSet data = array(name, axes, H5::PredType::STD_I64LE, values.size(), Packing::plain);
+  require_count(name, axes, values.size());
+  H5::DataSet data = array(name, axes, H5::PredType::STD_I64LE, plain());
   data.write(values.data(), H5::PredType::NATIVE_INT64);
   describe(data, "1", long_name);
 }
 
 void GroupWriter::texts(const std::string& name, const Axes& axes, const std::vector<std::string>& values,
                         std::string_view long_name) {
+  require_count(name, axes, values.size());
   std::vector<const char*> pointers;
   for (const std::string& value : values) pointers.push_back(value.c_str());
-  H5::DataSet data = array(name, axes, text_type(), values.size(), Packing::plain);
-  data.write(pointers.data(), text_type());
-  describe(data, "1", long_name);
+  empty_texts(name, axes, long_name).write(pointers.data(), text_type());
 }
 
 }  // namespace pilotis

@@ -9,9 +9,9 @@
 #include <string_view>
 #include <vector>
 
-namespace pilotis {
+#include "core/response/history_format.hpp"
 
-enum class Packing { plain, compressed };  // compressed: chunked, shuffled, deflated
+namespace pilotis {
 
 class GroupWriter {
  public:
@@ -28,18 +28,28 @@ class GroupWriter {
 
   // Row-major; as many values as the scales' lengths multiply to.
   void numbers(const std::string& name, const Axes& axes, const std::vector<double>& values, std::string_view units,
-               std::string_view long_name, Packing packing = Packing::plain);
+               std::string_view long_name);
   void integers(const std::string& name, const Axes& axes, const std::vector<std::int64_t>& values,
                 std::string_view long_name);
   void texts(const std::string& name, const Axes& axes, const std::vector<std::string>& values,
              std::string_view long_name);
 
+  // Arrays to be written later, all of it: numbers have no fill written first.
+  H5::DataSet empty_numbers(const std::string& name, const Axes& axes, std::string_view units,
+                            std::string_view long_name);
+  H5::DataSet empty_texts(const std::string& name, const Axes& axes, std::string_view long_name);
+  // Chunked, shuffled and deflated as the format says.
+  H5::DataSet empty_history(const std::string& name, const Axes& axes, HistoryFormat format, std::string_view units,
+                            std::string_view long_name);
+
   void attribute(const std::string& name, std::string_view text);
   void attribute(const std::string& name, double number);
 
  private:
-  H5::DataSet array(const std::string& name, const Axes& axes, const H5::DataType& type, std::size_t count,
-                    Packing packing);
+  std::vector<hsize_t> lengths_of(const Axes& axes) const;
+  H5::DataSet array(const std::string& name, const Axes& axes, const H5::DataType& type,
+                    const H5::DSetCreatPropList& properties);
+  void require_count(const std::string& name, const Axes& axes, std::size_t count) const;
   void as_scale(const std::string& name, H5::DataSet& data, std::size_t length);
   void describe(H5::DataSet& data, std::string_view units, std::string_view long_name);
 

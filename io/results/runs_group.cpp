@@ -2,6 +2,7 @@
 #include <fmt/format.h>
 
 #include <functional>
+#include <stdexcept>
 
 #include "core/error.hpp"
 #include "io/results/group_reader.hpp"
@@ -49,13 +50,6 @@ constexpr TextColumn text_columns[] = {
     {"step_choice", &RunResult::step_choice, "why this time step"},
     {"status_note", &RunResult::status_note, "where and when a run ended early; empty when done"}};
 
-RunStatus status_from(const std::string& name, const std::string& where) {
-  for (RunStatus status : {RunStatus::done, RunStatus::collapsed, RunStatus::not_converged})
-    if (status_name(status) == name) return status;
-  throw input_error(where, fmt::format("the array /runs/status holds \"{}\"", name),
-                    "allowed are done, collapsed, not converged");
-}
-
 }  // namespace
 
 void write_motions(H5::H5File& file, const std::vector<MotionSummary>& motions) {
@@ -86,35 +80,83 @@ std::vector<MotionSummary> read_motions(const ResultFile& from) {
   return motions;
 }
 
-void write_runs(H5::H5File& file, const std::vector<RunResult>& runs) {
+RowArrays make_runs(H5::H5File& file, RunRange runs) {
   GroupWriter group(file, "/runs");
-  if (runs.empty()) return;
-  group.count_scale("run", 0, runs.size(), "run, counted from 0");
+  RowArrays arrays;
+  if (runs.count == 0) return arrays;
+  group.count_scale("run", static_cast<std::int64_t>(runs.first), runs.count, "run, counted from 0");
+  arrays.add("building", group.empty_texts("building", {"run"}, "name of the building"));
   for (const TextColumn& text : text_columns)
-    group.texts(text.name, {"run"}, column<std::string>(runs, text.member), text.long_name);
-  group.texts("status", {"run"},
-              column<std::string>(runs, [](const RunResult& run) { return status_name(run.status); }),
-              "done, collapsed or not converged");
+    arrays.add(text.name, group.empty_texts(text.name, {"run"}, text.long_name));
+  arrays.add("status", group.empty_texts("status", {"run"}, "done, collapsed or not converged"));
   for (const NumberColumn& number : number_columns)
-    group.numbers(number.name, {"run"}, column<double>(runs, number.member), number.units, number.long_name);
+    arrays.add(number.name, group.empty_numbers(number.name, {"run"}, number.units, number.long_name));
+  return arrays;
 }
 
-std::vector<RunResult> read_runs(const ResultFile& from) {
-  const GroupReader group(from.file, from.where, "/runs");
-  const std::size_t count = group.length("run");
-  std::vector<RunResult> runs(count);
-  if (count == 0) return runs;
-  for (const TextColumn& text : text_columns) {
-    const auto values = group.texts(text.name, count);
-    for (std::size_t i = 0; i < count; ++i) runs[i].*text.member = values[i];
-  }
+void write_runs(RowArrays& arrays, std::size_t first, std::span<const RunResult> results, const Buildings& buildings) {
+  const auto texts = [&](const char* name, auto text_of) {
+    std::vector<const char*> pointers;
+    for (const RunResult& run : results) pointers.push_back(text_of(run));
+    write_rows(arrays.at(name), first, pointers);
+  };
+  texts("building",
+        [&](const RunResult& run) { return buildings.at(static_cast<std::size_t>(run.building)).name.c_str(); });
+  for (const TextColumn& text : text_columns)
+    texts(text.name, [&](const RunResult& run) { return (run.*text.member).c_str(); });
+  texts("status", [](const RunResult& run) { return status_name(run.status).data(); });  // of a literal: ends with 0
   for (const NumberColumn& number : number_columns) {
-    const auto values = group.numbers(number.name, count);
-    for (std::size_t i = 0; i < count; ++i) runs[i].*number.member = values[i];
+    std::vector<double> values;
+    for (const RunResult& run : results) values.push_back(run.*number.member);
+    write_rows(arrays.at(number.name), first, std::span<const double>(values));
   }
-  const auto statuses = group.texts("status", count);
-  for (std::size_t i = 0; i < count; ++i) runs[i].status = status_from(statuses[i], from.where);
-  return runs;
+}
+
+const char* number_column(double RunResult::*member) {
+  for (const NumberColumn& number : number_columns)
+    if (number.member == member) return number.name;
+  throw std::logic_error("not a column of /runs");
+}
+
+RunStatus status_from(const std::string& name, const std::string& where) {
+  for (RunStatus status : {RunStatus::done, RunStatus::collapsed, RunStatus::not_converged})
+    if (status_name(status) == name) return status;
+  throw input_error(where, fmt::format("the array /runs/status holds \"{}\"", name),
+                    "allowed are done, collapsed, not converged");
+}
+
+BuildingIndex::BuildingIndex(const Buildings& buildings, std::string where) : where_(std::move(where)) {
+  for (std::size_t i = 0; i < buildings.size(); ++i) index_.emplace(buildings[i].name, static_cast<int>(i));
+}
+
+int BuildingIndex::of(const std::string& name) const {
+  const auto found = index_.find(name);
+  if (found != index_.end()) return found->second;
+  throw input_error(where_, fmt::format("the array /runs/building holds \"{}\"", name),
+                    "give a result file that `pilotis run` wrote");
+}
+
+void read_runs(const ResultFile& from, RunRange all, std::size_t first, const Buildings& buildings,
+               std::span<RunResult> results) {
+  const GroupReader group(from.file, from.where, "/runs");
+  const auto texts = [&](const char* name) {
+    return read_texts(group.text_array(name, all.count), first, results.size());
+  };
+  const BuildingIndex index(buildings, from.where);
+  const auto names = texts("building"), statuses = texts("status");
+  for (std::size_t i = 0; i < results.size(); ++i) {
+    results[i].building = index.of(names[i]);
+    results[i].status = status_from(statuses[i], from.where);
+  }
+  for (const TextColumn& text : text_columns) {
+    auto values = texts(text.name);
+    for (std::size_t i = 0; i < results.size(); ++i) results[i].*text.member = std::move(values[i]);
+  }
+  std::vector<double> values(results.size());
+  for (const NumberColumn& number : number_columns) {
+    read_rows(group.number_array(number.name, all.count), first, values);
+    for (std::size_t i = 0; i < results.size(); ++i) results[i].*number.member = values[i];
+  }
 }
 
 }  // namespace pilotis

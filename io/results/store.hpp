@@ -1,31 +1,24 @@
-// The result file (HDF5). See DEVELOPERS.md for its layout; every array has dimension scales, units and a long name.
+// A result file in one go, for few runs: all of it in memory. io/results/result_writer.hpp and result_table.hpp do it
+// for any number.
 #pragma once
 
 #include <filesystem>
-#include <string>
 #include <vector>
 
-#include "core/response/results.hpp"
-#include "core/verdict/limit.hpp"
-#include "io/study/study.hpp"
+#include "core/response/history_format.hpp"
+#include "io/results/study_header.hpp"
 
 namespace pilotis {
 
 // What a result file holds, as far as judging and showing need it.
-struct StoredStudy {
-  std::string title, study_text, study_file, program_version, created;
-  StudyUnits units;      // those of the study, for showing
-  StudyResults results;  // histories left empty
-  std::vector<Limit> limits;
+struct StoredStudy : StudyHeader {
+  std::vector<RunResult> runs;
 };
 
-// Writes to a temporary file beside `file`, syncs, renames: `file` is whole or untouched. Throws Error (outside).
-void write_results(const std::filesystem::path& file, const StoredStudy& stored, const Verdict& verdict);
+// `file` is whole or untouched. The verdict is that of the file. Throws Error (outside).
+Verdict write_results(const std::filesystem::path& file, const StoredStudy& stored, HistoryFormat histories = {});
 
-// Throws Error naming the file and what is missing when it is not a result file of this program.
+// Without histories. Throws Error naming the file and what is missing when it is not a result file of this program.
 StoredStudy read_results(const std::filesystem::path& file);
-
-// The histories of one run (times and histories of RunResult are filled). `run` counts from 0.
-RunResult read_run(const std::filesystem::path& file, int run);
 
 }  // namespace pilotis

@@ -99,22 +99,27 @@ void write_outcome_numbers(GroupWriter& group, const std::vector<Limit>& limits,
                 "(limit - value) / limit");
 }
 
-void write_outcomes(GroupWriter& group, const std::vector<Limit>& limits, const std::vector<Outcome>& outcomes) {
-  group.count_scale("outcome", 0, outcomes.size(), "one limit at one factor, counted from 0");
+void write_outcomes(GroupWriter& group, const std::vector<Limit>& limits, const Buildings& buildings,
+                    const std::vector<Outcome>& outcomes) {
+  group.count_scale("outcome", 0, outcomes.size(), "one limit for one building at one factor, counted from 0");
   const GroupWriter::Axes axes{"outcome"};
   const auto integers = [&](const char* name, int Outcome::*member, const char* long_name) {
     group.integers(name, axes, column_of<std::int64_t>(outcomes, [=](const Outcome& o) { return o.*member; }),
                    long_name);
   };
   integers("limit_index", &Outcome::limit, "which limit");
+  group.texts("building", axes,
+              column_of<std::string>(
+                  outcomes, [&](const Outcome& o) { return buildings.at(static_cast<std::size_t>(o.building)).name; }),
+              "name of the building");
   write_outcome_numbers(group, limits, outcomes);
   integers("place", &Outcome::place,
            "story or floor where the statistic is largest; 0 for quantities of the whole run");
   group.texts("motion", axes, column_of<std::string>(outcomes, [](const Outcome& o) { return o.motion; }),
               "motion with the largest peak at that place");
-  integers("runs", &Outcome::runs, "runs at this factor");
-  integers("collapsed", &Outcome::collapsed, "runs at this factor that collapsed");
-  integers("not_converged", &Outcome::not_converged, "runs at this factor that were not completed");
+  integers("runs", &Outcome::runs, "runs of this building at this factor");
+  integers("collapsed", &Outcome::collapsed, "runs of this building at this factor that collapsed");
+  integers("not_converged", &Outcome::not_converged, "runs of this building at this factor that were not completed");
   group.integers("exceeded", axes, column_of<std::int64_t>(outcomes, [](const Outcome& o) { return o.exceeded; }),
                  "1 when the value is above the limit");
   group.texts("finding", axes,
@@ -157,13 +162,14 @@ void read_factors(const GroupReader& group, std::vector<Limit>& limits) {
 
 }  // namespace
 
-void write_verdict(H5::H5File& file, const std::vector<Limit>& limits, const Verdict& verdict) {
+void write_verdict(H5::H5File& file, const std::vector<Limit>& limits, const Buildings& buildings,
+                   const Verdict& verdict) {
   GroupWriter group(file, "/verdict");
   group.attribute("runs", static_cast<double>(verdict.runs));
   group.attribute("collapsed", static_cast<double>(verdict.collapsed));
   group.attribute("not_converged", static_cast<double>(verdict.not_converged));
   if (!limits.empty()) write_limits(group, limits);
-  if (!verdict.outcomes.empty()) write_outcomes(group, limits, verdict.outcomes);
+  if (!verdict.outcomes.empty()) write_outcomes(group, limits, buildings, verdict.outcomes);
 }
 
 std::vector<Limit> read_limits(const ResultFile& from) {

@@ -3,6 +3,7 @@
 #include <sys/wait.h>
 #include <unistd.h>
 
+#include <algorithm>
 #include <array>
 #include <cstdio>
 #include <filesystem>
@@ -32,7 +33,7 @@ class Commands : public testing::Test {
 
   std::string stored(const StoredStudy& study) {
     const fs::path file = folder_ / "results.h5";
-    write_results(file, study, judge(study.results, study.limits));
+    write_results(file, study);
     return file.string();
   }
 
@@ -101,6 +102,13 @@ TEST_F(Commands, ExportOfHistories) {
   const Ran beyond = run("export " + file + " --peaks --run 10");
   EXPECT_EQ(beyond.status, 2);
   EXPECT_TRUE(has(beyond.output, "from 0 to 9")) << beyond.output;
+}
+
+TEST_F(Commands, ExportOfOneRun) {
+  const Ran ran = run("export " + stored(invented::calm_study()) + " --runs --run 3");
+  EXPECT_EQ(ran.status, 0);
+  EXPECT_TRUE(has(ran.output, "\n3,Harbor clinic,Dunmarsh,0.5,done,")) << ran.output;
+  EXPECT_EQ(std::count(ran.output.begin(), ran.output.end(), '\n'), 2);
 }
 
 TEST_F(Commands, ExportWritesTheFileWholeOrNotAtAll) {

@@ -4,11 +4,14 @@
 #include <gtest/gtest.h>
 
 #include <cmath>
+#include <nlohmann/json.hpp>
 #include <regex>
 #include <sstream>
 
 #include "apps/report_json.hpp"
 #include "apps/text_layout.hpp"
+#include "core/verdict/memory_table.hpp"
+#include "io/results/store.hpp"
 #include "tests/support/invented_results.hpp"
 
 namespace pilotis {
@@ -17,7 +20,8 @@ namespace {
 const ScreenStyle plain{100, false, true};
 
 std::string shown(const StoredStudy& stored, const ScreenStyle& style = plain) {
-  return profile_text(stored, judge(stored.results, stored.limits), style);
+  const MemoryTable table(stored.buildings, stored.runs);
+  return profile_text(stored, table, judge(table, stored.limits), style);
 }
 
 std::vector<std::string> lines_of(const std::string& text) {
@@ -150,17 +154,29 @@ TEST(Profile, NoLimitIsSaid) {
 
 TEST(Profile, UnknownStepErrorIsAQuestionMark) {
   StoredStudy stored = invented::calm_study();
-  for (RunResult& run : stored.results.runs)
+  for (RunResult& run : stored.runs)
     for (Peak& peak : run.peaks) peak.step_error = NAN;
   const std::string text = shown(stored);
   EXPECT_TRUE(has(text, "0.80 ± ? %"));
   EXPECT_FALSE(has(text, "nan"));
 }
 
+std::string told(const StoredStudy& stored) {
+  const MemoryTable table(stored.buildings, stored.runs);
+  std::string text;
+  write_report_json(stored, table, judge(table, stored.limits), [&](std::string_view part) { text += part; });
+  return text;
+}
+
+// Written piece by piece, it stands as the library's own writer would lay it out.
+TEST(ReportJson, LaidOutAsOnePiece) {
+  const std::string text = told(invented::study_with_open_run());
+  EXPECT_EQ(text, nlohmann::ordered_json::parse(text).dump(2) + "\n");
+}
+
 TEST(ReportJson, SameNumbersAndNoNonFiniteOnes) {
   const StoredStudy stored = invented::study_with_open_run();
-  const Verdict verdict = judge(stored.results, stored.limits);
-  const auto json = nlohmann::json::parse(report_json(stored, verdict).dump());
+  const auto json = nlohmann::json::parse(told(stored));
   const auto& story = json.at("factors").at(1).at("stories").at(2);
   EXPECT_EQ(story.at("story"), 3);
   EXPECT_NEAR(story.at("drift_ratio").at("largest").get<double>(), 0.01, 1e-15);

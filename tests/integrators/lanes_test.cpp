@@ -19,6 +19,8 @@ struct Case {
   std::string name;
   Stick stick;
   ImplicitCoefficients coefficients;
+
+  friend void PrintTo(const Case& one, std::ostream* out) { *out << one.name; }
 };
 
 Stick with(Stick stick, Damping damping, bool p_delta) {

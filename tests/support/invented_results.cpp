@@ -21,7 +21,7 @@ double height(int story) { return story == 1 ? 4.5 : 3.5; }
 
 BuildingSummary building() {
   BuildingSummary made;
-  made.title = "Harbor clinic";
+  made.name = made.title = "Harbor clinic";
   for (int i = 1; i <= stories; ++i) {
     made.labels.emplace_back(labels[i - 1]);
     made.heights.push_back(height(i));
@@ -111,12 +111,11 @@ StoredStudy study(const std::vector<double>& factors) {
   made.program_version = "0.1.0";
   made.created = "2026-01-01T00:00:00Z";
   made.units = {"kN", "m", ""};
-  made.results.building = building();
+  made.buildings = {building()};
   for (int m = 0; m < motions; ++m)
-    made.results.motions.push_back(
-        {motion_names[m], fmt::format("motions/{}.csv", m), std::string(64, 'a'), 0.01, 3200, -2.9});
+    made.motions.push_back({motion_names[m], fmt::format("motions/{}.csv", m), std::string(64, 'a'), 0.01, 3200, -2.9});
   for (double factor : factors)
-    for (int m = 0; m < motions; ++m) made.results.runs.push_back(one_run(m, factor));
+    for (int m = 0; m < motions; ++m) made.runs.push_back(one_run(m, factor));
   made.limits = {drift_limit(Statistic::mean, 0.01)};
   return made;
 }
@@ -145,13 +144,13 @@ Limit drift_limit(Statistic statistic, double value) {
 
 StoredStudy calm_study() {
   StoredStudy made = study({0.5, 1.0});
-  add_histories(made.results.runs[0]);
+  add_histories(made.runs[0]);
   return made;
 }
 
 StoredStudy study_with_collapse() {
   StoredStudy made = study({0.5, 1.0, 1.5});
-  RunResult& run = made.results.runs[2 * motions + 4];
+  RunResult& run = made.runs[2 * motions + 4];
   const ResponseLayout layout(stories);
   run.peaks[layout.offset(*find_quantity("drift_ratio")) + 2].value = 0.1002;
   end_early(run, RunStatus::collapsed, 8.25, "collapsed at 8.25 s: story 3 passed drift ratio 0.1");
@@ -160,8 +159,7 @@ StoredStudy study_with_collapse() {
 
 StoredStudy study_with_open_run() {
   StoredStudy made = study_with_collapse();
-  end_early(made.results.runs[2 * motions + 2], RunStatus::not_converged, 11.5,
-            "not converged at 11.5 s: step 4.9e-06 s");
+  end_early(made.runs[2 * motions + 2], RunStatus::not_converged, 11.5, "not converged at 11.5 s: step 4.9e-06 s");
   return made;
 }
 

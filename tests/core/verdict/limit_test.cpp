@@ -5,6 +5,8 @@
 #include <cmath>
 #include <limits>
 
+#include "core/verdict/memory_table.hpp"
+
 namespace pilotis {
 namespace {
 
@@ -12,11 +14,21 @@ constexpr double nan = std::numeric_limits<double>::quiet_NaN();
 
 const Quantity& quantity(const char* name) { return *find_quantity(name); }
 
+struct Results {
+  std::vector<BuildingSummary> buildings;
+  std::vector<RunResult> runs;
+};
+
+Verdict judge(const Results& results, const std::vector<Limit>& limits) {
+  return judge(MemoryTable(results.buildings, results.runs), limits);
+}
+
 // A two-story building, stories 3 m and 4 m, without runs.
-StudyResults two_stories() {
-  StudyResults results;
-  results.building.heights = {3, 4};
-  results.building.masses = {1, 1};
+Results two_stories() {
+  Results results;
+  results.buildings.resize(1);
+  results.buildings[0].heights = {3, 4};
+  results.buildings[0].masses = {1, 1};
   return results;
 }
 
@@ -41,15 +53,15 @@ Limit limit(Statistic statistic, double value, double percentile = 0) {
   return {&quantity("drift_ratio"), statistic, percentile, value, "invented", {}};
 }
 
-Outcome only(const StudyResults& results, const Limit& one) {
+Outcome only(const Results& results, const Limit& one) {
   const Verdict verdict = judge(results, {one});
   EXPECT_EQ(verdict.outcomes.size(), 1u);
   return verdict.outcomes.at(0);
 }
 
 // Story 1: 1, 2, 3 %; story 2: 2, 2.5, 0.9 %. By hand: means 2 and 1.8, maxima 3 and 2.5, medians 2 and 2.
-StudyResults three_runs() {
-  StudyResults results = two_stories();
+Results three_runs() {
+  Results results = two_stories();
   results.runs = {run("A", 0.010, -0.020, 0), run("B", -0.020, 0.025, 0), run("C", 0.030, 0.009, 0)};
   return results;
 }
@@ -77,7 +89,7 @@ TEST(Judge, EqualToTheLimitIsNotAboveIt) {
 }
 
 TEST(Judge, EachFactorByItself) {
-  StudyResults results = three_runs();
+  Results results = three_runs();
   results.runs.push_back(run("A", 0.05, 0.01, 0, 2));
   const Verdict verdict = judge(results, {limit(Statistic::max, 0.04)});
   ASSERT_EQ(verdict.outcomes.size(), 2u);
@@ -91,7 +103,7 @@ TEST(Judge, EachFactorByItself) {
 }
 
 TEST(Judge, TooCloseOnBothSidesWithinTheStepError) {
-  StudyResults results = two_stories();
+  Results results = two_stories();
   results.runs = {run("A", 0.0199, 0, 0.0002)};
   EXPECT_EQ(only(results, limit(Statistic::max, 0.02)).finding, Finding::too_close);
   EXPECT_FALSE(only(results, limit(Statistic::max, 0.02)).exceeded);
@@ -102,13 +114,13 @@ TEST(Judge, TooCloseOnBothSidesWithinTheStepError) {
 }
 
 TEST(Judge, UnknownStepErrorIsNotTooClose) {
-  StudyResults results = two_stories();
+  Results results = two_stories();
   results.runs = {run("A", 0.0199, 0, nan)};
   EXPECT_EQ(only(results, limit(Statistic::max, 0.02)).finding, Finding::holds);
 }
 
 TEST(Judge, CollapsedRunIsBeyondEveryLimit) {
-  StudyResults results = three_runs();
+  Results results = three_runs();
   results.runs[0] = ended(run("A", 0.02, 0.101, nan), RunStatus::collapsed);
   const Outcome mean = only(results, limit(Statistic::mean, 1));
   EXPECT_TRUE(std::isinf(mean.value));
@@ -124,14 +136,14 @@ TEST(Judge, CollapsedRunIsBeyondEveryLimit) {
 }
 
 TEST(Judge, CollapsedRunWithoutLimitsStillCounts) {
-  StudyResults results = three_runs();
+  Results results = three_runs();
   results.runs[0].status = RunStatus::collapsed;
   EXPECT_EQ(exit_status(judge(results, {})), 1);
   EXPECT_EQ(exit_status(judge(three_runs(), {})), 0);
 }
 
 TEST(Judge, OpenRunLeavesTheLimitUndetermined) {
-  StudyResults results = three_runs();
+  Results results = three_runs();
   results.runs[2] = ended(run("C", 0.5, 0.5, nan), RunStatus::not_converged);
   const Outcome outcome = only(results, limit(Statistic::max, 0.03));
   EXPECT_EQ(outcome.finding, Finding::undetermined);
@@ -141,7 +153,7 @@ TEST(Judge, OpenRunLeavesTheLimitUndetermined) {
 }
 
 TEST(Judge, OpenRunDoesNotHideAnExceededLimit) {
-  StudyResults results = three_runs();
+  Results results = three_runs();
   results.runs[2].status = RunStatus::not_converged;
   EXPECT_EQ(only(results, limit(Statistic::max, 0.024)).finding, Finding::exceeded);
   // Mean of the two others at story 2: 2.25 %; with the open run at 0 it would be 1.5 %.
@@ -151,7 +163,7 @@ TEST(Judge, OpenRunDoesNotHideAnExceededLimit) {
 }
 
 TEST(Judge, PeakThatIsNoNumberIsNeverPassedOver) {
-  StudyResults results = three_runs();
+  Results results = three_runs();
   results.runs[0] = run("A", nan, 0.001, 0);
   EXPECT_EQ(only(results, limit(Statistic::max, 0.04)).finding, Finding::undetermined);
   EXPECT_EQ(exit_status(judge(results, {limit(Statistic::max, 0.04)})), 3);
@@ -166,7 +178,7 @@ TEST(Judge, FactorWithoutRunsIsUndetermined) {
 }
 
 TEST(Judge, WholeRunQuantityHasNoPlace) {
-  StudyResults results = three_runs();
+  Results results = three_runs();
   results.runs[1].peaks[ResponseLayout(2).offset(quantity("base_shear"))] = {-5e6, 1, 1e3};
   const Outcome outcome = only(results, {&quantity("base_shear"), Statistic::max, 0, 4e6, "", {}});
   EXPECT_EQ(outcome.place, 0);
@@ -175,7 +187,7 @@ TEST(Judge, WholeRunQuantityHasNoPlace) {
 }
 
 TEST(Judge, ResidualDriftRatioOverTheStoryHeight) {
-  StudyResults results = three_runs();
+  Results results = three_runs();
   for (RunResult& one : results.runs) {
     one.residual_drift = {0.003, -0.008};
     one.residual_error = {0.0003, 0.0004};
@@ -184,6 +196,31 @@ TEST(Judge, ResidualDriftRatioOverTheStoryHeight) {
   EXPECT_DOUBLE_EQ(outcome.value, 0.002);        // 8 mm / 4 m
   EXPECT_DOUBLE_EQ(outcome.step_error, 0.0001);  // 0.4 mm / 4 m
   EXPECT_EQ(outcome.place, 2);
+}
+
+// The second building has one story and drifts twice as far: its own outcome, its own place.
+TEST(Judge, EachBuildingByItself) {
+  Results results = three_runs();
+  results.buildings.emplace_back();
+  results.buildings[1].heights = {5};
+  RunResult other;
+  other.building = 1;
+  other.motion = "A";
+  other.peaks.resize(ResponseLayout(1).size());
+  other.peaks[ResponseLayout(1).offset(quantity("drift_ratio"))] = {-0.06, 1, 0};
+  results.runs.push_back(other);
+  const Verdict verdict = judge(results, {limit(Statistic::max, 0.04)});
+  ASSERT_EQ(verdict.outcomes.size(), 2u);
+  EXPECT_EQ(verdict.outcomes[0].building, 0);
+  EXPECT_EQ(verdict.outcomes[0].finding, Finding::holds);
+  EXPECT_EQ(verdict.outcomes[0].runs, 3);
+  EXPECT_EQ(verdict.outcomes[1].building, 1);
+  EXPECT_EQ(verdict.outcomes[1].finding, Finding::exceeded);
+  EXPECT_DOUBLE_EQ(verdict.outcomes[1].value, 0.06);
+  EXPECT_EQ(verdict.outcomes[1].place, 1);
+  Limit at_two = limit(Statistic::max, 0.04);
+  at_two.factors = {2};
+  EXPECT_EQ(judge(results, {at_two}).outcomes.size(), 2u) << "undetermined for each building";
 }
 
 }  // namespace

@@ -16,7 +16,7 @@ import numpy as np
 import xarray
 
 GROUPS = ["building", "motions", "runs", "peaks", "residual", "histories/0", "verdict"]
-SCALES = {"run": 0, "story": 1, "floor": 1, "moved_floor": 1, "mode": 1, "motion": 0, "limit": 0, "outcome": 0, "listed": 0}
+SCALES = {"run": 0, "story": 1, "floor": 1, "moved_floor": 1, "mode": 1, "motion": 0, "building": 0, "limit": 0, "outcome": 0, "listed": 0}
 failures = []
 
 
@@ -92,7 +92,7 @@ def check_with_xarray(path, expected):
             with xarray.open_dataset(path, group=group, engine=engine) as dataset:
                 check_labels(f"{engine} {group}", dataset)
                 for name, values in expected.items():
-                    if name.startswith(f"/{group}/") and isinstance(values[0], float):
+                    if name.startswith(f"/{group}/") and isinstance(values[0], (int, float)):
                         found = dataset[name.split("/")[-1]].values.ravel()
                         wanted = np.array([float(x) for x in values])
                         expect(np.array_equal(found, wanted, equal_nan=True), f"{engine} {name}: values differ")
@@ -101,6 +101,12 @@ def check_with_xarray(path, expected):
             # Run 1 is motion 1 at factor 0.5; by the formula of the invented results, story 3 drifts -0.5 * 0.007.
             drift = float(peaks["drift_ratio"].sel(run=1, story=3))
             expect(abs(drift + 0.0035) < 1e-15, f"{engine}: drift ratio of run 1, story 3 is {drift}")
+        with xarray.open_dataset(path, group="building", engine=engine) as building:
+            expect(building["K"].dims == ("building", "floor", "moved_floor"), f"{engine}: K is {building['K'].dims}")
+            expect(building["period"].dims == ("building", "mode"), f"{engine}: period is {building['period'].dims}")
+            expect(building["label"].dims == ("building", "story"), f"{engine}: label is {building['label'].dims}")
+            low = building.sel(building=1)
+            expect(int(low["stories"]) == 5 and int(low["height"].count()) == 5, f"{engine}: the second has not 5 stories")
         with xarray.open_dataset(path, group="histories/0", engine=engine) as history:
             expect(history["drift"].dims == ("time", "story"), f"{engine}: history of drift is {history['drift'].dims}")
             expect(history["time"].attrs["units"] == "s", f"{engine}: time is in {history['time'].attrs}")

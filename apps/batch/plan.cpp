@@ -16,7 +16,7 @@ constexpr double shard_bytes = 32 << 20;
 // Enough shards that many workers end together, but none with fewer runs than the widest pack has lanes.
 constexpr std::size_t shards_wanted = 64, smallest_shard = 8;
 // Below both of these a study is over in seconds and its results fit in memory.
-constexpr double short_story_steps = 3e8, short_bytes = 64 << 20;
+constexpr double short_story_steps = 1e8, short_bytes = 64 << 20;
 
 RunSettings settings_of(const Study& study, const BuildingSummary& summary) {
   const MarchSettings& march = study.march;

@@ -82,7 +82,7 @@ R splat(double x) {
 // where ? yes : no, lane by lane.
 inline double select(bool where, double yes, double no) { return where ? yes : no; }
 template <class R>
-requires(LaneTraits<R>::width > 1) R select(const Mask<R>& where, const R& yes, const R& no) {
+requires(std::is_same_v<R, Pack<LaneTraits<R>::width>>) R select(const Mask<R>& where, const R& yes, const R& no) {
   return where ? yes : no;
 }
 
@@ -151,6 +151,7 @@ R lane_max(const R& x, const R& y) {
 #endif
   return select(x > y, x, y);
 }
+
 // -1, 0 or 1.
 template <class R>
 R lane_sign(const R& x) {

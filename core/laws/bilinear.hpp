@@ -26,7 +26,7 @@ struct Bilinear {
 
   // Unchecked; input goes through make(). Same units as the fields.
   Bilinear(double k, double f_y, double r)
-      : stiffness(k), yield_shear(f_y), post_yield_ratio(r), backbone(r * k), slider{(1 - r) * k, (1 - r) * f_y} {}
+      : stiffness(k), yield_shear(f_y), post_yield_ratio(r), backbone(r * k), slider((1 - r) * k, (1 - r) * f_y) {}
 
   template <class R>
   struct Memory {

@@ -8,8 +8,11 @@
 namespace pilotis {
 
 struct Slider {
-  double stiffness;  // k, N/m, > 0
-  double strength;   // N, > 0
+  double stiffness;    // k, N/m, > 0
+  double strength;     // N, > 0
+  double flexibility;  // 1/k, m/N: a division in every step would cost a tenth of the march
+
+  Slider(double k, double largest) : stiffness(k), strength(largest), flexibility(1 / k) {}
 };
 
 // `slip` (m) is the committed one; `trial_slip` what it becomes at `deformation` (m).
@@ -18,7 +21,7 @@ Reply<R> slider_reply(const Slider& slider, const R& deformation, const R& slip,
   const R elastic = slider.stiffness * (deformation - slip);
   const R force = lane_max<R>(lane_min<R>(elastic, splat<R>(slider.strength)), splat<R>(-slider.strength));
   const auto slips = lane_abs(elastic) > slider.strength;
-  trial_slip = select(slips, R(deformation - force / slider.stiffness), slip);
+  trial_slip = select(slips, R(deformation - force * slider.flexibility), slip);
   return {force, select(slips, splat<R>(0), splat<R>(slider.stiffness))};
 }
 

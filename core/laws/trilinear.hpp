@@ -38,8 +38,8 @@ struct Trilinear {
         yield_shear(f_y),
         post_yield_ratio(r_y),
         backbone(r_y * k),
-        crack{(1 - r_c) * k, (1 - r_c) * k * cracking_deformation()},
-        yield{(r_c - r_y) * k, (r_c - r_y) * k * yield_deformation()} {}
+        crack((1 - r_c) * k, (1 - r_c) * k * cracking_deformation()),
+        yield((r_c - r_y) * k, (r_c - r_y) * k * yield_deformation()) {}
 
   template <class R>
   struct Memory {

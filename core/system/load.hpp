@@ -20,11 +20,11 @@ class Load {
   double ground(double t) const noexcept;
   // p(t) - M iota a_g(t), N, [freedom].
   void at(double t, double* out) const noexcept;
-  // Adds p(t), N, to lane `lane` of out, [freedom].
+  // Adds p(t), N, to one lane of out, [freedom].
   template <class R>
-  void add_floor_forces(double t, R* out, int lane) const noexcept {
+  void add_floor_forces(double t, R* out, int i) const noexcept {
     for (const FreedomForce& force : forces_)
-      set_lane(out[force.freedom], lane, pilotis::lane(out[force.freedom], lane) + table_value(force, t));
+      set_lane(out[force.freedom], i, lane(out[force.freedom], i) + table_value(force, t));
   }
   bool has_floor_forces() const { return !forces_.empty(); }
   // -M iota, kg, [freedom].

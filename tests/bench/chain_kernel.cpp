@@ -30,13 +30,14 @@ struct Chain {
     const auto& group = std::get<ElementGroup<Bilinear>>(system.groups);
     for (int i = 0; i < n; ++i) {
       const Bilinear& law = group.laws[i];
-      backbone.push_back(law.backbone), k.push_back(law.slider.stiffness), strength.push_back(law.slider.strength);
+      backbone.push_back(law.backbone), k.push_back(law.slider.stiffness), strength.push_back(law.slider.strength),
+          flexibility.push_back(law.slider.flexibility);
       diagonal[i] = system.damping.at(i, i);
       beside[i] = i + 1 < n ? system.damping.at(i + 1, i) : 0;
     }
   }
   int n;
-  std::vector<double> mass, diagonal, beside, backbone, k, strength;
+  std::vector<double> mass, diagonal, beside, backbone, k, strength, flexibility;
 };
 
 }  // namespace
@@ -69,7 +70,7 @@ void chain_march(bench::ChainJob& job) {
         const R elastic = c.k[i] * (drift - slip[i]);
         const R bounded = lane_max<R>(lane_min<R>(elastic, splat<R>(c.strength[i])), splat<R>(-c.strength[i]));
         const auto slips = lane_abs<R>(elastic) > c.strength[i];
-        trial[i] = select(slips, R(drift - bounded / c.k[i]), slip[i]);
+        trial[i] = select(slips, R(drift - bounded * c.flexibility[i]), slip[i]);
         tangent[i] = c.backbone[i] + select(slips, zero, splat<R>(c.k[i]));
         const R force = c.backbone[i] * drift + bounded;
         if (i > 0) residual[i - 1] = residual[i - 1] + force;

@@ -1,11 +1,14 @@
 // Spectra that others have printed: textbook values of El Centro, an archive's volume 3, an archive's table.
+#include "tests/core/motion/spectra/published.hpp"
+
 #include <gtest/gtest.h>
 
 #include <cmath>
+#include <iterator>
 #include <map>
+#include <sstream>
 
 #include "core/motion/spectra/response_spectrum.hpp"
-#include "tests/core/motion/spectra/published.hpp"
 
 namespace pilotis {
 namespace {
@@ -15,20 +18,21 @@ using namespace test;
 constexpr double inch = 0.0254, g = 9.80665;
 constexpr StepRule archive{10};  // the archives' own step rule; PUBLISHED formats, volume 3
 
-// PUBLISHED B: Chopra, ch. 6 (from memory there; recomputed): inches, two decimals. The book sees a peak at the record's
-// steps or finer, we at sub-steps: below 0.3 % at T = 0.5 s (cos(pi 0.02 / 0.5)), which is why half a digit is not all.
+// PUBLISHED B: Chopra, ch. 6 (from memory there; recomputed there). Half a unit of the second decimal, and 0.2 % for
+// the book's digitisation of the record, as PUBLISHED F has it. Seen at the record's own steps, as the book does (n =
+// 10).
 TEST(PublishedSpectra, ElCentroPeakDeformations) {
   const Accelerogram record = el_centro(g);
   if (record.samples.empty()) GTEST_SKIP() << "no " << reference("elcentro-1940-ns.txt");
   struct Case {
     double period, damping, inches;
   };
-  for (const Case& c : {Case{0.5, 0.02, 2.67}, Case{1, 0.02, 5.97}, Case{2, 0.02, 7.47}, Case{2, 0, 9.91},
-                        Case{2, 0.05, 5.37}}) {
+  for (const Case& c :
+       {Case{0.5, 0.02, 2.67}, Case{1, 0.02, 5.97}, Case{2, 0.02, 7.47}, Case{2, 0, 9.91}, Case{2, 0.05, 5.37}}) {
     const Oscillator oscillator{c.period, c.damping};
     OscillatorExtremes seen;
-    oscillator_extremes(ground_of(record), {&oscillator, 1}, {}, {&seen, 1}, "test");
-    EXPECT_NEAR(seen.displacement.largest() / inch, c.inches, 0.005 + 0.003 * c.inches) << c.period << " " << c.damping;
+    oscillator_extremes(ground_of(record), {&oscillator, 1}, archive, {&seen, 1}, "test");
+    EXPECT_NEAR(seen.displacement.largest() / inch, c.inches, 0.005 + 0.002 * c.inches) << c.period << " " << c.damping;
   }
 }
 
@@ -48,11 +52,14 @@ Volume3 volume_3(const std::vector<std::string>& lines, int channel) {
   return out;
 }
 
+double last_of_three_digits(double value) { return std::pow(10, std::floor(std::log10(value)) - 2); }
+
 class SylmarVolume3 : public ::testing::TestWithParam<int> {};
 
-// CSMIP volume 3, Sylmar, Whittier 1987, computed by the archive from its volume 2. Three digits are printed, which is
-// 0.5 % where they begin with 1; the archive's own samples (cm/s2, three decimals) add less.
-TEST_P(SylmarVolume3, AgreesWithinThePrintedDigits) {
+// CSMIP volume 3, Sylmar, Whittier 1987, computed by the archive from its volume 2, damping 2 to 20 %. Three digits are
+// printed: half a unit of the last one, and a tenth for the record's own rounding to 0.001 cm/s2. The archive's g is
+// 386 in/s2: the one round value that meets all its accelerations.
+TEST_P(SylmarVolume3, AgreesToThePrintedDigits) {
   const auto spectra = lines_of("records/SYLMOVFF.V3"), record = lines_of("records/SYLMOVFF.V2");
   if (spectra.empty() || record.empty()) GTEST_SKIP() << "no " << reference("records/SYLMOVFF.V3");
   const Volume3 printed = volume_3(spectra, GetParam());
@@ -63,37 +70,51 @@ TEST_P(SylmarVolume3, AgreesWithinThePrintedDigits) {
   for (const auto& [damping, data] : printed.data) {
     const ResponseSpectrum ours = response_spectrum({samples, 0.02}, printed.periods, {&damping, 1}, "test", archive);
     const SpectrumCurve& curve = ours.curves[0];
-    double worst = 0;
     for (std::size_t i = 0; i < printed.periods.size(); ++i) {
-      const double pairs[4][2] = {{curve.displacement[i] / inch, data[0][i]},
-                                  {curve.velocity[i] / inch, data[1][i]},
-                                  {curve.acceleration[i] / g, data[2][i]},
-                                  {curve.pseudo_velocity[i] / inch, data[3][i]}};
-      for (const auto& [found, wanted] : pairs) {
-        if(std::getenv("SHOW")&&std::abs(found/wanted-1)>.006) printf("%g %g  %g %g  %.4f\n",damping,printed.periods[i],found,wanted,found/wanted-1);
-        worst=std::max(worst,std::abs(found/wanted-1));
-      }
+      SCOPED_TRACE(printed.periods[i]);
+      EXPECT_NEAR(curve.displacement[i] / inch, data[0][i], 0.6 * last_of_three_digits(data[0][i])) << damping;
+      EXPECT_NEAR(curve.velocity[i] / inch, data[1][i], 0.6 * last_of_three_digits(data[1][i])) << damping;
+      EXPECT_NEAR(curve.acceleration[i] / (386 * inch), data[2][i], 0.6 * last_of_three_digits(data[2][i])) << damping;
+      EXPECT_NEAR(curve.pseudo_velocity[i] / inch, data[3][i], 0.6 * last_of_three_digits(data[3][i])) << damping;
     }
-    printf("worst %g: %g\n",damping,worst);
   }
 }
 INSTANTIATE_TEST_SUITE_P(Channels, SylmarVolume3, ::testing::Values(0, 1, 2));
 
-// ITACA record 16840, component H1 and the archive's table of pseudo-acceleration beside it.
+// The rows of the archive's table: period (s), then pseudo-acceleration (m/s2) at 2, 5, 7, 10, 20 and 30 %.
+std::vector<std::vector<double>> rows_of(const std::vector<std::string>& table) {
+  std::vector<std::vector<double>> rows;
+  for (std::size_t i = 1; i < table.size(); ++i) {
+    std::istringstream line(table[i]);
+    const std::vector<double> row{std::istream_iterator<double>(line), {}};
+    if (row.size() == 7 && row[0] >= 0) rows.push_back(row);
+  }
+  return rows;
+}
+
+// ITACA record 16840, component H1, and the archive's table beside it. Agreement within 7e-4 is what an independent
+// calculation found too (PUBLISHED formats). The column headed 2 % stands two rows too high in this file: its last rows
+// repeat others. Read that way it agrees within what sampling at 0.005 s can miss, (pi 0.005 / T)^2 / 2 or 1.1e-3 at
+// T = 0.34 s, which matters at low damping.
 TEST(PublishedSpectra, BibbienaPseudoAcceleration) {
-  const auto table = lines_of("records/16840_H1.rs"), record = lines_of("records/16840_H1.cor.acc");
-  if (table.empty() || record.empty()) GTEST_SKIP() << "no " << reference("records/16840_H1.rs");
+  const auto rows = rows_of(lines_of("records/16840_H1.rs"));
+  const auto record = lines_of("records/16840_H1.cor.acc");
+  if (rows.empty() || record.empty()) GTEST_SKIP() << "no " << reference("records/16840_H1.rs");
   const std::vector<double> samples = columns(record, 10, 14, 12400);
   ASSERT_EQ(samples.size(), 12400u);
+  ASSERT_EQ(rows.size(), 78u);
+  std::vector<double> periods;
+  for (const auto& row : rows) periods.push_back(row[0]);
   const std::vector<double> dampings{0.02, 0.05, 0.07, 0.10, 0.20, 0.30};
-  for(double n:{10.,20.,40.}) { std::map<int,double> worst;
-  for (std::size_t row = 1; row < table.size(); ++row) {
-    std::istringstream line(table[row]);
-    double period; line>>period; if(period<0) break;
-    const ResponseSpectrum ours = response_spectrum({samples, 0.005}, {&period, 1}, dampings, "test", {n});
-    for(int d=0;d<6;++d){ double w; line>>w; double e=ours.curves[d].pseudo_acceleration[0]/w-1; if(std::getenv("SHOW")&&std::abs(e)>1e-3) printf("n %g T %g z %g  %.5f\n",n,period,dampings[d],e); worst[d]=std::max(worst[d],std::abs(e));}
+  const ResponseSpectrum ours = response_spectrum({samples, 0.005}, periods, dampings, "test", archive);
+  for (std::size_t column = 0; column < dampings.size(); ++column) {
+    const std::size_t shift = column == 0 ? 2 : 0;
+    for (std::size_t i = 0; i + shift < periods.size(); ++i) {
+      const double wanted = rows[i][column + 1], allowed = column == 0 ? 1.1e-3 : 7e-4;
+      EXPECT_NEAR(ours.curves[column].pseudo_acceleration[i + shift], wanted, allowed * wanted)
+          << periods[i + shift] << " s, " << dampings[column];
+    }
   }
-  for(auto&[d,w]:worst) printf("n=%g %g: %g\n",n,dampings[d],w); }
 }
 
 }  // namespace

@@ -15,7 +15,7 @@ std::vector<OscillatorBundle> bundles_at_rest(std::span<const Oscillator> oscill
 // What lane `lane` has seen, with the free vibration that follows its state.
 OscillatorExtremes extremes_of(const OscillatorBundle& bundle, int lane, const Oscillator& oscillator);
 
-// m of the step rule for every oscillator.
+// m of the step rule for every oscillator; 0 for the rigid ones, which do not march.
 std::vector<int> subdivisions(std::span<const Oscillator> oscillators, double step, const StepRule& rule);
 
 }  // namespace pilotis

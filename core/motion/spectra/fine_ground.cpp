@@ -26,15 +26,17 @@ double FineGround::knot(long i) const {
 }
 
 // Weighted so that a sample itself comes out to the bit.
-void FineGround::fill(long first, long count) {
+std::span<const double> FineGround::block(long number) {
+  const long first = number * block_, last = std::min(first + block_, intervals_);
   double* out = buffer_.data();
   double from = knot(first);
   *out++ = from;
-  for (long i = first + 1; i <= first + count; ++i) {
+  for (long i = first + 1; i <= last; ++i) {
     const double to = knot(i);
     for (const double weight : weights_) *out++ = (1 - weight) * from + weight * to;
     from = to;
   }
+  return {buffer_.data(), out};
 }
 
 }  // namespace pilotis

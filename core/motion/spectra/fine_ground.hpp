@@ -15,20 +15,14 @@ class FineGround {
 
   double step() const { return ground_.step / pieces_; }  // s
 
-  // Calls use(const double* p, int steps) for one block after the other from t = 0 until the ground is at rest again;
-  // p[0..steps], m/s2, holds both ends of the steps.
-  template <class Use>
-  void each_block(Use&& use) {
-    for (long first = 0; first < intervals_; first += block_) {
-      const long count = first + block_ < intervals_ ? block_ : intervals_ - first;
-      fill(first, count);
-      use(buffer_.data(), static_cast<int>(count * pieces_));
-    }
-  }
+  // Blocks from t = 0 until the ground is at rest again.
+  long blocks() const { return (intervals_ + block_ - 1) / block_; }
+  int longest_block() const { return static_cast<int>(block_ * pieces_); }  // steps
+  // p, m/s2, [steps + 1]: both ends of the steps of block `number`. Good until the next call.
+  std::span<const double> block(long number);
 
  private:
   double knot(long i) const;  // m/s2 at t = i steps of the record; 0 at the last
-  void fill(long first, long count);
 
   Ground ground_;
   int pieces_;

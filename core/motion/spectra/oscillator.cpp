@@ -27,6 +27,13 @@ void validate_oscillator(const Oscillator& oscillator, double step, const std::s
                       "it must be at least 0 and below 1");
 }
 
+// To the next power of two or three times one.
+int rounded_up(int pieces) {
+  int power = 1;
+  while (power < pieces) power *= 2;
+  return power / 4 * 3 >= pieces && power >= 4 ? power / 4 * 3 : power;
+}
+
 }  // namespace
 
 Ground ground_of(const Accelerogram& record) { return {record.samples, record.step, record.first_sample_at}; }
@@ -57,10 +64,11 @@ void validate(const StepRule& rule, const std::string& where) {
 }
 
 int subdivision(double period, double step, const StepRule& rule) {
-  if (period == 0) return 1;
+  if (period == 0) return 0;
   // A whole number that rounding has lifted a little is still that number: 0.1 s at 0.01 s and n = 10 is one step.
   const double steps = rule.steps_per_period * step / period;
-  return std::max(1, static_cast<int>(std::ceil(steps * (1 - 1e-12))));
+  const int pieces = std::max(1, static_cast<int>(std::ceil(steps * (1 - 1e-12))));
+  return rule.exact ? pieces : rounded_up(pieces);
 }
 
 }  // namespace pilotis

@@ -35,14 +35,17 @@ Ground ground_of(const Accelerogram& record);
 
 struct StepRule {
   double steps_per_period = 40;  // n, 10 to 1000
+  // false: m is rounded up to 1, 2, 3, 4, 6, 8, 12, 16, ... so that more periods share a step and walk side by side.
+  bool exact = false;
 };
+constexpr StepRule archive_rule{10, true};
 
 // Throw Error (input) at `where` when something is not as described above.
 void validate(const Ground& ground, const std::string& where);
 void validate(std::span<const Oscillator> oscillators, double step, const std::string& where);
 void validate(const StepRule& rule, const std::string& where);
 
-// m of the step rule; 1 for the rigid oscillator.
+// m of the step rule; 0 for the rigid oscillator, which needs no steps.
 int subdivision(double period, double step, const StepRule& rule);
 
 }  // namespace pilotis

@@ -24,14 +24,6 @@ OscillatorExtremes rigid(const Ground& ground) {
   return {{}, {}, acceleration};
 }
 
-// The rigid ones get group 0 of their own.
-std::vector<int> groups_of(std::span<const Oscillator> oscillators, double step, const StepRule& rule) {
-  std::vector<int> pieces = subdivisions(oscillators, step, rule);
-  for (std::size_t i = 0; i < pieces.size(); ++i)
-    if (oscillators[i].period == 0) pieces[i] = 0;
-  return pieces;
-}
-
 }  // namespace
 
 void oscillator_extremes(const Ground& ground, std::span<const Oscillator> oscillators, const StepRule& rule,
@@ -44,15 +36,17 @@ void oscillator_extremes(const Ground& ground, std::span<const Oscillator> oscil
                       "there must be one place for each");
   const auto march = PILOTIS_KERNELS(march_extremes)[static_cast<std::size_t>(set)];
   constexpr int lanes = OscillatorBundle::lanes;
-  each_lane_group(groups_of(oscillators, ground.step, rule), [&](int pieces, std::span<const int> members) {
+  each_lane_group(subdivisions(oscillators, ground.step, rule), [&](int pieces, std::span<const int> members) {
     if (pieces == 0) {
       for (const int member : members) extremes[member] = rigid(ground);
       return;
     }
     FineGround fine(ground, pieces);
     std::vector<OscillatorBundle> bundles = bundles_at_rest(oscillators, members, fine.step());
-    fine.each_block(
-        [&](const double* p, int steps) { march(p, steps, bundles.data(), static_cast<int>(bundles.size())); });
+    for (long block = 0; block < fine.blocks(); ++block) {
+      const std::span<const double> p = fine.block(block);
+      march(p.data(), static_cast<int>(p.size()) - 1, bundles.data(), static_cast<int>(bundles.size()));
+    }
     for (std::size_t i = 0; i < members.size(); ++i)
       extremes[members[i]] = extremes_of(bundles[i / lanes], static_cast<int>(i % lanes), oscillators[members[i]]);
   });

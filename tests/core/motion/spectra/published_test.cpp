@@ -16,7 +16,6 @@ namespace {
 using namespace test;
 
 constexpr double inch = 0.0254, g = 9.80665;
-constexpr StepRule archive{10};  // the archives' own step rule; PUBLISHED formats, volume 3
 
 // PUBLISHED B: Chopra, ch. 6 (from memory there; recomputed there). Half a unit of the second decimal, and 0.2 % for
 // the book's digitisation of the record, as PUBLISHED F has it. Seen at the record's own steps, as the book does (n =
@@ -31,7 +30,7 @@ TEST(PublishedSpectra, ElCentroPeakDeformations) {
        {Case{0.5, 0.02, 2.67}, Case{1, 0.02, 5.97}, Case{2, 0.02, 7.47}, Case{2, 0, 9.91}, Case{2, 0.05, 5.37}}) {
     const Oscillator oscillator{c.period, c.damping};
     OscillatorExtremes seen;
-    oscillator_extremes(ground_of(record), {&oscillator, 1}, archive, {&seen, 1}, "test");
+    oscillator_extremes(ground_of(record), {&oscillator, 1}, archive_rule, {&seen, 1}, "test");
     EXPECT_NEAR(seen.displacement.largest() / inch, c.inches, 0.005 + 0.002 * c.inches) << c.period << " " << c.damping;
   }
 }
@@ -68,7 +67,8 @@ TEST_P(SylmarVolume3, AgreesToThePrintedDigits) {
   ASSERT_EQ(samples.size(), 2000u);
   for (double& a : samples) a *= 0.01;
   for (const auto& [damping, data] : printed.data) {
-    const ResponseSpectrum ours = response_spectrum({samples, 0.02}, printed.periods, {&damping, 1}, "test", archive);
+    const ResponseSpectrum ours =
+        response_spectrum({samples, 0.02}, printed.periods, {&damping, 1}, "test", archive_rule);
     const SpectrumCurve& curve = ours.curves[0];
     for (std::size_t i = 0; i < printed.periods.size(); ++i) {
       SCOPED_TRACE(printed.periods[i]);
@@ -106,7 +106,7 @@ TEST(PublishedSpectra, BibbienaPseudoAcceleration) {
   std::vector<double> periods;
   for (const auto& row : rows) periods.push_back(row[0]);
   const std::vector<double> dampings{0.02, 0.05, 0.07, 0.10, 0.20, 0.30};
-  const ResponseSpectrum ours = response_spectrum({samples, 0.005}, periods, dampings, "test", archive);
+  const ResponseSpectrum ours = response_spectrum({samples, 0.005}, periods, dampings, "test", archive_rule);
   for (std::size_t column = 0; column < dampings.size(); ++column) {
     const std::size_t shift = column == 0 ? 2 : 0;
     for (std::size_t i = 0; i + shift < periods.size(); ++i) {

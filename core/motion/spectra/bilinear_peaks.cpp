@@ -17,7 +17,7 @@ namespace pilotis {
 
 namespace {
 
-constexpr int lanes = BilinearBundle::lanes;
+constexpr int per_bundle = BilinearBundle::lanes;
 constexpr double longest_tail = 100;  // periods
 
 void validate_oscillators(double post_yield_ratio, std::span<const BilinearOscillator> oscillators,
@@ -40,10 +40,10 @@ std::vector<BilinearBundle> at_rest(std::span<const BilinearOscillator> oscillat
                                     double step) {
   const std::vector<OscillatorBundle> bare = bundles_at_rest(elastic, members, step);
   std::vector<BilinearBundle> bundles(bare.size());
-  for (std::size_t i = 0; i < bundles.size() * lanes; ++i) {
-    BilinearBundle& bundle = bundles[i / lanes];
-    const int lane = static_cast<int>(i % lanes), member = members[std::min(i, members.size() - 1)];
-    if (lane == 0) bundle.elastic = bare[i / lanes];
+  for (std::size_t i = 0; i < bundles.size() * per_bundle; ++i) {
+    BilinearBundle& bundle = bundles[i / per_bundle];
+    const int lane = static_cast<int>(i % per_bundle), member = members[std::min(i, members.size() - 1)];
+    if (lane == 0) bundle.elastic = bare[i / per_bundle];
     const double square = omega_of(elastic[member]) * omega_of(elastic[member]);
     bundle.ground[lane] = square / oscillators[member].yield_acceleration;
     bundle.pull[lane] = square * (1 - r);
@@ -104,8 +104,8 @@ void bilinear_peaks(const Ground& ground, double post_yield_ratio, std::span<con
       for (BilinearBundle& bundle : bundles) march(p.data(), static_cast<int>(p.size()) - 1, post_yield_ratio, bundle);
     }
     for (std::size_t i = 0; i < members.size(); ++i)
-      peaks[members[i]] =
-          peak_of(bundles[i / lanes], static_cast<int>(i % lanes), post_yield_ratio, elastic[members[i]], fine.step());
+      peaks[members[i]] = peak_of(bundles[i / per_bundle], static_cast<int>(i % per_bundle), post_yield_ratio,
+                                  elastic[members[i]], fine.step());
   });
 }
 

@@ -20,7 +20,7 @@ namespace pilotis {
 
 namespace {
 
-constexpr int lanes = OscillatorBundle::lanes;
+constexpr int per_bundle = OscillatorBundle::lanes;
 using Kernel = decltype(PILOTIS_KERNELS(march_displacements))::value_type;
 
 void validate_pair(const Ground& first, const Ground& second, const std::string& where) {
@@ -73,7 +73,7 @@ class BundlePair {
   BundlePair(const Ground& first, const Ground& second, int pieces)
       : first_(first, pieces),
         second_(second, pieces),
-        u1_(static_cast<std::size_t>(first_.longest_block()) * lanes),
+        u1_(static_cast<std::size_t>(first_.longest_block()) * per_bundle),
         u2_(u1_.size()) {}
 
   double step() const { return first_.step(); }
@@ -85,7 +85,7 @@ class BundlePair {
       kernel(p1.data(), steps, one, u1_.data());
       kernel(p2.data(), steps, two, u2_.data());
       for (std::size_t lane = 0; lane < envelopes.size(); ++lane)
-        envelopes[lane].see(u1_.data() + lane, u2_.data() + lane, steps, lanes);
+        envelopes[lane].see(u1_.data() + lane, u2_.data() + lane, steps, per_bundle);
     }
   }
 
@@ -99,8 +99,9 @@ void march_group(const Ground& first, const Ground& second, std::span<const Osci
   BundlePair pair(first, second, pieces);
   std::vector<OscillatorBundle> one = bundles_at_rest(oscillators, members, pair.step()), two = one;
   for (std::size_t b = 0; b < one.size(); ++b) {
-    const auto here = members.subspan(b * lanes, std::min<std::size_t>(lanes, members.size() - b * lanes));
-    std::array<RotationEnvelope, lanes> envelopes;
+    const auto here =
+        members.subspan(b * per_bundle, std::min<std::size_t>(per_bundle, members.size() - b * per_bundle));
+    std::array<RotationEnvelope, per_bundle> envelopes;
     pair.march(kernel, one[b], two[b], std::span(envelopes).first(here.size()));
     for (std::size_t lane = 0; lane < here.size(); ++lane)
       peaks[here[lane]] = finished(envelopes[lane], one[b], two[b], static_cast<int>(lane), oscillators[here[lane]]);

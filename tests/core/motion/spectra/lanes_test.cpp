@@ -3,9 +3,12 @@
 
 #include <cmath>
 #include <cstring>
+#include <random>
 #include <thread>
 
+#include "core/motion/spectra/bundles.hpp"
 #include "core/motion/spectra/response_spectrum.hpp"
+#include "core/motion/spectra/spectra_kernels.hpp"
 
 namespace pilotis {
 namespace {
@@ -89,6 +92,31 @@ TEST(Kernel, IsThePlainRecurrence) {
   // The rule of the middle errs by (w h)^2 / 24, h = step / 40: 1e-7.
   EXPECT_NEAR(found.displacement.low, low, 1e-6 * high);
   EXPECT_NEAR(found.displacement.high, high, 1e-6 * high);
+}
+
+// White noise of two-sided density S0 per rad/s: displacement variance pi S0 / (2 zeta omega^3) (PUBLISHED E: Crandall
+// & Mark 1963). Independent samples of variance 1, linear between them, have S0 = step / (2 pi) at periods far above
+// the step. The mean of u^2 over a duration D has the relative standard error 1 / sqrt(zeta omega D): four of them, and
+// 0.2 % for the polygon's own roll-off, (omega step)^2 / 6 = 0.07 %, and the start.
+TEST(Kernel, VarianceUnderWhiteNoise) {
+  const std::vector<Oscillator> eight(8, Oscillator{1, 0.05});
+  const std::vector<int> members{0, 1, 2, 3, 4, 5, 6, 7};
+  OscillatorBundle bundle = bundles_at_rest(eight, members, step)[0];
+  constexpr int block = 1000, blocks = 4000;
+  std::vector<double> ground(block + 1, 0.0), u(block * OscillatorBundle::lanes);
+  std::mt19937_64 random(20261201);
+  std::normal_distribution<double> normal;
+  double sum = 0;
+  for (int b = 0; b < blocks; ++b) {
+    ground[0] = ground[block];
+    for (int i = 1; i <= block; ++i) ground[i] = normal(random);
+    baseline::march_displacements(ground.data(), block, bundle, u.data());
+    for (int i = 0; i < block; ++i) sum += u[i * OscillatorBundle::lanes] * u[i * OscillatorBundle::lanes];
+  }
+  const double zeta = 0.05, omega = 2 * M_PI, s0 = step / (2 * M_PI),
+               wanted = M_PI * s0 / (2 * zeta * std::pow(omega, 3));
+  const double error = 1 / std::sqrt(zeta * omega * block * blocks * step);
+  EXPECT_NEAR(sum / (block * blocks), wanted, (4 * error + 0.002) * wanted);
 }
 
 }  // namespace

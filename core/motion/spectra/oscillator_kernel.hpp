@@ -1,5 +1,5 @@
 // The march of many oscillators over one ground, periods in lanes: written once over the lane scalar, compiled once per
-// instruction set (oscillator_kernels.cpp). No fused products, so a period has the same bits whatever its lane, its
+// instruction set (spectra_kernels.cpp). No fused products, so a period has the same bits whatever its lane, its
 // company, the width of the pack and the processor.
 #pragma once
 
@@ -30,6 +30,12 @@ R load(const double* from) {
 template <class R>
 void store(double* to, const R& x) {
   std::memcpy(to, &x, sizeof(R));
+}
+
+// x in every lane. The compiler may leave out "- 0", but not the "0 +" of splat, which would turn -0 into 0.
+template <class R>
+R broadcast(double x) {
+  return x - R{};
 }
 
 // One pack of oscillators and its exact step.
@@ -98,12 +104,12 @@ void march_two(const double* ground, int steps, OscillatorBundle& first, int at,
                int second_at) noexcept {
   OscillatorPack<R> x(first, at), y(second, second_at);
   ExtremesPack<R> x_seen(first, at), y_seen(second, second_at);
-  R p0 = splat<R>(ground[0]);
+  R p0 = broadcast<R>(ground[0]);
   for (int i = 1; i <= steps; ++i) {
-    const R p1 = splat<R>(ground[i]);
+    const R p1 = broadcast<R>(ground[i]);
     x.advance(p0, p1);
-    x_seen.see(x.u, x.v);
     y.advance(p0, p1);
+    x_seen.see(x.u, x.v);
     y_seen.see(y.u, y.v);
     p0 = p1;
   }
@@ -131,9 +137,9 @@ void march_displacements(const double* ground, int steps, OscillatorBundle& bund
   constexpr int width = LaneTraits<R>::width;
   for (int at = 0; at < OscillatorBundle::lanes; at += width) {
     OscillatorPack<R> x(bundle, at);
-    R p0 = splat<R>(ground[0]);
+    R p0 = broadcast<R>(ground[0]);
     for (int i = 1; i <= steps; ++i) {
-      const R p1 = splat<R>(ground[i]);
+      const R p1 = broadcast<R>(ground[i]);
       x.advance(p0, p1);
       store(u + (i - 1) * OscillatorBundle::lanes + at, x.u);
       p0 = p1;

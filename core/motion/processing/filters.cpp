@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <cmath>
 
 #include "core/error.hpp"
 #include "core/motion/processing/butterworth.hpp"
@@ -50,18 +51,20 @@ std::string manner(int order, Pass pass) {
       pass == Pass::acausal ? "acausal (two passes, -6 dB at a corner)" : "causal (one pass, -3 dB at a corner)");
 }
 
-// Says so when a filter run both ways has less room than the rule of pad.hpp asks for.
+// Says so when a filter run both ways has less room than the rule of pad.hpp asks for. What an earlier filter left in
+// the zeros around a record is no shaking: under a thousandth of the peak counts as quiet.
 std::string room(const Accelerogram& record, int order, double corner, Pass pass) {
   if (pass == Pass::causal) return "";
   const auto& samples = record.samples;
-  const auto is_not_zero = [](double sample) { return sample != 0; };
-  const auto first = std::find_if(samples.begin(), samples.end(), is_not_zero);
-  const auto last = std::find_if(samples.rbegin(), samples.rend(), is_not_zero);
+  const double level = 1e-3 * std::abs(peak_of(record).value);
+  const auto is_shaking = [level](double sample) { return std::abs(sample) > level; };
+  const auto first = std::find_if(samples.begin(), samples.end(), is_shaking);
+  const auto last = std::find_if(samples.rbegin(), samples.rend(), is_shaking);
   const double before = record.step * static_cast<double>(first - samples.begin());
   const double after = record.step * static_cast<double>(last - samples.rbegin());
   const double wanted = filter_pad_length(order, corner);
   if (std::min(before, after) >= wanted * (1 - 1e-9)) return "";
-  return fmt::format("; zeros found: {:g} s before, {:g} s after, where 1.5 n / f_c asks for {:g} s: pad first", before,
+  return fmt::format("; quiet for {:g} s before and {:g} s after, where 1.5 n / f_c asks for {:g} s: pad first", before,
                      after, wanted);
 }
 

@@ -2,8 +2,8 @@
 //
 // acausal: a pass forward and one backward. No phase shift; each pass has the stated order and corners, so that the
 // two together have the gain |H|^2: 1/2 (-6 dB) at a corner and a slope of twice the order. The filter's answer spreads
-// to both sides, and must find zeros to spread into: pad the record first (pad.hpp). What was found is said.
-// causal: one pass, gain 1/sqrt(2) (-3 dB) at a corner, phase shifted.
+// to both sides, and must find quiet to spread into: pad the record first (pad.hpp). It is said where there is too
+// little. causal: one pass, gain 1/sqrt(2) (-3 dB) at a corner, phase shifted.
 #pragma once
 
 #include "core/motion/processing/step.hpp"

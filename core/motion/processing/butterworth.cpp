@@ -84,7 +84,7 @@ std::vector<FilterSection> butterworth_bandpass(int order, double low, double hi
   return sections;
 }
 
-void filter(std::span<const FilterSection> sections, std::span<double> samples) noexcept {
+void filter_forward(std::span<const FilterSection> sections, std::span<double> samples) noexcept {
   for (const FilterSection& q : sections) {
     double first = 0, second = 0;  // what earlier samples still contribute
     for (double& sample : samples) {
@@ -97,9 +97,9 @@ void filter(std::span<const FilterSection> sections, std::span<double> samples) 
 }
 
 void filter_both_ways(std::span<const FilterSection> sections, std::span<double> samples) noexcept {
-  filter(sections, samples);
+  filter_forward(sections, samples);
   std::reverse(samples.begin(), samples.end());
-  filter(sections, samples);
+  filter_forward(sections, samples);
   std::reverse(samples.begin(), samples.end());
 }
 

@@ -24,7 +24,7 @@ std::vector<FilterSection> butterworth_highpass(int order, double corner, double
 std::vector<FilterSection> butterworth_bandpass(int order, double low, double high, double step);
 
 // One pass through all sections, each at rest before the first sample; in place.
-void filter(std::span<const FilterSection> sections, std::span<double> samples) noexcept;
+void filter_forward(std::span<const FilterSection> sections, std::span<double> samples) noexcept;
 
 // A pass forward and a pass backward, each at rest where it starts: no shift of phase, |H|^2 in place of |H|.
 void filter_both_ways(std::span<const FilterSection> sections, std::span<double> samples) noexcept;

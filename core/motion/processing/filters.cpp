@@ -42,7 +42,7 @@ void run(const std::vector<FilterSection>& sections, Pass pass, std::vector<doub
   if (pass == Pass::acausal)
     filter_both_ways(sections, samples);
   else
-    filter(sections, samples);
+    filter_forward(sections, samples);
 }
 
 std::string manner(int order, Pass pass) {

@@ -1,6 +1,7 @@
 #include "core/parameter.hpp"
 
 #include <fmt/format.h>
+#include <fmt/ranges.h>
 
 #include <cmath>
 
@@ -23,6 +24,7 @@ bool in_range(const Parameter& p, double value) {
 }  // namespace
 
 std::string allowed_range(const Parameter& p) {
+  if (!p.choices.empty()) return fmt::format("one of {}", fmt::join(p.choices, ", "));
   std::string text;
   if (std::isfinite(p.least))
     text = fmt::format("{} {}", p.least_allowed ? "at least" : "greater than", with_unit(p.least, p.dimension));
@@ -34,6 +36,9 @@ std::string allowed_range(const Parameter& p) {
 
 void require_allowed(const Parameter& p, double value, const std::string& where) {
   if (!std::isfinite(value)) throw input_error(where, fmt::format("found {}", value), "a finite number is needed");
+  if (!p.choices.empty() && (value < 0 || value >= static_cast<double>(p.choices.size()) || value != std::round(value)))
+    throw input_error(where, fmt::format("found choice {:g}", value),
+                      fmt::format("{} must be {}", p.meaning, allowed_range(p)));
   if (!in_range(p, value))
     throw input_error(where, fmt::format("found {}", with_unit(value, p.dimension)),
                       fmt::format("{} must be {}", p.meaning, allowed_range(p)));

@@ -23,7 +23,7 @@ struct DimensionFacts {
   const char* examples;  // for messages
 };
 
-constexpr std::array<DimensionFacts, 11> facts{{
+constexpr std::array<DimensionFacts, 12> facts{{
     {Dimension::none, "1", "1", "a plain number", "1, %"},
     {Dimension::length, "m", "m", "length", "m, cm, mm, in, ft"},
     {Dimension::time, "s", "s", "time", "s, ms"},
@@ -35,6 +35,7 @@ constexpr std::array<DimensionFacts, 11> facts{{
     {Dimension::acceleration, "m/s2", "m/s2", "acceleration", "g, m/s2, cm/s2, mm/s2, gal, in/s2"},
     {Dimension::moment, "N m", "N m", "moment (force length)", "N m, kN m, kip ft"},
     {Dimension::per_time, "1/s", "1/s", "rate (1/time)", "1/s"},
+    {Dimension::frequency, "Hz", "Hz", "frequency", "Hz, kHz"},
 }};
 
 const DimensionFacts& facts_of(Dimension dimension) { return facts[static_cast<std::size_t>(dimension)]; }
@@ -80,6 +81,13 @@ std::optional<double> scale_of(const cv_converter* converter) {
   return scales && std::isfinite(one) && one > 0 ? std::optional(one) : std::nullopt;
 }
 
+// UDUNITS-2 counts an angle as a plain number, so that rad/s would pass for Hz, wrong by 2 pi.
+bool holds_an_angle(const ut_unit* unit) {
+  std::array<char, 128> text{};
+  const int length = ut_format(unit, text.data(), text.size(), UT_ASCII | UT_DEFINITION);
+  return length < 0 || std::string_view(text.data()).find("rad") != std::string_view::npos;
+}
+
 enum class Answer { scales, other_dimension, unknown };
 
 struct Reading {
@@ -96,7 +104,8 @@ Reading read_plainly(const std::string& text, Dimension dimension) {
   if (unit == nullptr) return {};
   ut_unit* si = ut_parse(system, facts_of(dimension).si_parsed, UT_UTF8);
   Reading reading{Answer::other_dimension};
-  if (ut_are_convertible(unit, si)) {
+  const bool angular = dimension == Dimension::frequency && holds_an_angle(unit);
+  if (!angular && ut_are_convertible(unit, si)) {
     cv_converter* converter = ut_get_converter(unit, si);
     if (const auto factor = scale_of(converter)) reading = {Answer::scales, *factor};
     cv_free(converter);

@@ -40,7 +40,7 @@ class ValueReader {
   std::string text() const;  // not empty
   bool flag() const;
   // SI. A bare number is in the study's unit (seconds for a time); text carries its own unit. Within the parameter's
-  // range.
+  // range. Of a parameter with choices: the place of the word.
   double quantity(const Parameter& parameter) const;
   // One of `allowed`; the nearest is named when it is none of them.
   std::string choice(std::string_view thing, std::span<const std::string_view> allowed) const;

@@ -40,6 +40,8 @@ std::string StudyUnits::name(Dimension dimension) const {
       return fmt::format("{} {}", force, length);
     case Dimension::per_time:
       return "1/s";
+    case Dimension::frequency:
+      return "Hz";
   }
   return "1";
 }
@@ -51,6 +53,7 @@ double StudyUnits::factor(Dimension dimension) const {
     case Dimension::none:
     case Dimension::time:
     case Dimension::per_time:
+    case Dimension::frequency:
       return 1;
     case Dimension::mass:
       return mass.empty() ? force_factor() / length_factor() : si_factor(mass, Dimension::mass, "units.mass");

@@ -84,6 +84,11 @@ bool ValueReader::flag() const {
 }
 
 double ValueReader::quantity(const Parameter& parameter) const {
+  if (!parameter.choices.empty()) {
+    const std::string chosen = choice(parameter.key, parameter.choices);
+    const auto place = std::find(parameter.choices.begin(), parameter.choices.end(), chosen);
+    return static_cast<double>(place - parameter.choices.begin());
+  }
   double value = 0;
   switch (node_->kind) {
     case NodeKind::whole:

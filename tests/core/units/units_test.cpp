@@ -81,6 +81,8 @@ const std::vector<Printed> printed{
     {"lbf ft", Dimension::moment, 1.355818, seven_digits},          // pound-force foot, 1.355818 E+00
     {"kip in", Dimension::moment, 1000 * 0.1129848, seven_digits},  // pound-force inch, 1.129848 E-01
     {"1/s", Dimension::per_time, 1, exact},
+    {"Hz", Dimension::frequency, 1, exact},
+    {"kHz", Dimension::frequency, 1000, exact},
     {"%", Dimension::none, 0.01, exact},
     {"1", Dimension::none, 1, exact},
     {" kN ", Dimension::force, 1e3, exact},
@@ -106,6 +108,9 @@ TEST(Units, SaysWhatWasFoundAndWhatIsAllowed) {
       {"g", Dimension::force, "not a unit of force"},
       {"mm/kN", Dimension::stiffness, "not a unit of stiffness"},  // the reciprocal is not the thing
       {"s", Dimension::per_time, "not a unit of rate"},
+      {"s", Dimension::frequency, "not a unit of frequency"},
+      {"rad/s", Dimension::frequency, "not a unit of frequency"},  // wrong by 2 pi
+      {"rpm", Dimension::frequency, "not a unit of frequency"},
       {"degC", Dimension::length, "not a unit of length"},
       {"furlongish", Dimension::length, "unknown unit"},
       {"KN", Dimension::force, "unknown unit"},
@@ -131,7 +136,7 @@ TEST(Units, SaysWhatWasFoundAndWhatIsAllowed) {
 }
 
 TEST(Units, EveryDimensionsSiUnitHasFactorOne) {
-  for (int i = 0; i <= static_cast<int>(Dimension::per_time); ++i) {
+  for (int i = 0; i <= static_cast<int>(Dimension::frequency); ++i) {
     const auto dimension = static_cast<Dimension>(i);
     EXPECT_EQ(si_factor(si_unit(dimension), dimension, "here"), 1.0) << si_unit(dimension);
     EXPECT_FALSE(dimension_name(dimension).empty());

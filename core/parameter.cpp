@@ -1,6 +1,7 @@
 #include "core/parameter.hpp"
 
 #include <fmt/format.h>
+#include <fmt/ranges.h>
 
 #include <cmath>
 
@@ -20,9 +21,14 @@ bool in_range(const Parameter& p, double value) {
   return above && below;
 }
 
+bool is_place(double value, std::size_t count) {
+  return value == std::floor(value) && value >= 0 && value < static_cast<double>(count);
+}
+
 }  // namespace
 
 std::string allowed_range(const Parameter& p) {
+  if (!p.choices.empty()) return fmt::format("one of {}", fmt::join(p.choices, ", "));
   std::string text;
   if (std::isfinite(p.least))
     text = fmt::format("{} {}", p.least_allowed ? "at least" : "greater than", with_unit(p.least, p.dimension));
@@ -34,6 +40,9 @@ std::string allowed_range(const Parameter& p) {
 
 void require_allowed(const Parameter& p, double value, const std::string& where) {
   if (!std::isfinite(value)) throw input_error(where, fmt::format("found {}", value), "a finite number is needed");
+  if (!p.choices.empty() && !is_place(value, p.choices.size()))
+    throw input_error(where, fmt::format("found {:g}", value),
+                      fmt::format("{} must be {}", p.meaning, allowed_range(p)));
   if (!in_range(p, value))
     throw input_error(where, fmt::format("found {}", with_unit(value, p.dimension)),
                       fmt::format("{} must be {}", p.meaning, allowed_range(p)));

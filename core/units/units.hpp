@@ -10,7 +10,24 @@ namespace pilotis {
 inline constexpr double standard_gravity = 9.80665;  // m/s2, exact by definition (3rd CGPM, 1901)
 
 // The dimensions a study or a record can state.
-enum class Dimension { none, length, time, mass, force, stiffness, dashpot, velocity, acceleration, moment, per_time };
+enum class Dimension {
+  none,
+  length,
+  time,
+  mass,
+  force,
+  stiffness,
+  dashpot,
+  velocity,
+  acceleration,
+  moment,
+  per_time,
+  frequency,
+  stress,
+  density,
+  slowness,
+  spectral_density,
+};
 
 // SI unit of a dimension as text, e.g. "N/m"; "1" for none.
 std::string_view si_unit(Dimension dimension);

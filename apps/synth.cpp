@@ -150,10 +150,12 @@ void list_kinds() {
   }
 }
 
-// For the command line's own checks: empty when it is one.
+// For the command line's own checks: empty when it is one. A leading zero would make it octal.
 std::string whole_number(const std::string& text) {
   const bool digits = !text.empty() && text.find_first_not_of("0123456789") == std::string::npos;
-  return digits ? "" : fmt::format("found \"{}\"; a whole number from 0 is needed", text);
+  return digits && (text.size() == 1 || text.front() != '0')
+             ? ""
+             : fmt::format("found \"{}\"; a whole number from 0 is needed", text);
 }
 
 // An example of the kind that works as it stands, with what is required besides.

@@ -1,36 +1,30 @@
-// pilotis synth: makes a ground motion and writes it as CSV.
+// pilotis synth: makes ground motions and writes them as CSV.
 #include <fmt/format.h>
 
 #include <charconv>
-#include <cmath>
 #include <cstdio>
 #include <filesystem>
 #include <map>
 #include <memory>
 
 #include "apps/commands.hpp"
+#include "apps/synth_curve.hpp"
+#include "apps/synth_file.hpp"
+#include "apps/text_table.hpp"
 #include "core/error.hpp"
 #include "core/motion/synthetic/registry.hpp"
 #include "core/units/units.hpp"
-#include "io/whole_file.hpp"
 
 namespace pilotis {
 
 namespace {
 
-constexpr int sample_decimals = 6;  // of m/s2: made motions are rounded to as many
-
 struct SynthOptions {
   std::string step = "0.01 s", duration = "20 s", output;
   std::uint64_t seed = 1;
-  std::map<std::string, std::string> values;  // by key of the parameter, as typed
+  int count = 0;                              // 0: one motion into a file; else a suite into a folder
+  std::map<std::string, std::string> values;  // by key of the parameter or table, as typed
 };
-
-std::string option_name(std::string_view key) {
-  std::string name = "--";
-  for (char c : key) name += c == '_' ? '-' : c;
-  return name;
-}
 
 // "0.35 g", "0.35g" or, in SI, "3.4".
 double quantity(const std::string& text, Dimension dimension, const std::string& where) {
@@ -44,120 +38,175 @@ double quantity(const std::string& text, Dimension dimension, const std::string&
   return unit.empty() ? number : number * si_factor(unit, dimension, where);
 }
 
-std::vector<double> values_of(const Method& method, const SynthOptions& options) {
-  std::vector<double> values;
-  for (const Parameter& parameter : method.parameters) {
-    const std::string& typed = options.values.at(std::string(parameter.key));
-    const std::string where = "synth " + option_name(parameter.key);
-    if (typed.empty() && !parameter.otherwise)
-      throw input_error(where, "it is missing", fmt::format("{} is needed", parameter.meaning));
-    values.push_back(typed.empty() ? *parameter.otherwise : quantity(typed, parameter.dimension, where));
+// The place of the word among the parameter's choices.
+double choice(const std::string& text, const Parameter& parameter, const std::string& where) {
+  for (std::size_t i = 0; i < parameter.choices.size(); ++i)
+    if (parameter.choices[i] == text) return static_cast<double>(i);
+  throw input_error(where, fmt::format("found \"{}\"", text), allowed_range(parameter) + " is needed");
+}
+
+double value_of(const Parameter& parameter, const std::string& typed) {
+  const std::string where = "synth " + option_name(parameter.key);
+  if (typed.empty() && !parameter.otherwise)
+    throw input_error(where, "it is missing", fmt::format("{} is needed", parameter.meaning));
+  if (typed.empty()) return *parameter.otherwise;
+  return parameter.choices.empty() ? quantity(typed, parameter.dimension, where) : choice(typed, parameter, where);
+}
+
+SynthRecipe recipe_of(const SyntheticKind& kind, const SynthOptions& options) {
+  SynthRecipe recipe{&kind, {}, {}, {}, {}};
+  recipe.grid = {options.seed, quantity(options.step, Dimension::time, "synth --step"),
+                 quantity(options.duration, Dimension::time, "synth --duration")};
+  for (const Parameter& parameter : kind.method.parameters)
+    recipe.values.push_back(value_of(parameter, options.values.at(std::string(parameter.key))));
+  for (const CurveParameter& curve : kind.curves) {
+    recipe.curve_files.push_back(options.values.at(std::string(curve.key)));
+    if (recipe.curve_files.back().empty() && curve.required)
+      throw input_error(
+          "synth " + option_name(curve.key), "it is missing",
+          fmt::format("{} is needed: a file with the columns \"{}\"", curve.meaning, curve_heading(curve)));
+    recipe.curves.push_back(recipe.curve_files.back().empty() ? Curve{} : read_curve(recipe.curve_files.back(), curve));
   }
-  return values;
+  return recipe;
 }
 
-// The command that made the motion, every value written out.
-std::string command_line(const Method& method, const std::vector<double>& values, const SyntheticGrid& grid) {
-  std::string text = fmt::format("pilotis synth {} --seed {} --step \"{} s\" --duration \"{} s\"", method.name,
-                                 grid.seed, grid.step, grid.duration);
-  for (std::size_t i = 0; i < values.size(); ++i) {
-    const Parameter& parameter = method.parameters[i];
-    const bool plain = parameter.dimension == Dimension::none;
-    text += plain ? fmt::format(" {} {}", option_name(parameter.key), values[i])
-                  : fmt::format(" {} \"{} {}\"", option_name(parameter.key), values[i], si_unit(parameter.dimension));
-  }
-  return text;
+MadeMotion motion_of(const SynthRecipe& recipe) {
+  const std::string_view name = recipe.kind->method.name;
+  return make_synthetic(name, recipe.values, recipe.curves, recipe.grid, fmt::format("synth {}", name));
 }
 
-// As many as the step needs to be printed exactly, where it can be.
-int time_decimals(double step) {
-  constexpr int most = 9;
-  for (int decimals = 0; decimals < most; ++decimals)
-    if (std::stod(fmt::format("{:.{}f}", step, decimals)) == step) return decimals;
-  return most;
-}
-
-std::string csv_of(const Accelerogram& record, const std::string& command, std::string_view summary) {
-  const PeakSample peak = peak_of(record);
-  std::string text = fmt::format("# made ground motion, {}\n# pilotis {}\n# {}\n", summary, PILOTIS_VERSION, command);
-  text += fmt::format("# {} samples, peak {:.{}f} m/s^2 at {} s\n", record.samples.size(), peak.value, sample_decimals,
-                      peak.time);
-  text += fmt::format("# step: {} s\ntime (s), acceleration (m/s^2)\n", record.step);
-  const int decimals = time_decimals(record.step);
-  for (std::size_t i = 0; i < record.samples.size(); ++i)
-    text += fmt::format("{:.{}f}, {:.{}f}\n", record.first_sample_at + record.step * static_cast<double>(i), decimals,
-                        record.samples[i], sample_decimals);
-  return text;
-}
-
-void write_csv(const std::filesystem::path& file, const std::string& csv) {
-  const std::filesystem::path folder = file.has_parent_path() ? file.parent_path() : ".";
-  std::error_code ignored;
-  if (!file.has_filename() || std::filesystem::is_directory(file, ignored))
-    throw input_error("synth --output", fmt::format("found \"{}\", a folder", file.string()),
-                      "the name of a file to write is needed");
-  if (!std::filesystem::is_directory(folder, ignored))
-    throw input_error("synth --output", fmt::format("found \"{}\"", file.string()),
-                      fmt::format("there is no folder \"{}\": make it first", folder.string()));
-  WholeFile whole(file);
-  whole.write(csv);
-  whole.commit();
-}
-
-void synthesize(const Method& method, const SynthOptions& options) {
-  const SyntheticGrid grid{options.seed, quantity(options.step, Dimension::time, "synth --step"),
-                           quantity(options.duration, Dimension::time, "synth --duration")};
-  const std::vector<double> values = values_of(method, options);
-  const Accelerogram record = make_synthetic(method.name, values, grid, fmt::format("synth {}", method.name));
-  const std::string csv = csv_of(record, command_line(method, values, grid), method.summary);
-  if (options.output == "-") {
+void write_one(const SynthRecipe& recipe, const std::string& output) {
+  const MadeMotion motion = motion_of(recipe);
+  const std::string csv = csv_of(motion, recipe);
+  if (output == "-") {
     fmt::print("{}", csv);
     return;
   }
-  write_csv(options.output, csv);
-  fmt::print(stderr, "{}: {} samples every {} s, peak {:.{}f} m/s2\n", options.output, record.samples.size(),
-             record.step, peak_of(record).value, sample_decimals);
+  write_csv(output, csv);
+  fmt::print(stderr, "{}: {}\n", output, short_facts(motion.record));
+}
+
+// Motion i of the suite has the seed `seed + i`. Names sort as seeds do.
+void write_suite(SynthRecipe recipe, int count, const std::filesystem::path& folder) {
+  const std::uint64_t first = recipe.grid.seed, last = first + static_cast<std::uint64_t>(count) - 1;
+  if (last < first)
+    throw input_error("synth --seed", fmt::format("found {} for {} motions", first, count), "a lower one is needed");
+  const std::size_t digits = fmt::format("{}", last).size();
+  motion_of(recipe);  // what is wrong shows before anything is made
+  std::error_code failed;
+  std::filesystem::create_directory(folder, failed);
+  if (!std::filesystem::is_directory(folder))
+    throw input_error("synth --output", fmt::format("found \"{}\"", folder.string()),
+                      "the name of a folder, or of one that can be made, is needed");
+  for (recipe.grid.seed = first; recipe.grid.seed - first < static_cast<std::uint64_t>(count); ++recipe.grid.seed) {
+    const std::filesystem::path file =
+        folder / fmt::format("{}-{:0{}}.csv", recipe.kind->method.name, recipe.grid.seed, digits);
+    write_csv(file, csv_of(motion_of(recipe), recipe));
+  }
+  fmt::print(stderr, "{}: {} motions, seeds {} to {}\n", folder.string(), count, first, last);
+}
+
+void synthesize(const SyntheticKind& kind, const SynthOptions& options) {
+  const SynthRecipe recipe = recipe_of(kind, options);
+  if (options.count == 0) return write_one(recipe, options.output);
+  write_suite(recipe, options.count, options.output);
+}
+
+std::string default_text(const Parameter& parameter) {
+  if (!parameter.otherwise) return "required";
+  if (!parameter.choices.empty()) return std::string(parameter.choices[static_cast<std::size_t>(*parameter.otherwise)]);
+  if (parameter.dimension == Dimension::none) return fmt::format("{:g}", *parameter.otherwise);
+  return fmt::format("{:g} {}", *parameter.otherwise, si_unit(parameter.dimension));
 }
 
 std::string help_of(const Parameter& parameter) {
   std::string text(parameter.meaning);
-  const std::string unit =
-      parameter.dimension == Dimension::none ? "" : fmt::format(" {}", si_unit(parameter.dimension));
-  if (!unit.empty()) text += fmt::format(", e.g. \"1.5{}\"; a bare number is in{}", unit, unit);
-  text += parameter.otherwise ? fmt::format(" [{}{}]", *parameter.otherwise, unit) : " (required)";
+  if (parameter.dimension != Dimension::none)
+    text += fmt::format(", e.g. \"1.5 {0}\"; a bare number is in {0}", si_unit(parameter.dimension));
+  text += parameter.otherwise ? fmt::format(" [{}]", default_text(parameter)) : " (required)";
   const std::string range = allowed_range(parameter);
   return range.empty() ? text : fmt::format("{}; {}", text, range);
 }
 
-// For the command line's own checks: empty when it is one.
-std::string whole_number(const std::string& text) {
-  const bool digits = !text.empty() && text.find_first_not_of("0123456789") == std::string::npos;
-  return digits ? "" : fmt::format("found \"{}\"; a whole number from 0 is needed", text);
+std::string help_of(const CurveParameter& curve) {
+  return fmt::format("{}: a file with the columns \"{}\" (other units may stand there){}", curve.meaning,
+                     curve_heading(curve), curve.required ? " (required)" : "");
 }
 
-void add_kind(CLI::App& synth, const Method& method) {
+// Every kind with its parameters.
+void list_kinds() {
+  for (const SyntheticKind& kind : synthetic_catalogue()) {
+    fmt::print("{}: {}\n", kind.method.name, kind.method.summary);
+    using enum TextTable::Align;
+    TextTable table({{"option", left}, {"default", left}, {"allowed", left}, {"meaning", left}});
+    if (kind.random) table.add_row({"--seed", "1", "a whole number from 0", "the same seed gives the same motion"});
+    for (const Parameter& parameter : kind.method.parameters)
+      table.add_row({option_name(parameter.key), default_text(parameter), allowed_range(parameter),
+                     std::string(parameter.meaning)});
+    for (const CurveParameter& curve : kind.curves)
+      table.add_row({option_name(curve.key), curve.required ? "required" : "none",
+                     fmt::format("a file: {}", curve_heading(curve)), std::string(curve.meaning)});
+    fmt::print("{}\n", table.text());
+  }
+}
+
+// For the command line's own checks: empty when it is one. A leading zero would make it octal.
+std::string whole_number(const std::string& text) {
+  const bool digits = !text.empty() && text.find_first_not_of("0123456789") == std::string::npos;
+  return digits && (text.size() == 1 || text.front() != '0')
+             ? ""
+             : fmt::format("found \"{}\"; a whole number from 0 is needed", text);
+}
+
+// An example of the kind that works as it stands, with what is required besides.
+std::string example_of(const SyntheticKind& kind) {
+  std::string text = fmt::format("pilotis synth {}", kind.method.name);
+  if (kind.random) text += " --seed 7";
+  return text + std::string(kind.example) + " -o motion.csv";
+}
+
+void add_kind(CLI::App& synth, const SyntheticKind& kind) {
   auto options = std::make_shared<SynthOptions>();
-  CLI::App* kind = synth.add_subcommand(std::string(method.name), std::string(method.summary));
-  kind->add_option("--seed", options->seed, "the same seed gives the same motion on every machine [1]")
-      ->check(whole_number);
-  kind->add_option("--step", options->step, "time step, e.g. \"0.005 s\"; a bare number is in s [0.01 s]");
-  kind->add_option("--duration", options->duration, "a whole number of steps; a bare number is in s [20 s]");
-  kind->add_option("-o,--output", options->output, "CSV file to write, - for standard output")->required();
-  for (const Parameter& parameter : method.parameters)
-    kind->add_option(option_name(parameter.key), options->values[std::string(parameter.key)], help_of(parameter));
-  kind->footer(fmt::format(
-      "Example:\n  pilotis synth {} --seed 7 --step 0.01 --duration 20 --pga \"0.35 g\" -o motion.csv", method.name));
-  kind->callback([options, method] { synthesize(method, *options); });
+  CLI::App* command = synth.add_subcommand(std::string(kind.method.name), std::string(kind.method.summary));
+  if (kind.random) {
+    command->add_option("--seed", options->seed, "the same seed gives the same motion on every machine [1]")
+        ->check(whole_number);
+    command->add_option("--count", options->count, "makes a suite of 1 to 10000 motions, of seeds seed, seed + 1, ...")
+        ->check(CLI::Range(1, 10000));
+  }
+  command->add_option("--step", options->step, "time step, e.g. \"0.005 s\"; a bare number is in s [0.01 s]");
+  command->add_option("--duration", options->duration, "a whole number of steps; a bare number is in s [20 s]");
+  command
+      ->add_option("-o,--output", options->output,
+                   kind.random ? "CSV file to write, - for standard output; with --count, the folder to write into"
+                               : "CSV file to write, - for standard output")
+      ->required();
+  for (const Parameter& parameter : kind.method.parameters)
+    command->add_option(option_name(parameter.key), options->values[std::string(parameter.key)], help_of(parameter));
+  for (const CurveParameter& curve : kind.curves)
+    command->add_option(option_name(curve.key), options->values[std::string(curve.key)], help_of(curve));
+  command->footer("Example:\n  " + example_of(kind));
+  command->callback([options, &kind] { synthesize(kind, *options); });
 }
 
 }  // namespace
 
 void add_synth(CLI::App& app, int&) {
-  CLI::App* synth = app.add_subcommand("synth", "make a ground motion and write it as CSV");
-  synth->require_subcommand(1);
-  synth->footer(
-      "Example:\n  pilotis synth kanai_tajimi --seed 7 --step 0.01 --duration 20 --pga \"0.35 g\" -o motion.csv");
-  for (const Method& method : synthetic_catalogue()) add_kind(*synth, method);
+  CLI::App* synth = app.add_subcommand("synth", "make ground motions and write them as CSV");
+  auto list = std::make_shared<bool>(false);
+  synth->add_flag("--list", *list, "shows every kind with its parameters, their units and ranges");
+  synth->require_subcommand(0, 1);
+  std::string examples = "Examples:\n  pilotis synth --list\n";
+  for (const SyntheticKind& kind : synthetic_catalogue()) {
+    add_kind(*synth, kind);
+    examples += "  " + example_of(kind) + "\n";
+  }
+  synth->footer(examples + "  pilotis synth kanai_tajimi --pga \"0.35 g\" --count 11 -o motions");
+  synth->callback([synth, list] {
+    if (*list) return list_kinds();
+    if (synth->get_subcommands().empty())
+      throw input_error("synth", "the kind of motion is missing", "give one of those that pilotis synth --list shows");
+  });
 }
 
 }  // namespace pilotis

@@ -21,6 +21,10 @@ bool in_range(const Parameter& p, double value) {
   return above && below;
 }
 
+bool is_place(double value, std::size_t count) {
+  return value == std::floor(value) && value >= 0 && value < static_cast<double>(count);
+}
+
 }  // namespace
 
 std::string allowed_range(const Parameter& p) {
@@ -36,8 +40,8 @@ std::string allowed_range(const Parameter& p) {
 
 void require_allowed(const Parameter& p, double value, const std::string& where) {
   if (!std::isfinite(value)) throw input_error(where, fmt::format("found {}", value), "a finite number is needed");
-  if (!p.choices.empty() && (value < 0 || value >= static_cast<double>(p.choices.size()) || value != std::round(value)))
-    throw input_error(where, fmt::format("found choice {:g}", value),
+  if (!p.choices.empty() && !is_place(value, p.choices.size()))
+    throw input_error(where, fmt::format("found {:g}", value),
                       fmt::format("{} must be {}", p.meaning, allowed_range(p)));
   if (!in_range(p, value))
     throw input_error(where, fmt::format("found {}", with_unit(value, p.dimension)),

@@ -22,7 +22,7 @@ struct Parameter {
   bool least_allowed = true;                                // false: greater than `least`
   bool most_allowed = true;                                 // false: less than `most`
   bool whole = false;                                       // true: only whole numbers
-  // Words to choose from; the value is then the place of the word in this list, counted from 0, and has no dimension.
+  // Not empty: the value is one of these words; as a number, its place in the list, from 0.
   std::span<const std::string_view> choices = {};
 };
 
@@ -33,11 +33,11 @@ struct Method {
   std::span<const Parameter> parameters;
 };
 
-// "at least 0 and less than 1" or "one of causal, acausal", for messages; empty when any number is allowed.
+// "at least 0 and less than 1" or "one of a, b", for messages; empty when any number is allowed.
 std::string allowed_range(const Parameter& parameter);
 
-// Throws Error (input) at `where` when `value` (SI) is not finite, out of range, not whole where it must be, or
-// not the place of a choice.
+// Throws Error (input) at `where` when `value` (SI) is not finite, out of range, not whole where it must be, or not the
+// place of a choice.
 void require_allowed(const Parameter& parameter, double value, const std::string& where);
 
 }  // namespace pilotis

@@ -23,7 +23,7 @@ struct DimensionFacts {
   const char* examples;  // for messages
 };
 
-constexpr std::array<DimensionFacts, 12> facts{{
+constexpr std::array<DimensionFacts, 16> facts{{
     {Dimension::none, "1", "1", "a plain number", "1, %"},
     {Dimension::length, "m", "m", "length", "m, cm, mm, in, ft"},
     {Dimension::time, "s", "s", "time", "s, ms"},
@@ -35,7 +35,11 @@ constexpr std::array<DimensionFacts, 12> facts{{
     {Dimension::acceleration, "m/s2", "m/s2", "acceleration", "g, m/s2, cm/s2, mm/s2, gal, in/s2"},
     {Dimension::moment, "N m", "N m", "moment (force length)", "N m, kN m, kip ft"},
     {Dimension::per_time, "1/s", "1/s", "rate (1/time)", "1/s"},
-    {Dimension::frequency, "Hz", "Hz", "frequency", "Hz, kHz"},
+    {Dimension::frequency, "Hz", "Hz", "frequency (cycles/time)", "Hz, mHz"},
+    {Dimension::stress, "Pa", "Pa", "stress (force/area)", "Pa, kPa, MPa, bar"},
+    {Dimension::density, "kg/m3", "kg/m3", "density (mass/volume)", "kg/m3, t/m3, g/cm3"},
+    {Dimension::slowness, "s/m", "s/m", "time/distance", "s/km, s/m"},
+    {Dimension::spectral_density, "m2/s3", "m2/s3", "spectral density of an acceleration, per rad/s", "m2/s3, cm2/s3"},
 }};
 
 const DimensionFacts& facts_of(Dimension dimension) { return facts[static_cast<std::size_t>(dimension)]; }

@@ -23,7 +23,11 @@ enum class Dimension {
   acceleration,
   moment,
   per_time,
-  frequency
+  frequency,
+  stress,
+  density,
+  slowness,
+  spectral_density,
 };
 
 // SI unit of a dimension as text, e.g. "N/m"; "1" for none.

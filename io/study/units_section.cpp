@@ -41,7 +41,11 @@ std::string StudyUnits::name(Dimension dimension) const {
     case Dimension::per_time:
       return "1/s";
     case Dimension::frequency:
-      return "Hz";
+    case Dimension::stress:
+    case Dimension::density:
+    case Dimension::slowness:
+    case Dimension::spectral_density:
+      return std::string(si_unit(dimension));  // in SI whatever the study's units
   }
   return "1";
 }
@@ -54,6 +58,10 @@ double StudyUnits::factor(Dimension dimension) const {
     case Dimension::time:
     case Dimension::per_time:
     case Dimension::frequency:
+    case Dimension::stress:
+    case Dimension::density:
+    case Dimension::slowness:
+    case Dimension::spectral_density:
       return 1;
     case Dimension::mass:
       return mass.empty() ? force_factor() / length_factor() : si_factor(mass, Dimension::mass, "units.mass");

@@ -1,6 +1,9 @@
 #include "core/motion/synthetic/baseline.hpp"
 
+#include <fmt/format.h>
+
 #include <Eigen/Dense>
+#include <algorithm>
 #include <array>
 #include <cmath>
 
@@ -67,12 +70,20 @@ std::vector<double> ground_displacement(const std::vector<double>& acceleration,
   return displacement;
 }
 
-void correct_baseline(std::vector<double>& acceleration, const std::vector<double>& envelope) {
+std::string correct_baseline(std::vector<double>& acceleration, const std::vector<double>& envelope) {
   std::array<std::vector<double>, terms> shapes;
   for (int power = 0; power < terms; ++power) shapes[power] = term(envelope, power);
   const Vector numbers = solved(acceleration, shapes);
-  for (int power = 0; power < terms; ++power)
-    for (std::size_t i = 0; i < acceleration.size(); ++i) acceleration[i] -= numbers(power) * shapes[power][i];
+  double largest = 0, peak = 0;
+  for (std::size_t i = 0; i < acceleration.size(); ++i) {
+    double taken = 0;
+    for (int power = 0; power < terms; ++power) taken += numbers(power) * shapes[power][i];
+    largest = std::max(largest, std::abs(taken));
+    acceleration[i] -= taken;
+    peak = std::max(peak, std::abs(acceleration[i]));
+  }
+  return fmt::format("brought to rest: cubic times envelope taken out, at most {:.2g} % of the peak acceleration",
+                     100 * largest / peak);
 }
 
 }  // namespace pilotis

@@ -7,12 +7,14 @@
 // linear between samples, as everywhere here.
 #pragma once
 
+#include <string>
 #include <vector>
 
 namespace pilotis {
 
-// Changes `acceleration` (m/s2, evenly spaced from t = 0) in place. `envelope`: I at the same times.
-void correct_baseline(std::vector<double>& acceleration, const std::vector<double>& envelope);
+// Changes `acceleration` (m/s2, evenly spaced from t = 0) in place. `envelope`: I at the same times. Returns one line
+// that says what was done.
+std::string correct_baseline(std::vector<double>& acceleration, const std::vector<double>& envelope);
 
 // Ground velocity (m/s) at each sample and, as a last value, one step later when the acceleration has fallen to zero;
 // ground displacement (m) at the same times. At rest before the first sample.

@@ -14,10 +14,9 @@ class NormalNumbers {
  public:
   explicit NormalNumbers(std::uint64_t seed) : generator_(seed) {}
   double next();
+  double uniform();  // in (0, 1]
 
  private:
-  double uniform();
-
   std::mt19937_64 generator_;
   double spare_ = 0;
   bool has_spare_ = false;

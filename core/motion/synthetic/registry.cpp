@@ -7,29 +7,38 @@
 #include <vector>
 
 #include "core/error.hpp"
+#include "core/motion/synthetic/clough_penzien.hpp"
+#include "core/motion/synthetic/curve.hpp"
+#include "core/motion/synthetic/harmonic.hpp"
 #include "core/motion/synthetic/kanai_tajimi.hpp"
+#include "core/motion/synthetic/near_fault_pulse.hpp"
+#include "core/motion/synthetic/pulse.hpp"
+#include "core/motion/synthetic/ricker.hpp"
+#include "core/motion/synthetic/spectrum_compatible.hpp"
+#include "core/motion/synthetic/stochastic.hpp"
+#include "core/motion/synthetic/sweep.hpp"
+#include "core/motion/synthetic/white_noise.hpp"
 
 namespace pilotis {
 
 namespace {
 
 struct Entry {
-  Method method;
-  Accelerogram (*make)(std::span<const double>, const SyntheticGrid&, const std::string&);
+  SyntheticKind kind;
+  MadeMotion (*make)(const SyntheticInput&);
 };
 
-template <class M>
-Accelerogram made_by(std::span<const double> values, const SyntheticGrid& grid, const std::string& where) {
-  return made(M::make(values), grid, where);
-}
-
-template <class M>
-Entry entry() {
-  return {M::method, &made_by<M>};
-}
-
 const std::vector<Entry>& entries() {
-  static const std::vector<Entry> all{entry<KanaiTajimi>()};
+  static const std::vector<Entry> all{{kanai_tajimi::kind, kanai_tajimi::make},
+                                      {clough_penzien::kind, clough_penzien::make},
+                                      {white_noise::kind, white_noise::make},
+                                      {spectrum_compatible::kind, spectrum_compatible::make},
+                                      {stochastic::kind, stochastic::make},
+                                      {near_fault_pulse::kind, near_fault_pulse::make},
+                                      {ricker::kind, ricker::make},
+                                      {harmonic::kind, harmonic::make},
+                                      {sweep::kind, sweep::make},
+                                      {pulse::kind, pulse::make}};
   return all;
 }
 
@@ -54,26 +63,42 @@ void require_values(const Method& method, std::span<const double> values, const 
     require_allowed(method.parameters[i], values[i], fmt::format("{}.{}", where, method.parameters[i].key));
 }
 
-}  // namespace
-
-std::span<const Method> synthetic_catalogue() {
-  static const std::vector<Method> methods = [] {
-    std::vector<Method> list;
-    for (const Entry& entry : entries()) list.push_back(entry.method);
-    return list;
-  }();
-  return methods;
+void require_curves(const SyntheticKind& kind, std::span<const Curve> curves, const std::string& where) {
+  if (curves.size() != kind.curves.size())
+    throw input_error(where, fmt::format("found {} tables", curves.size()),
+                      fmt::format("{} takes {}", kind.method.name, kind.curves.size()));
+  for (std::size_t i = 0; i < curves.size(); ++i)
+    require_allowed(kind.curves[i], curves[i], fmt::format("{}.{}", where, kind.curves[i].key));
 }
 
-Accelerogram make_synthetic(std::string_view name, std::span<const double> values, const SyntheticGrid& grid,
-                            const std::string& where) {
+// To a millionth, exactly as a text with six decimals is read back.
+void round_samples(Accelerogram& record) {
+  for (double& sample : record.samples) sample = std::round(sample * 1e6) / 1e6;
+}
+
+}  // namespace
+
+std::span<const SyntheticKind> synthetic_catalogue() {
+  static const std::vector<SyntheticKind> kinds = [] {
+    std::vector<SyntheticKind> list;
+    for (const Entry& entry : entries()) list.push_back(entry.kind);
+    return list;
+  }();
+  return kinds;
+}
+
+MadeMotion make_synthetic(std::string_view name, std::span<const double> values, std::span<const Curve> curves,
+                          const SyntheticGrid& grid, const std::string& where) {
   std::vector<std::string_view> known;
   for (const Entry& entry : entries()) {
-    known.push_back(entry.method.name);
-    if (entry.method.name != name) continue;
+    known.push_back(entry.kind.method.name);
+    if (entry.kind.method.name != name) continue;
     require_grid(grid, where);
-    require_values(entry.method, values, where);
-    return entry.make(values, grid, where);
+    require_values(entry.kind.method, values, where);
+    require_curves(entry.kind, curves, where);
+    MadeMotion motion = entry.make({entry.kind, values, curves, grid, where});
+    round_samples(motion.record);
+    return motion;
   }
   throw input_error(where, fmt::format("there is no synthetic motion \"{}\"", name),
                     fmt::format("one of {}", fmt::join(known, ", ")));

@@ -83,6 +83,11 @@ const std::vector<Printed> printed{
     {"1/s", Dimension::per_time, 1, exact},
     {"Hz", Dimension::frequency, 1, exact},
     {"kHz", Dimension::frequency, 1000, exact},
+    {"bar", Dimension::stress, 1e5, exact},                // bar, 1.0 E+05
+    {"ksi", Dimension::stress, 6.894757e6, seven_digits},  // kip per square inch, 6.894757 E+06
+    {"g/cm3", Dimension::density, 1000, exact},            // gram per cubic centimeter, 1.0 E+03
+    {"s/km", Dimension::slowness, 1e-3, exact},
+    {"cm2/s3", Dimension::spectral_density, 1e-4, exact},
     {"%", Dimension::none, 0.01, exact},
     {"1", Dimension::none, 1, exact},
     {" kN ", Dimension::force, 1e3, exact},
@@ -136,7 +141,7 @@ TEST(Units, SaysWhatWasFoundAndWhatIsAllowed) {
 }
 
 TEST(Units, EveryDimensionsSiUnitHasFactorOne) {
-  for (int i = 0; i <= static_cast<int>(Dimension::frequency); ++i) {
+  for (int i = 0; i <= static_cast<int>(Dimension::spectral_density); ++i) {
     const auto dimension = static_cast<Dimension>(i);
     EXPECT_EQ(si_factor(si_unit(dimension), dimension, "here"), 1.0) << si_unit(dimension);
     EXPECT_FALSE(dimension_name(dimension).empty());

@@ -71,16 +71,26 @@ void newmark_update(const ImplicitCoefficients& c, const R& dt, ImplicitWorkspac
   }
 }
 
-// Out-of-balance force of the trial a; gives its largest magnitude less what rounding alone can leave.
-template <class R>
-R out_of_balance(const System& system, const ImplicitCoefficients& c, const R* before, const R* after,
-                 ImplicitWorkspace<R>& w) noexcept {
+// Out-of-balance force of the trial a. Hht: alpha is not 0.
+template <bool Hht, class R>
+void out_of_balance(const System& system, const ImplicitCoefficients& c, const R* before, const R* after,
+                    ImplicitWorkspace<R>& w) noexcept {
   const double weight = 1 + c.alpha;
+  const R *internal = w.forces.internal.data(), *internal_before = w.forces_before.internal.data();
+  for (int i = 0; i < system.freedoms; ++i)
+    if constexpr (Hht)
+      w.residual[i] =
+          weight * (after[i] - internal[i]) - system.mass[i] * w.a[i] - c.alpha * (before[i] - internal_before[i]);
+    else
+      w.residual[i] = after[i] - internal[i] - system.mass[i] * w.a[i];
+}
+
+// Its largest magnitude, less what rounding alone can leave.
+template <class R>
+R imbalance(const System& system, const ImplicitWorkspace<R>& w) noexcept {
   R largest = splat<R>(0), farthest = splat<R>(0), poison = splat<R>(0);
   for (int i = 0; i < system.freedoms; ++i) {
-    R r = weight * (after[i] - w.forces.internal[i]) - system.mass[i] * w.a[i];
-    if (c.alpha != 0) r -= c.alpha * (before[i] - w.forces_before.internal[i]);
-    w.residual[i] = r;
+    const R r = w.residual[i];
     largest = lane_max<R>(largest, lane_abs(r));
     poison += r - r;  // 0, or NaN from the first residual that is not finite: it must never pass for converged
     farthest = lane_max<R>(farthest, lane_abs(w.u[i]));
@@ -120,7 +130,9 @@ Mask<R> implicit_step(const System& system, const ImplicitCoefficients& c, const
   for (int iteration = 0;; ++iteration) {
     newmark_update(c, dt, w);
     internal_forces(system, w.u.data(), w.v.data(), state.memory, w.trial, w.forces);
-    converged = out_of_balance(system, c, before, after, w) <= tolerance;
+    c.alpha != 0 ? out_of_balance<true>(system, c, before, after, w)
+                 : out_of_balance<false>(system, c, before, after, w);
+    converged = imbalance(system, w) <= tolerance;
     if (all(converged) || iteration == newton_limit) break;
     w.solve.factor(system, R(weight * c.gamma * dt), R(weight * c.beta * dt * dt), w.forces.tangent.data());
     w.solve.solve(system, w.residual.data());

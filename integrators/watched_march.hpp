@@ -9,6 +9,7 @@
 #include "core/response/energy.hpp"
 #include "core/response/histories.hpp"
 #include "core/response/peaks.hpp"
+#include "core/response/reader.hpp"
 #include "core/response/residual.hpp"
 #include "integrators/march.hpp"
 
@@ -61,7 +62,7 @@ class Watches {
   Watches(const System& system, const BatchSettings& settings)
       : settings_(settings),
         layout_(static_cast<int>(system.stories.height.size())),
-        peaks_(layout_),
+        peaks_(layout_, ReaderPlan(system).multiples()),
         residual_(layout_, 0),
         collapse_(layout_, settings.collapse_drift_ratio),
         energy_(system, settings.work_rule),

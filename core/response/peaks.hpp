@@ -3,6 +3,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <utility>
 #include <vector>
 
 #include "core/response/observer.hpp"
@@ -13,26 +14,29 @@ namespace pilotis {
 template <class R>
 class PeakWatchOver : public ObserverOver<R> {
  public:
-  explicit PeakWatchOver(const ResponseLayout& layout)
-      : largest_(layout.size(), splat<R>(0)),
+  // Values that are `multiples` of others are not watched: their peaks follow.
+  explicit PeakWatchOver(const ResponseLayout& layout, std::vector<Multiple> multiples = {})
+      : multiples_(std::move(multiples)),
+        largest_(layout.size(), splat<R>(0)),
         value_(largest_),
         when_(largest_),
         between_(largest_),
         before_(largest_),
         recent_(layout.size() + 1),
-        is_recent_(layout.size(), 0) {}
+        is_recent_(layout.size(), 0) {
+    std::vector<char> watched(layout.size(), 1);
+    for (const Multiple& one : multiples_) watched[one.value] = 0;
+    for (std::size_t i = 0; i < watched.size(); ++i) {
+      if (watched[i] == 0) continue;
+      if (i == 0 || watched[i - 1] == 0) ranges_.push_back({i, i});
+      ranges_.back().second = i + 1;
+    }
+  }
 
   // A new peak is rare: nearly always one comparison per value, and one look at the outcome of several of them.
   Mask<R> see(const InstantOver<R>& instant) noexcept override {
     bound_recent(instant);
-    const R *values = instant.values, *largest = largest_.data();
-    const std::size_t count = largest_.size(), whole = count - count % block;
-    for (std::size_t i = 0; i < whole; i += block) {
-      Mask<R> higher = lane_abs(values[i]) > largest[i];
-      for (std::size_t k = 1; k < block; ++k) higher |= lane_abs(values[i + k]) > largest[i + k];
-      if (any(higher)) set_peaks(i, i + block, instant);
-    }
-    set_peaks(whole, count, instant);
+    for (const auto& [from, to] : ranges_) scan(from, to, instant);
     last_step_ = select(instant.seen, R(instant.time - last_time_), last_step_);
     last_time_ = select(instant.seen, instant.time, last_time_);
     seen_ = select(instant.seen, R(seen_ + 1.0), seen_);
@@ -49,6 +53,8 @@ class PeakWatchOver : public ObserverOver<R> {
   std::vector<Peak> peaks(int i = 0) const {
     std::vector<Peak> peaks;
     for (std::size_t k = 0; k < value_.size(); ++k) peaks.push_back({lane(value_[k], i), lane(when_[k], i), 0});
+    for (const Multiple& one : multiples_)
+      if (one.by > 0) peaks[one.value] = {one.by * peaks[one.of].value, peaks[one.of].time, 0};
     return peaks;
   }
 
@@ -58,11 +64,23 @@ class PeakWatchOver : public ObserverOver<R> {
   std::vector<double> between_states(int i = 0) const {
     std::vector<double> rise;
     for (const R& one : between_) rise.push_back(lane(one, i));
+    for (const Multiple& one : multiples_) rise[one.value] = one.by * rise[one.of];
     return rise;
   }
 
  private:
   static constexpr std::size_t block = 4;
+
+  void scan(std::size_t from, std::size_t to, const InstantOver<R>& instant) noexcept {
+    const R *values = instant.values, *largest = largest_.data();
+    std::size_t i = from;
+    for (; i + block <= to; i += block) {
+      Mask<R> higher = lane_abs(values[i]) > largest[i];
+      for (std::size_t k = 1; k < block; ++k) higher |= lane_abs(values[i + k]) > largest[i + k];
+      if (any(higher)) set_peaks(i, i + block, instant);
+    }
+    set_peaks(i, to, instant);
+  }
 
   void set_peaks(std::size_t from, std::size_t to, const InstantOver<R>& instant) noexcept {
     for (std::size_t i = from; i < to; ++i) {
@@ -100,7 +118,9 @@ class PeakWatchOver : public ObserverOver<R> {
     between_[i] = select(stands, R(lane_abs(R(slope1 - slope0)) * 2.0 / (h0 + h1) * h * h / 8.0), between_[i]);
   }
 
-  std::vector<R> largest_;  // |value_|
+  std::vector<Multiple> multiples_;
+  std::vector<std::pair<std::size_t, std::size_t>> ranges_;  // of the values that are watched
+  std::vector<R> largest_;                                   // |value_|
   std::vector<R> value_, when_, between_;
   std::vector<R> before_;            // value at the state before the peak
   std::vector<std::size_t> recent_;  // [recent_count_]: values whose peak some lane may have had at its last state

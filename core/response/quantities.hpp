@@ -50,4 +50,10 @@ class ResponseLayout {
   std::size_t size_;
 };
 
+// A value of the flat vector that is another one times a constant: its peak needs no watching of its own.
+struct Multiple {
+  std::size_t value = 0, of = 0;
+  double by = 0;  // >= 0
+};
+
 }  // namespace pilotis

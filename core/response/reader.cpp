@@ -31,4 +31,13 @@ ReaderPlan::ReaderPlan(const System& system) : layout(static_cast<int>(system.st
   for (double mass : system.mass) per_mass.push_back(1 / mass);
 }
 
+std::vector<Multiple> ReaderPlan::multiples() const {
+  std::vector<Multiple> found{{base_shear, shear, 1}};
+  for (std::size_t i = 0; i < per_height.size(); ++i) {
+    found.push_back({drift_ratio + i, drift + i, per_height[i]});
+    found.push_back({ductility + i, drift + i, per_yield[i]});
+  }
+  return found;
+}
+
 }  // namespace pilotis

@@ -21,6 +21,9 @@ struct ReaderPlan {
   std::vector<double> per_yield;   // 1/m, one over the yield deformation, [story]; 0: does not yield
   std::vector<double> per_mass;    // 1/kg, [freedom]
   bool drifts_are_deformations;    // every story's spring deforms by its drift
+
+  // Drift ratio and ductility are multiples of the drift, base shear is a story shear.
+  std::vector<Multiple> multiples() const;
 };
 
 template <class R>

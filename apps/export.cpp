@@ -104,7 +104,7 @@ void write_part(const ResultTable& table, const Options& options, Output& output
     write_runs(table, options, units, RowParts::all, peaks_rows, output);
   } else if (options.part == "--residual") {
     output.write(residuals_header(units));
-    write_runs(table, options, units, RowParts::all, residuals_rows, output);
+    write_runs(table, options, units, RowParts::residuals, residuals_rows, output);
   } else if (options.part == "--runs") {
     output.write(runs_header(units));
     write_runs(table, options, units, RowParts::heads, runs_rows, output);

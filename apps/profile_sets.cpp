@@ -71,14 +71,15 @@ std::string counts_line(const std::vector<Judged>& judged, bool several_building
 }
 
 // Widths in columns.
-constexpr std::size_t factor_width = 9, count_width = 8, drift_width = 10, margin_width = 11;
+constexpr std::size_t factor_width = 9, count_width = 7, drift_width = 10, margin_width = 11, word_width = 15;
+constexpr std::size_t numbers_width = factor_width + 3 * count_width + drift_width + margin_width + word_width;
 
 // 0: one building, not named.
-std::size_t name_width(const RunTable& table) {
+std::size_t name_width(const RunTable& table, const ScreenStyle& style) {
   if (table.buildings().size() == 1) return 0;
   std::size_t width = 12;
   for (const BuildingSummary& building : table.buildings()) width = std::max(width, columns_of(building.name) + 3);
-  return std::min<std::size_t>(width, 24);
+  return std::min(width, static_cast<std::size_t>(std::max(style.width, 80)) - numbers_width);
 }
 
 std::string heading(std::size_t name, const ScreenStyle& style) {
@@ -127,13 +128,13 @@ RankedSets::RankedSets(const RunTable& table, const Verdict& verdict) : order_(t
 }
 
 std::string RankedSets::text(const RunTable& table, std::size_t most_lines, const ScreenStyle& style) const {
-  const std::size_t lines = std::min(order_.size(), most_lines), name = name_width(table);
+  const std::size_t lines = std::min(order_.size(), most_lines), name = name_width(table, style);
   std::vector<std::size_t> shown(order_.begin(), order_.begin() + static_cast<std::ptrdiff_t>(lines));
   if (lines == order_.size()) std::sort(shown.begin(), shown.end());  // in the order of the study
   std::string text = painted(counts_line(judged_, table.buildings().size() > 1), Tone::strong, style) + "\n";
-  text += painted("Drift ratio: the largest of the runs that were done. Margin: the least of all limits.", Tone::quiet,
+  text += painted("Drift: largest drift ratio of runs that were done; margin: least of all limits.\n\n", Tone::quiet,
                   style) +
-          "\n\n" + heading(name, style);
+          heading(name, style);
   for (std::size_t i : shown) text += set_line(table, table.sets()[i], judged_[i], name, style);
   if (lines < order_.size())
     text += fmt::format("  These are the {} worst; --json tells of all {}.\n", lines, order_.size());

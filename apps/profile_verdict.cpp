@@ -181,11 +181,12 @@ std::string outcomes_in_short(const StudyHeader& header, const RunTable& table, 
   for (const Outcome& outcome : verdict.outcomes) {
     if (static_cast<std::size_t>(outcome.limit) != limit) continue;
     ++all;
-    if (worst == nullptr || outcome.margin < worst->margin) worst = &outcome;
+    const bool first_number = worst != nullptr && std::isnan(worst->margin) && !std::isnan(outcome.margin);
+    if (worst == nullptr || first_number || outcome.margin < worst->margin) worst = &outcome;
   }
   if (worst == nullptr) return "";
   const std::string counts = findings_text(verdict, static_cast<int>(limit));
-  return fmt::format("    of {}: {}; the least margin:\n", counted(all, "check", "checks"), counts) +
+  return fmt::format("    of {}: {}\n    least margin:\n", counted(all, "check", "checks"), counts) +
          outcome_line(*worst, header.limits[limit], name_among(table, worst->building), header.units, style);
 }
 
@@ -209,7 +210,9 @@ std::string verdict_text(const StudyHeader& header, const RunTable& table, const
     text += limit_line(header.limits[i], header.units, style) + outcomes_text(header, table, verdict, i, style);
   text += "\n" + runs_with(table, RunStatus::collapsed, "Collapsed", style);
   text += runs_with(table, RunStatus::not_converged, "Not converged", style);
-  text += painted(checks_statement(verdict) + runs_statement(verdict), overall_tone(verdict), style) + "\n";
+  const std::string statement = checks_statement(verdict) + runs_statement(verdict);
+  for (const std::string& line : wrapped(statement, static_cast<std::size_t>(style.width)))
+    text += painted(line, overall_tone(verdict), style) + "\n";
   return text + painted(caution, Tone::quiet, style) + "\n";
 }
 

@@ -55,8 +55,8 @@ std::vector<RunResult> MemoryTable::rows(std::size_t first, std::size_t count, R
     RunResult& run = found.back();
     run.times.clear();
     run.histories.clear();
-    if (parts == RowParts::all) continue;
-    run.peaks.clear();
+    if (parts != RowParts::all) run.peaks.clear();
+    if (parts != RowParts::heads) continue;
     run.residual_drift.clear();
     run.residual_swing.clear();
     run.residual_error.clear();

@@ -24,7 +24,8 @@ struct PlaceValue {
   double step_error = 0;  // SI, >= 0; NaN: not estimated
 };
 
-enum class RowParts { heads, all };  // heads: without peaks and residuals
+// What of a run is read beside its head (all that is one value per run).
+enum class RowParts { heads, residuals, all };  // all: peaks and residuals
 
 // For one thread at a time: columns are read into a buffer of the table.
 class RunTable {

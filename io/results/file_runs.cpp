@@ -115,9 +115,8 @@ std::vector<RunResult> FileRuns::rows(std::size_t first, std::size_t count, RowP
   if (count == 0) return found;
   const RunRange all{0, count_};
   read_runs(from_, all, first, buildings_, found);
-  if (parts == RowParts::heads) return found;
-  read_peaks(from_, all, first, buildings_, found);
-  read_residuals(from_, all, first, buildings_, found);
+  if (parts == RowParts::all) read_peaks(from_, all, first, buildings_, found);
+  if (parts != RowParts::heads) read_residuals(from_, all, first, buildings_, found);
   return found;
 }
 

@@ -15,7 +15,7 @@ namespace pilotis {
 
 namespace {
 
-constexpr double largest_in_memory = 64e6;  // bytes
+constexpr double largest_in_memory = 8e6;  // bytes; the most this can add to the memory of a process
 
 // Of the file, before compression.
 double size_of(const StudyHeader& header, std::size_t runs, double history_bytes) {

@@ -13,6 +13,7 @@
 #include "core/verdict/memory_table.hpp"
 #include "io/results/store.hpp"
 #include "tests/support/invented_results.hpp"
+#include "tests/support/large_study.hpp"
 
 namespace pilotis {
 namespace {
@@ -50,6 +51,20 @@ std::string story_line(const std::string& text, const std::string& factor, int s
 }
 
 bool has(const std::string& text, const std::string& part) { return text.find(part) != std::string::npos; }
+
+std::size_t count(const std::string& text, const std::string& part) {
+  std::size_t found = 0;
+  for (auto at = text.find(part); at != std::string::npos; at = text.find(part, at + 1)) ++found;
+  return found;
+}
+
+std::string shown_large(const invented::Size& size, const ScreenStyle& style = plain, bool limits = true) {
+  StudyHeader header = large_header(size);
+  if (!limits) header.limits.clear();
+  const std::vector<RunResult> runs = large_runs(size, 0, size.runs());
+  const MemoryTable table(header.buildings, runs);
+  return profile_text(header, table, judge(table, header.limits), style);
+}
 
 // By the formula of the invented results, story 3 at factor 1: 0.6, 0.7, 0.8, 0.9, 1.0 % drift ratio under the five
 // motions: mean 0.80, largest 1.00 with step error 1% of it, motion 5; margin to the limit of 1 %: 20 %.
@@ -161,6 +176,46 @@ TEST(Profile, UnknownStepErrorIsAQuestionMark) {
   EXPECT_FALSE(has(text, "nan"));
 }
 
+// Two and more buildings are told apart; the sets of one stand under its name.
+TEST(Profile, FewSetsOfSeveralBuildingsWhole) {
+  const invented::Size size{2, 2, 20, 0};
+  const std::string text = shown_large(size);
+  EXPECT_TRUE(has(text, "\n2 buildings\n"));
+  EXPECT_TRUE(has(text, "\nblock 0\n4 stories"));
+  EXPECT_TRUE(has(text, "\nblock 1\n7 stories"));
+  EXPECT_EQ(count(text, "Ground motion × "), 4u);
+  EXPECT_TRUE(std::regex_search(text, std::regex("EXCEEDED +block 1 +× 0\\.25"))) << text;
+  EXPECT_TRUE(has(text, "run 49  block 1  record 009 × 0.25  collapsed at 30 s")) << text;
+}
+
+// Runs that collapse (every 50th) are in the sets of runs 40..59, 80..99, ...: the mean of these is beyond the limit.
+TEST(Profile, ManySetsInALineEach) {
+  const invented::Size size{3, 5, 20, 0};
+  const std::string text = shown_large(size);
+  EXPECT_TRUE(has(text, "15 sets of building and factor: 6 exceed a limit, 2 undetermined, 7 hold")) << text;
+  EXPECT_EQ(count(text, "\n  block "), 15u) << text;
+  EXPECT_EQ(count(text, "Ground motion × "), 1u) << "the governing one only";
+  EXPECT_TRUE(std::regex_search(text, std::regex("\n  block 0 +0\\.75 +20 +1 +0 .* none   EXCEEDED"))) << text;
+  EXPECT_TRUE(has(text, "of 15 checks: 7 hold, 6 exceeded, 2 undetermined\n    least margin:\n")) << text;
+}
+
+TEST(Profile, VeryManySetsTheWorstOnly) {
+  const invented::Size size{30, 4, 5, 3};
+  const std::string text = shown_large(size);
+  EXPECT_TRUE(has(text, "120 sets of building and factor:"));
+  EXPECT_EQ(count(text, "\n  block "), most_sets_listed) << text;
+  EXPECT_TRUE(has(text, "These are the 40 worst; --json tells of all 120."));
+  for (int width : {80, 100})
+    for (const std::string& line : lines_of(shown_large(size, {width, false, true})))
+      EXPECT_LE(columns_of(line), static_cast<std::size_t>(width)) << line;
+}
+
+TEST(Profile, ManyFactorsOfOneBuildingWithoutLimits) {
+  const std::string text = shown_large({1, 14, 5, 3}, plain, false);
+  EXPECT_TRUE(has(text, "14 factors: 14 not judged")) << text;
+  EXPECT_FALSE(has(text, "block"));
+}
+
 std::string told(const StoredStudy& stored) {
   const MemoryTable table(stored.buildings, stored.runs);
   std::string text;
@@ -172,6 +227,24 @@ std::string told(const StoredStudy& stored) {
 TEST(ReportJson, LaidOutAsOnePiece) {
   const std::string text = told(invented::study_with_open_run());
   EXPECT_EQ(text, nlohmann::ordered_json::parse(text).dump(2) + "\n");
+}
+
+TEST(ReportJson, SeveralBuildingsAreNamed) {
+  const invented::Size size{2, 3, 20, 0};
+  const StudyHeader header = large_header(size);
+  const std::vector<RunResult> runs = large_runs(size, 0, size.runs());
+  const MemoryTable table(header.buildings, runs);
+  std::string text;
+  write_report_json(header, table, judge(table, header.limits), [&](std::string_view part) { text += part; });
+  const auto json = nlohmann::json::parse(text);
+  EXPECT_EQ(json.at("buildings").at(1).at("name"), "block 1");
+  EXPECT_EQ(json.at("factors").size(), 6u);
+  EXPECT_EQ(json.at("factors").at(4).at("building"), "block 1");
+  EXPECT_EQ(json.at("factors").at(4).at("factor"), 0.5);
+  EXPECT_EQ(json.at("factors").at(4).at("stories").size(), 7u);
+  EXPECT_EQ(json.at("verdict").at(3).at("building"), "block 1");
+  EXPECT_EQ(json.at("ended_early").size(), 3u) << "runs 49, 76 and 99";
+  EXPECT_EQ(json.at("ended_early").at(1).at("run"), 76);
 }
 
 TEST(ReportJson, SameNumbersAndNoNonFiniteOnes) {

@@ -119,6 +119,20 @@ TEST_F(Writer, ColumnsOfALargeSet) {
       }
 }
 
+TEST_F(Writer, RowsHoldThePartsAskedFor) {
+  write(folder_ / "a.h5", three_blocks, false, 0);
+  const ResultTable table(folder_ / "a.h5");
+  const std::vector<RunResult> runs = large_runs(three_blocks, 0, three_blocks.runs());
+  const MemoryTable memory(table.buildings(), runs);
+  for (RowParts parts : {RowParts::heads, RowParts::residuals, RowParts::all}) {
+    const auto found = table.rows(45, 10, parts), expected = memory.rows(45, 10, parts);
+    ASSERT_EQ(found.size(), 10u);
+    for (std::size_t i = 0; i < 10; ++i) expect_same(found[i], expected[i]);
+    EXPECT_EQ(found[0].peaks.empty(), parts != RowParts::all);
+    EXPECT_EQ(found[0].residual_drift.empty(), parts == RowParts::heads);
+  }
+}
+
 TEST_F(Writer, NumbersOfRuns) {
   write(folder_ / "a.h5", three_blocks, false, 0);
   const ResultTable table(folder_ / "a.h5");

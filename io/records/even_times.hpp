@@ -30,6 +30,9 @@ struct EvenTimes {
 //
 // Throws Error (input), naming line and times, when a time repeats, goes back, is missing or is uneven, or when the
 // times rise by another step than the stated one.
+//
+// The times must rise for the second, which gives nothing where the first would throw.
 EvenTimes even_times(const TimeColumn& column, std::optional<double> stated_step, const std::string& file);
+std::optional<EvenTimes> even_times_if_even(const TimeColumn& column, std::optional<double> stated_step);
 
 }  // namespace pilotis

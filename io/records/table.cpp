@@ -80,10 +80,55 @@ void require_cells(const std::vector<std::string_view>& cells, const TextLine& r
                       fmt::format("every row must have as many as the first, {}", columns));
 }
 
-void widen(Precision& finest, std::string_view cell) {
+void widen(std::string_view cell, Precision& finest) {
   const Precision here = printed_precision(cell);
   finest.decimals = std::max(finest.decimals, here.decimals);
   finest.digits = std::max(finest.digits, here.digits);
+}
+
+// The next cell from `at` on, which then stands behind its separator.
+std::string_view next_cell(std::string_view line, char separator, std::size_t& at) {
+  if (separator == ' ') at = std::min(line.find_first_not_of(" \t", at), line.size());
+  const std::size_t begin = at;
+  const std::size_t end =
+      std::min(separator == ' ' ? line.find_first_of(" \t", at) : line.find(separator, at), line.size());
+  at = end + 1;
+  return line.substr(begin, end - begin);
+}
+
+// The usual row: as many plain numbers as there are columns. False, with nothing appended, for any other.
+bool append_plainly(std::string_view line, std::optional<std::size_t> times, Table& table) {
+  const std::size_t before = table.values.size();
+  std::size_t at = 0;
+  Precision finest = table.finest;
+  for (std::size_t i = 0; i < table.columns; ++i) {
+    double value = 0;
+    const std::string_view cell = at <= line.size() ? next_cell(line, table.separator, at) : std::string_view{};
+    if (!parse_plainly(cell, value)) {
+      table.values.resize(before);
+      return false;
+    }
+    table.values.push_back(value);
+    if (times == i) widen(stripped(cell), finest);
+  }
+  const bool at_end = at >= line.size() + 1 || (table.separator == ' ' && stripped(line.substr(at)).empty());
+  if (at_end)
+    table.finest = finest;
+  else
+    table.values.resize(before);
+  return at_end;
+}
+
+// Other notations of numbers; says what is wrong with a bad row.
+void append_carefully(const TextLine& row, std::optional<std::size_t> times, char decimal_sign, const std::string& file,
+                      Table& table) {
+  const std::vector<std::string_view> cells = cells_of(row.text, table.separator);
+  require_cells(cells, row, table.columns, file);
+  const std::string where = at_line(file, row.number);
+  for (std::size_t i = 0; i < cells.size(); ++i) {
+    table.values.push_back(require_number(cells[i], where, decimal_sign));
+    if (times == i) widen(cells[i], table.finest);
+  }
 }
 
 }  // namespace
@@ -127,19 +172,17 @@ PlainText sorted_lines(std::string_view content, const std::string& file) {
 
 std::size_t columns_in(const TextLine& row) { return cells_of(row.text, separator_of(row.text)).size(); }
 
-Table read_table(const std::vector<TextLine>& rows, const std::string& file) {
+Table read_table(const std::vector<TextLine>& rows, std::optional<std::size_t> times, const std::string& file) {
   Table table;
   table.separator = separator_of(rows.front().text);
   table.columns = columns_in(rows.front());
-  table.finest.resize(table.columns, Precision{-400, 0});
+  table.finest = {-400, 0};
+  table.values.reserve(rows.size() * table.columns);
+  table.lines.reserve(rows.size());
   const char decimal_sign = decimal_sign_of(rows, table.separator);
   for (const TextLine& row : rows) {
-    const std::vector<std::string_view> cells = cells_of(row.text, table.separator);
-    require_cells(cells, row, table.columns, file);
-    for (std::size_t i = 0; i < cells.size(); ++i) {
-      table.values.push_back(require_number(cells[i], at_line(file, row.number), decimal_sign));
-      widen(table.finest[i], cells[i]);
-    }
+    if (decimal_sign != '.' || !append_plainly(row.text, times, table))
+      append_carefully(row, times, decimal_sign, file, table);
     table.lines.push_back(row.number);
   }
   return table;

@@ -52,12 +52,23 @@ double factor_of(const TableReader& table) {
   return factor;
 }
 
+// A motion is one component so far: core/motion/accelerogram.hpp.
+void refuse_several(const TableReader& table) {
+  for (const char* key : {"files", "components"})
+    if (const auto several = table.find(key))
+      throw several->wrong(fmt::format("found {}: two components that shake the building together", key),
+                           "a motion has one component for now; give its file, and its component where the file holds "
+                           "several: { file = \"...\", component = \"...\" }");
+}
+
 void add_table(TableReader table, const ValueReader& place, const fs::path& folder, const RecordHints& suite,
                std::vector<Wanted>& wanted) {
-  table.known_keys({"file", "units", "step", "factor", "first_sample_at", "name"});
+  table.known_keys({"file", "component", "units", "step", "factor", "first_sample_at", "name", "files", "components"});
+  refuse_several(table);
   const ValueReader file = table.at("file", "name the file of the motion");
   RecordHints hints = hints_of(table, suite);
   hints.first_sample_at = table.quantity_if_given(first_sample_at);
+  if (const auto component = table.find("component")) hints.component = component->text();
   const std::string name = table.text_or("name", "");
   const std::vector<fs::path> files = files_named(file, folder);
   if (!name.empty() && files.size() > 1)
@@ -82,13 +93,19 @@ std::vector<Wanted> wanted_motions(const TableReader& suite, const fs::path& fol
   return wanted;
 }
 
-// File names without extension; with it where two would be called alike.
+// The file name, and the component where the study names one.
+std::string full_name(const Wanted& motion) {
+  const std::string file = motion.file.filename().string();
+  return motion.hints.component ? fmt::format("{} {}", file, *motion.hints.component) : file;
+}
+
+// File names without extension; full names where two would be called alike.
 void name_motions(std::vector<Wanted>& wanted) {
   std::map<std::string, int> stems;
   for (const Wanted& motion : wanted) ++stems[motion.name.empty() ? motion.file.stem().string() : motion.name];
   for (Wanted& motion : wanted) {
     const std::string stem = motion.file.stem().string();
-    if (motion.name.empty()) motion.name = stems[stem] == 1 ? stem : motion.file.filename().string();
+    if (motion.name.empty()) motion.name = stems[stem] == 1 ? stem : full_name(motion);
   }
   std::set<std::string> taken;
   for (const Wanted& motion : wanted)

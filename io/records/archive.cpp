@@ -18,17 +18,10 @@ namespace {
 
 constexpr double rounding = 0.01, refused = 0.1;
 
-double largest(const std::vector<double>& values) {
-  double peak = 0;
-  for (double value : values)
-    if (std::abs(value) > std::abs(peak)) peak = value;
-  return peak;
-}
-
 void check_peak(const ReadComponent& read, const std::string& unit, const std::string& where,
                 std::vector<std::string>& notes) {
   if (!read.peak) return;
-  const double stated = read.peak->value, found = largest(read.values);
+  const double stated = read.peak->value, found = read.peak_found.value_or(largest_of(read.values));
   const double apart = std::abs(std::abs(stated) - std::abs(found)) - read.peak->last_digit;
   const double size = std::max(std::abs(stated), std::abs(found));
   const std::string both =
@@ -50,6 +43,13 @@ double positive(std::string_view token, int line, const char* what, const std::s
 }
 
 }  // namespace
+
+double largest_of(const std::vector<double>& values) {
+  double peak = 0;
+  for (double value : values)
+    if (std::abs(value) > std::abs(peak)) peak = value;
+  return peak;
+}
 
 std::optional<StatedPeak> stated_peak(std::string_view token, int line) {
   const ParsedNumber parsed = parse_number(token);

@@ -21,6 +21,9 @@ struct StatedPeak {
 // From a printed number; empty when `token` is none.
 std::optional<StatedPeak> stated_peak(std::string_view token, int line);
 
+// The value of largest magnitude, with its sign; 0 of none.
+double largest_of(const std::vector<double>& values);
+
 // One component as read from a file of an archive.
 struct ReadComponent {
   std::string name;
@@ -28,6 +31,7 @@ struct ReadComponent {
   std::vector<double> values;  // in the unit of the file
   Statements says;             // unit and step
   std::optional<StatedPeak> peak = {};
+  std::optional<double> peak_found = {};  // where `values` are interpolated: that of the numbers of the file
   std::optional<std::size_t> stated_samples = {};
 };
 

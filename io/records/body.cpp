@@ -125,10 +125,18 @@ void require_possible(const LineCursor& cursor, const Columns& columns, const Pr
       whole_file);
 }
 
+[[noreturn]] void refuse_short_row(std::size_t before, std::size_t found, const Columns& columns,
+                                   const Promise& promise, const TextLine& row, const std::string& file) {
+  throw input_error(at_line(file, row.number),
+                    fmt::format("after {} values a row has only {}, {}, but line {} promises {}", before, found,
+                                in_quotes(row.text), promise.line, promise.text),
+                    fmt::format("every row but the last must have {}; was the file cut off?", columns.per_row));
+}
+
 void require_full_row(std::size_t found, const Columns& columns, const TextLine& row, const std::string& file) {
-  if (columns.per_row == 0 || found == columns.per_row) return;
+  if (found == columns.per_row) return;
   throw input_error(at_line(file, row.number), fmt::format("found {} value(s) in {}", found, in_quotes(row.text)),
-                    fmt::format("every row but the last must have {}", columns.per_row));
+                    fmt::format("every row must have {}", columns.per_row));
 }
 
 void refuse_missing(const Body& body, const Columns& columns, double missing, const std::string& file) {
@@ -194,7 +202,8 @@ Body read_body(LineCursor& cursor, const Columns& columns, const Promise& promis
     if (!found && before > 0 && !is_row(cursor.line().text, columns))
       refuse_short(before, promise, cursor.line().number, file);
     if (!found) found = append_carefully(cursor.line(), columns, wanted, file, body.values);
-    if (*found < wanted) require_full_row(*found, columns, cursor.line(), file);
+    if (*found < wanted && columns.per_row > *found)
+      refuse_short_row(before, *found, columns, promise, cursor.line(), file);
     if (*found > wanted) body.surplus = *found - wanted;
     body.last_line = cursor.line().number;
     cursor.advance();

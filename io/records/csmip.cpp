@@ -45,8 +45,15 @@ std::vector<TextLine> csmip_header(LineCursor& cursor, bool (*begins_body)(std::
 }
 
 void pass_csmip_end(LineCursor& cursor, bool (*begins_channel)(std::string_view line), const std::string& file) {
-  while (!cursor.at_end() && (is_csmip_end_mark(cursor.line().text) || stripped(cursor.line().text).empty()))
-    cursor.advance();
+  bool ended = false;
+  for (; !cursor.at_end(); cursor.advance()) {
+    const bool mark = is_csmip_end_mark(cursor.line().text);
+    if (!mark && !stripped(cursor.line().text).empty()) break;
+    ended |= mark;
+  }
+  if (!ended && (cursor.at_end() || begins_channel(cursor.line().text)))
+    throw input_error(at_line(file, cursor.line().number), "found no mark /& after the numbers of a channel",
+                      "was the file cut off?");
   if (cursor.at_end() || begins_channel(cursor.line().text)) return;
   throw input_error(at_line(file, cursor.line().number),
                     fmt::format("found {} after the numbers of a channel", in_quotes(cursor.line().text)),

@@ -27,7 +27,8 @@ bool is_csmip_end_mark(std::string_view line);  // "/&  ---- END OF DATA FOR CHA
 std::vector<TextLine> csmip_header(LineCursor& cursor, bool (*begins_body)(std::string_view line), const char* missing,
                                    const std::string& file);
 
-// After a channel: passes its end mark and blank lines. Throws Error (input) when something else follows.
+// After a channel: passes its end mark and blank lines. Throws Error (input) when the mark is missing or something else
+// follows.
 void pass_csmip_end(LineCursor& cursor, bool (*begins_channel)(std::string_view line), const std::string& file);
 
 }  // namespace pilotis

@@ -114,8 +114,10 @@ RecordComponent read_pairs(LineCursor& cursor, const RecordHints& hints, const s
   const Promise promise = promise_of(count, line, where, 2);
   const Body body = read_body(cursor, of_pairs, promise, where);
   refuse_surplus(body, cursor, of_pairs, promise, where);
-  EvenSamples even = even_samples(times_of(body), column_of(body.values, 2, 1), hints.step, where);
+  std::vector<double> values = column_of(body.values, 2, 1);
   ReadComponent read;
+  read.peak_found = largest_of(values);
+  EvenSamples even = even_samples(times_of(body), std::move(values), hints.step, where);
   say_name(header, read);
   if (read.peak) read.peak->value *= 10, read.peak->last_digit *= 10;
   read.values = std::move(even.values);

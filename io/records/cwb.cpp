@@ -60,8 +60,11 @@ void require_even(const std::vector<double>& values, std::size_t columns, int fi
 }
 
 void require_length(std::size_t rows, double rate, const Label& length, const std::string& file) {
-  const double seconds = require_number(first_number_in(length.value), at_line(file, length.line));
-  if (rows >= 2 && std::abs(static_cast<double>(rows) - seconds * rate) <= rate) return;
+  const std::string_view token = first_number_in(length.value);
+  const double seconds = require_number(token, at_line(file, length.line));
+  const double last_digit = std::pow(10.0, -printed_precision(token).decimals);
+  const double apart = std::abs(static_cast<double>(rows) / rate - seconds);
+  if (rows >= 2 && apart < last_digit * (1 - 1e-6)) return;
   throw input_error(at_line(file, length.line),
                     fmt::format("found {} rows of {} a second for a record of {} s", rows, rate, seconds),
                     "was the file cut off?");

@@ -1,8 +1,8 @@
 // CWB (Taiwan): a header of lines "#Label: value" among them SampleRate(Hz), RecordLength(sec), AmplitudeUnit (gal),
 // DataSequence ("Time U(+); N(+); E(+)") and Data ("4F10.3"), then rows of time and three components.
 //
-// The length is stated in seconds, so the number of rows must agree with it within one second. The times must rise by
-// the sample rate. Checked by AmplitudeMAX.
+// The length is stated in seconds, rounded or cut off: the rows must agree with it within one unit of its last digit.
+// The times must rise by the sample rate. Checked by AmplitudeMAX.
 #pragma once
 
 #include <string>

@@ -11,8 +11,18 @@ namespace pilotis {
 
 namespace {
 
-constexpr std::size_t header_lines = 64;
+constexpr std::size_t longest_header = 100;  // lines; usually 64
 constexpr Columns one_a_line{1, 0};
+
+// Every line with a colon, down to the first number.
+std::vector<TextLine> header_of(LineCursor& cursor) {
+  std::vector<TextLine> header;
+  for (; !cursor.at_end() && header.size() < longest_header; cursor.advance()) {
+    if (cursor.line().text.find(':') == std::string_view::npos) break;
+    header.push_back(cursor.line());
+  }
+  return header;
+}
 
 void require_acceleration(const Labels& labels, const std::string& file) {
   const Label& type = labels.need("DATA_TYPE");
@@ -29,8 +39,7 @@ bool recognises_esm_dyna(std::string_view content) {
 
 FileOfRecords read_esm_dyna(std::string_view content, const std::string& where, const RecordHints& hints) {
   LineCursor cursor(content);
-  const std::vector<TextLine> header = cursor.take(header_lines);
-  const Labels labels(header, where);
+  const Labels labels(header_of(cursor), where);
   require_acceleration(labels, where);
   const Label& count = labels.need("NDATA");
   const Promise promise = promise_of(count.value, count.line, where);

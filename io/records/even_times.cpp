@@ -123,6 +123,12 @@ double as_printed(double value, int decimals) {
   return std::round(value * scale) / scale;
 }
 
+// True when the last times by the two steps would be printed alike, to one last digit.
+bool alike_to_the_end(double step, double other, const TimeColumn& column) {
+  const double most = Print(column.finest).last_digit(column.times.back());
+  return std::abs(step - other) * static_cast<double>(column.times.size() - 1) <= most;
+}
+
 // The step that the times themselves show; empty when they are uneven.
 std::optional<EvenTimes> shown_step(const TimeColumn& column) {
   const double best = best_step(column.times);
@@ -130,7 +136,8 @@ std::optional<EvenTimes> shown_step(const TimeColumn& column) {
   if (printed > 0 && fits(column, printed, of_shown_step)) return EvenTimes{printed, column.times.front(), false};
   const bool finely_printed = Print(column.finest).last_digit(column.times.back()) <= best / 10;
   if (!finely_printed || !fits(column, best, of_fitted_step)) return std::nullopt;
-  return EvenTimes{best, column.times.front(), true};
+  const bool round = alike_to_the_end(best, printed, column) && fits(column, printed, of_fitted_step);
+  return EvenTimes{round ? printed : best, column.times.front(), true};
 }
 
 // By the stated step where that fits.

@@ -36,7 +36,7 @@ Header header_of(LineCursor& cursor, const std::string& file) {
 // Int(34), (35) and (36): values of acceleration, velocity and displacement.
 Promise promise_of_block(const Header& header, std::size_t number, const std::string& file) {
   const std::optional<double> count = header.integers[number - 1];
-  return promise_of(count ? fmt::format("{:.0f}", *count) : "nothing", header.integers_line + 3, file);
+  return promise_of(count ? fmt::format("{}", *count) : "nothing", header.integers_line + 3, file);
 }
 
 const TextLine& line_with(const Header& header, std::string_view phrase, const std::string& file) {

@@ -78,9 +78,9 @@ void note_remarkable_peak(RecordComponent& component) {
 std::span<const RecordFormat> record_formats() { return formats; }
 
 FileOfRecords read_record_content(std::string_view content, const std::string& where, const RecordHints& hints) {
-  const std::string_view text = without_byte_order_mark(content);
-  refuse_not_records(text, where);
-  require_text(text, where);
+  const std::string_view marked = without_byte_order_mark(content);
+  refuse_not_records(marked, where);
+  const std::string_view text = text_of(marked, where);
   FileOfRecords file = read_text(text, where, hints);
   for (RecordComponent& component : file.components) {
     validate(component.record, where);

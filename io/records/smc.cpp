@@ -63,7 +63,7 @@ Header header_of(LineCursor& cursor, const std::string& file) {
 Promise promise_in(const Header& header, const std::string& file) {
   const int line = header.integers_line + 2;  // Int(17) is the first of the third row
   const std::optional<double> count = header.integers[16];
-  return promise_of(count ? fmt::format("{:.0f}", *count) : "a missing number", line, file);
+  return promise_of(count ? fmt::format("{}", *count) : "a missing number", line, file);
 }
 
 void pass_comments(const Header& header, LineCursor& cursor, const std::string& file) {
@@ -79,8 +79,11 @@ void pass_comments(const Header& header, LineCursor& cursor, const std::string& 
 Columns columns_of(const LineCursor& cursor, std::size_t count, const std::string& file) {
   const std::string_view row = cursor.at_end() ? std::string_view{} : cursor.line().text;
   const std::size_t length = row.find_last_not_of(" \t") + 1;
-  for (const Columns& columns : {Columns{8, 10}, Columns{5, 14}})
+  constexpr std::array<Columns, 2> ways{Columns{8, 10}, Columns{5, 14}};
+  for (const Columns& columns : ways)
     if (length == columns.width * std::min(columns.per_row, count)) return columns;
+  for (const Columns& columns : ways)  // with more numbers than promised, or too few
+    if (length > 0 && length % columns.width == 0 && length <= columns.width * columns.per_row) return columns;
   throw input_error(at_line(file, cursor.line().number),
                     fmt::format("found {} characters in {}", length, in_quotes(row)),
                     "a full row has eight values of 10 characters or five of 14");
@@ -125,7 +128,9 @@ void take_pairs(const Body& body, const Columns& columns, const RecordHints& hin
     throw input_error(at_line(where, body.first_line),
                       fmt::format("found {} numbers, which make no pairs of time and value", body.values.size()),
                       "without a sample rate in Real(2) the numbers must be pairs");
-  EvenSamples even = even_samples(times_of(body, columns), column_of(body.values, 2, 1), hints.step, where);
+  std::vector<double> values = column_of(body.values, 2, 1);
+  read.peak_found = largest_of(values);
+  EvenSamples even = even_samples(times_of(body, columns), std::move(values), hints.step, where);
   read.values = std::move(even.values);
   read.says.step = StatedTime{even.step, body.first_line};
   if (!even.interpolated) read.stated_samples = body.values.size() / 2;

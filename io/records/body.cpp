@@ -14,13 +14,6 @@ namespace {
 
 constexpr const char* whole_file = "the file must hold exactly as many values as its header says; was it cut off?";
 
-bool is_blank(char c) { return c == ' ' || c == '\t'; }
-
-std::string_view without_end_blanks(std::string_view text) {
-  const std::size_t last = text.find_last_not_of(" \t");
-  return last == std::string_view::npos ? std::string_view{} : text.substr(0, last + 1);
-}
-
 // A field holds one number and blanks around it, else this says what is wrong.
 double number_in_field(std::string_view field, const TextLine& row, const std::string& file) {
   const std::string where = at_line(file, row.number);
@@ -46,7 +39,7 @@ class Fields {
     skip_blanks();
     return word;
   }
-  std::size_t characters() const { return row_.size(); }
+  std::string_view row() const { return row_; }
 
  private:
   void skip_blanks() {
@@ -56,27 +49,40 @@ class Fields {
   std::size_t width_ = 0, at_ = 0;
 };
 
-bool ends_where_a_column_ends(const Fields& fields, const Columns& columns) {
-  return columns.width == 0 ||
-         (fields.characters() % columns.width == 0 && fields.characters() <= columns.per_row * columns.width);
+bool ends_where_a_column_ends(std::string_view row, const Columns& columns) {
+  return columns.width == 0 || (row.size() % columns.width == 0 && row.size() <= columns.per_row * columns.width);
+}
+
+// Each value of a row to `add`, the row being of numbers between blanks or in columns; false at the first unusual one.
+template <class Add>
+bool each_word(std::string_view row, Add add) {
+  for (double value = 0; !row.empty(); add(value))
+    if (!take_plainly(row, value)) return false;
+  return true;
+}
+template <class Add>
+bool each_field(std::string_view row, std::size_t width, Add add) {
+  for (double value = 0; !row.empty(); add(value)) {
+    if (!parse_plainly(row.substr(0, width), value)) return false;
+    row.remove_prefix(width);
+  }
+  return true;
 }
 
 // Appends at most `most` values of a row and gives how many the row has; empty, with nothing appended, when there is
 // anything unusual about it.
 std::optional<std::size_t> append_plainly(std::string_view line, const Columns& columns, std::size_t most,
                                           std::vector<double>& values) {
-  Fields fields(line, columns);
-  if (!ends_where_a_column_ends(fields, columns)) return std::nullopt;
+  const std::string_view row = without_end_blanks(line);
+  if (!ends_where_a_column_ends(row, columns)) return std::nullopt;
   const std::size_t before = values.size();
   std::size_t found = 0;
-  for (double value = 0; !fields.at_end(); ++found) {
-    if (!parse_plainly(fields.next(), value)) {
-      values.resize(before);
-      return std::nullopt;
-    }
-    if (found < most) values.push_back(value);
-  }
-  return found;
+  const auto add = [&](double value) {
+    if (found++ < most) values.push_back(value);
+  };
+  if (columns.width == 0 ? each_word(row, add) : each_field(row, columns.width, add)) return found;
+  values.resize(before);
+  return std::nullopt;
 }
 
 // The same for values between blanks that run together.
@@ -90,9 +96,9 @@ std::optional<std::size_t> append_glued(std::string_view line, const Columns& co
 std::size_t append_carefully(const TextLine& line, const Columns& columns, std::size_t most, const std::string& file,
                              std::vector<double>& values) {
   Fields fields(line.text, columns);
-  if (!ends_where_a_column_ends(fields, columns))
+  if (!ends_where_a_column_ends(fields.row(), columns))
     throw input_error(
-        at_line(file, line.number), fmt::format("found {} characters in {}", fields.characters(), in_quotes(line.text)),
+        at_line(file, line.number), fmt::format("found {} characters in {}", fields.row().size(), in_quotes(line.text)),
         fmt::format("a row must have at most {} values of {} characters each", columns.per_row, columns.width));
   std::size_t found = 0;
   for (; !fields.at_end(); ++found) {

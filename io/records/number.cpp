@@ -28,6 +28,8 @@ std::string normal_notation(std::string_view token, char decimal_sign) {
   return has_digit ? text : std::string(token);  // perhaps "nan" or "inf"
 }
 
+bool begins_exponent(char c) { return c == 'e' || c == 'E' || c == 'd' || c == 'D'; }
+
 }  // namespace
 
 bool parse_plainly(std::string_view field, double& value) noexcept {
@@ -37,6 +39,15 @@ bool parse_plainly(std::string_view field, double& value) noexcept {
   if (error != std::errc{} || !std::isfinite(value)) return false;
   for (const char* blank = rest; blank != end; ++blank)
     if (*blank != ' ') return false;
+  return true;
+}
+
+bool take_plainly(std::string_view& text, double& value) noexcept {
+  const char *begin = text.data(), *end = begin + text.size();
+  while (begin != end && *begin == ' ') ++begin;
+  const auto [rest, error] = std::from_chars(begin, end, value);
+  if (error != std::errc{} || !std::isfinite(value) || (rest != end && *rest != ' ')) return false;
+  text.remove_prefix(static_cast<std::size_t>(rest - text.data()));
   return true;
 }
 
@@ -67,7 +78,7 @@ Precision printed_precision(std::string_view token) {
   Precision precision;
   bool after_sign = false;
   std::size_t at = 0;
-  for (; at < token.size() && std::string_view("eEdD").find(token[at]) == std::string_view::npos; ++at) {
+  for (; at < token.size() && !begins_exponent(token[at]); ++at) {
     const char c = token[at];
     if (c == '.' || c == ',') after_sign = true;
     if (c < '0' || c > '9') continue;

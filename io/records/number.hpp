@@ -22,6 +22,10 @@ ParsedNumber parse_number(std::string_view token, char decimal_sign = '.');
 // else, which parse_number then judges.
 bool parse_plainly(std::string_view field, double& value) noexcept;
 
+// The same for the first number of a text, which is taken off with the blanks before it. A blank or the end must
+// follow.
+bool take_plainly(std::string_view& text, double& value) noexcept;
+
 // As parse_number; throws Error (input) at `where` for everything but a finite number.
 double require_number(std::string_view token, const std::string& where, char decimal_sign = '.');
 

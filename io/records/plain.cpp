@@ -31,6 +31,7 @@ EvenTimes times_of(const Table& table, const PlainHeader& header, const RecordHi
   column.finest = table.finest;
   column.lines = table.lines;
   column.unit = header.time_unit;
+  column.times.reserve(table.rows());
   for (std::size_t row = 0; row < table.rows(); ++row) column.times.push_back(table.at(row, *header.time_column));
   const bool in_seconds = factor == 1;
   EvenTimes even = even_times(column, stated && !in_seconds ? *stated / factor : stated, file);

@@ -8,7 +8,6 @@ namespace pilotis {
 
 namespace {
 
-constexpr std::string_view blanks = " \t";
 constexpr char dos_end_of_file = 0x1A;
 
 char lower(char c) { return c >= 'A' && c <= 'Z' ? static_cast<char>(c - 'A' + 'a') : c; }
@@ -77,10 +76,15 @@ std::vector<TextLine> lines_of(std::string_view content) {
   return lines;
 }
 
+// Loops of its own: the library's searches for one of several characters are slow on short texts.
 std::string_view stripped(std::string_view text) {
-  const std::size_t first = text.find_first_not_of(blanks);
-  if (first == std::string_view::npos) return {};
-  return text.substr(first, text.find_last_not_of(blanks) - first + 1);
+  while (!text.empty() && is_blank(text.front())) text.remove_prefix(1);
+  return without_end_blanks(text);
+}
+
+std::string_view without_end_blanks(std::string_view text) {
+  while (!text.empty() && is_blank(text.back())) text.remove_suffix(1);
+  return text;
 }
 
 std::string lower_case(std::string_view text) {
@@ -117,10 +121,11 @@ std::string_view first_number_in(std::string_view text) {
 
 std::vector<std::string_view> words_of(std::string_view text) {
   std::vector<std::string_view> words;
-  for (std::size_t begin = text.find_first_not_of(blanks); begin != std::string_view::npos;) {
-    const std::size_t end = std::min(text.find_first_of(blanks, begin), text.size());
-    words.push_back(text.substr(begin, end - begin));
-    begin = text.find_first_not_of(blanks, end);
+  for (std::size_t at = 0; at < text.size();) {
+    while (at < text.size() && is_blank(text[at])) ++at;
+    const std::size_t begin = at;
+    while (at < text.size() && !is_blank(text[at])) ++at;
+    if (at > begin) words.push_back(text.substr(begin, at - begin));
   }
   return words;
 }

@@ -36,7 +36,9 @@ class LineCursor {
 // All lines at once.
 std::vector<TextLine> lines_of(std::string_view content);
 
+constexpr bool is_blank(char c) { return c == ' ' || c == '\t'; }
 std::string_view stripped(std::string_view text);             // without blanks and tabs at both ends
+std::string_view without_end_blanks(std::string_view text);   // without those at the end
 std::string lower_case(std::string_view text);                // ASCII letters only
 bool holds(std::string_view text, std::string_view phrase);   // ignoring the case of ASCII letters
 bool begins(std::string_view text, std::string_view phrase);  // the same

@@ -17,10 +17,8 @@
 namespace pilotis {
 namespace {
 
-constexpr std::size_t samples = 300'000;
-
 // A swelling and dying sine of many digits, rounded to three decimals; its mean is not 0.
-Samples shaking(double size) {
+Samples shaking(double size, std::size_t samples) {
   Samples values;
   for (std::size_t i = 0; i < samples; ++i) {
     const double t = static_cast<double>(i) / static_cast<double>(samples);
@@ -46,12 +44,13 @@ struct Case {
   const char* name;
   std::string (*make)(const Samples&);
   double size;  // of the peak, in the unit of the format
+  std::size_t samples = 300'000;
 };
 constexpr Case cases[] = {
     {"PEER", invented_peer, 1},
     {"COSMOS", invented_cosmos, 400},
     {"CSMIP_volume_2", invented_csmip_volume2, 400},
-    {"CSMIP_volume_1_pairs", invented_csmip_volume1_pairs, 5},
+    {"CSMIP_volume_1_pairs", invented_csmip_volume1_pairs, 5, 90'000} /* times below 1000 s */,
     {"SMC", invented_smc, 400},
     {"K_NET", invented_knet, 400e3},
     {"DYNA_one_value_a_line", invented_esm_dyna, 400},
@@ -72,24 +71,24 @@ std::vector<std::string_view> numbers_of(std::string_view text) {
 }
 
 // Reading it must give as many samples as were written, and a peak of the right size, before any time is taken.
-bool reads_right(const std::string& content) {
+bool reads_right(const std::string& content, const Case& one) {
   const FileOfRecords file = read_record_content(content, "made");
   for (const RecordComponent& component : file.components)
-    if (component.record.samples.size() != samples) return false;
+    if (component.record.samples.size() != one.samples) return false;
   return peak_of(file.components.front().record).value != 0;
 }
 
 void whole_reader(benchmark::State& state, const Case& one) {
-  const std::string content = one.make(shaking(one.size));
-  if (!reads_right(content)) return state.SkipWithError("it is not read as it was written");
+  const std::string content = one.make(shaking(one.size, one.samples));
+  if (!reads_right(content, one)) return state.SkipWithError("it is not read as it was written");
   for (auto _ : state) benchmark::DoNotOptimize(read_record_content(content, "made"));
   state.SetBytesProcessed(static_cast<std::int64_t>(state.iterations() * content.size()));
 }
 
 void bare_parser(benchmark::State& state, const Case& one) {
-  const std::string content = one.make(shaking(one.size));
+  const std::string content = one.make(shaking(one.size, one.samples));
   const std::vector<std::string_view> numbers = numbers_of(content);
-  if (numbers.size() < samples) return state.SkipWithError("there are too few numbers");
+  if (numbers.size() < one.samples) return state.SkipWithError("there are too few numbers");
   for (auto _ : state)
     for (std::string_view number : numbers) {
       double value = 0;

@@ -8,6 +8,7 @@
 #include "apps/commands.hpp"
 #include "core/error.hpp"
 #include "integrators/catalogue.hpp"
+#include "io/records/components.hpp"
 #include "io/records/file.hpp"
 #include "io/study/building_file.hpp"
 
@@ -83,10 +84,13 @@ Told told_of_toml(const fs::path& file, const RecordHints& hints) {
   return {study_text(study), study_json(study), study.notes};
 }
 
-Told told_of_record(const fs::path& file, const RecordHints& hints) {
-  const RecordFile record = read_record(file, hints);
-  Told told{record_text(file.string(), record), record_json(file.string(), record), {}};
-  for (const std::string& note : record.notes) told.notes.push_back(fmt::format("{}: {}", file.string(), note));
+Told told_of_record(const fs::path& path, const RecordHints& hints) {
+  const FileOfRecords file = read_record_file(path, hints);
+  Told told{record_text(path.string(), file), record_json(path.string(), file), {}};
+  for (const std::string& note : file.notes) told.notes.push_back(fmt::format("{}: {}", path.string(), note));
+  for (const RecordComponent& component : file.components)
+    for (const std::string& note : component.notes)
+      told.notes.push_back(fmt::format("{}: {}: {}", path.string(), component_label(component), note));
   return told;
 }
 

@@ -152,11 +152,23 @@ nlohmann::ordered_json building_file_json(const StudyBuilding& building) {
           {"building", building_json(building)}};
 }
 
-nlohmann::ordered_json record_json(const std::string& file, const RecordFile& record) {
-  ordered_json json = {{"file", file}, {"kind", "record"}, {"format", record.format}, {"unit_in_file", record.unit}};
-  add_record(record.record, json);
-  json["notes"] = record.notes;
-  return json;
+nlohmann::ordered_json record_json(const std::string& file, const FileOfRecords& records) {
+  ordered_json components = ordered_json::array();
+  for (const RecordComponent& component : records.components) {
+    ordered_json json = {{"name", component.name}};
+    if (component.channel) json["channel"] = *component.channel;
+    if (component.azimuth) json["azimuth_deg"] = *component.azimuth;
+    json["unit_in_file"] = component.unit;
+    add_record(component.record, json);
+    json["duration_s"] = component.record.duration() - component.record.first_sample_at;
+    json["notes"] = component.notes;
+    components.push_back(json);
+  }
+  return {{"file", file},
+          {"kind", "record"},
+          {"format", records.format},
+          {"components", components},
+          {"notes", records.notes}};
 }
 
 }  // namespace pilotis

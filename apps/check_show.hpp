@@ -12,12 +12,12 @@ namespace pilotis {
 // Text for the screen, numbers in the study's units.
 std::string study_text(const Study& study);
 std::string building_file_text(const StudyBuilding& building);
-std::string record_text(const std::string& file, const RecordFile& record);
+std::string record_text(const std::string& file, const FileOfRecords& records);
 
 // The same as data; every number in SI, with the unit at the end of its key where it has one ("height_m").
 nlohmann::ordered_json study_json(const Study& study);
 nlohmann::ordered_json building_file_json(const StudyBuilding& building);
-nlohmann::ordered_json record_json(const std::string& file, const RecordFile& record);
+nlohmann::ordered_json record_json(const std::string& file, const FileOfRecords& records);
 
 struct BuildingFacts {
   double height = 0, weight = 0;      // m, N

@@ -8,6 +8,7 @@
 #include "apps/text_table.hpp"
 #include "apps/units_text.hpp"
 #include "integrators/catalogue.hpp"
+#include "io/records/components.hpp"
 
 namespace pilotis {
 
@@ -135,15 +136,27 @@ std::string building_file_text(const StudyBuilding& building) {
                      building_text(building, building.units));
 }
 
-std::string record_text(const std::string& file, const RecordFile& record) {
-  const PeakSample peak = peak_of(record.record);
-  return fmt::format(
-      "{}: record\n  format    {}\n  unit      {}\n  samples   {}\n  step      {:g} s\n  duration  {:g} s ({:g} s to "
-      "{:g} s)\n"
-      "  peak      {:.6g} g = {:.6g} m/s2 at {:g} s\n",
-      file, record.format, record.unit, record.record.samples.size(), record.record.step,
-      record.record.duration() - record.record.first_sample_at, record.record.first_sample_at, record.record.duration(),
-      peak.value / standard_gravity, peak.value, peak.time);
+std::string record_text(const std::string& file, const FileOfRecords& records) {
+  TextTable table({{"component", Align::left},
+                   {"azimuth (deg)"},
+                   {"samples"},
+                   {"step (s)"},
+                   {"starts at (s)"},
+                   {"duration (s)"},
+                   {"peak (g)"},
+                   {"peak (m/s2)"},
+                   {"at (s)"},
+                   {"unit in file", Align::left}});
+  for (const RecordComponent& component : records.components) {
+    const Accelerogram& record = component.record;
+    const PeakSample peak = peak_of(record);
+    table.add_row({component_label(component), component.azimuth ? number(*component.azimuth) : "-",
+                   fmt::format("{}", record.samples.size()), number(record.step), number(record.first_sample_at),
+                   number(record.duration() - record.first_sample_at),
+                   fmt::format("{:.4g}", peak.value / standard_gravity), number(peak.value), number(peak.time),
+                   component.unit});
+  }
+  return fmt::format("{}: record, format {}\n{}", file, records.format, table.text());
 }
 
 }  // namespace pilotis

@@ -42,9 +42,20 @@ void require_sensible_size(const fs::path& file) {
                       fmt::format("a record of one component has at most {}", most_bytes));
 }
 
+constexpr std::string_view controls_of_text = "\t\n\r\f\v";
+
 bool is_control(char c) {
-  constexpr std::string_view allowed_in_text = "\t\n\r\f\v\x1A";
-  return static_cast<unsigned char>(c) < ' ' && allowed_in_text.find(c) == std::string_view::npos;
+  return static_cast<unsigned char>(c) < ' ' && controls_of_text.find(c) == std::string_view::npos;
+}
+
+// Written without branches, so that the compiler takes many bytes at a time.
+bool has_controls(std::string_view text) {
+  unsigned char found = 0;
+  for (const char c : text) {
+    const auto byte = static_cast<unsigned char>(c);
+    found |= static_cast<unsigned char>((byte < 9) | ((byte > 13) & (byte < 32)));
+  }
+  return found != 0;
 }
 
 }  // namespace
@@ -64,16 +75,27 @@ std::string content_of(const fs::path& file) {
   return content;
 }
 
-void require_text(std::string_view content, const std::string& where) {
+std::string_view text_of(std::string_view content, const std::string& where) {
+  constexpr std::string_view padding("\x1A\0 \t\r\n", 6);
   if (content.starts_with("\xFF\xFE") || content.starts_with("\xFE\xFF"))
     throw input_error(where, "found UTF-16 text", "save the file as UTF-8 or plain ASCII text");
-  const auto found = std::find_if(content.begin(), content.end(), is_control);
-  if (found == content.end()) return;
-  const auto line = 1 + std::count(content.begin(), found, '\n');
-  throw input_error(fmt::format("{}:{}", where, line),
-                    fmt::format("found binary content (byte 0x{:02X} at offset {})", static_cast<unsigned char>(*found),
-                                found - content.begin()),
-                    "a record must be text: export it as two columns, time and acceleration, with their units");
+  const std::size_t end = std::min(content.find(padding.front()), content.size());
+  const std::string_view text = content.substr(0, end);
+  const auto line_of = [&](std::size_t offset) {
+    return fmt::format("{}:{}", where,
+                       1 + std::count(content.begin(), content.begin() + static_cast<long>(offset), '\n'));
+  };
+  if (has_controls(text)) {
+    const auto found = static_cast<std::size_t>(std::find_if(text.begin(), text.end(), is_control) - text.begin());
+    throw input_error(line_of(found),
+                      fmt::format("found binary content (byte 0x{:02X} at offset {})",
+                                  static_cast<unsigned char>(text[found]), found),
+                      "a record must be text: export it as two columns, time and acceleration, with their units");
+  }
+  if (content.find_first_not_of(padding, end) != std::string_view::npos)
+    throw input_error(line_of(end), "found more text behind an end-of-file mark (control-Z)",
+                      "remove the mark, or what stands behind it");
+  return text;
 }
 
 }  // namespace pilotis

@@ -11,7 +11,8 @@ namespace pilotis {
 // be; outside when permission or the disk is the trouble.
 std::string content_of(const std::filesystem::path& file);
 
-// Refuses what is not text: zero bytes and the like. `where` is the file. Throws Error (input).
-void require_text(std::string_view content, const std::string& where);
+// The text of a file: what stands before a DOS end-of-file mark (control-Z). Behind it only more of them, zero bytes
+// and blanks may stand. Refuses what is not text: zero bytes and the like. `where` is the file. Throws Error (input).
+std::string_view text_of(std::string_view content, const std::string& where);
 
 }  // namespace pilotis

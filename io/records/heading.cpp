@@ -3,7 +3,6 @@
 #include <algorithm>
 #include <array>
 #include <initializer_list>
-#include <regex>
 
 #include "core/units/units.hpp"
 #include "io/records/table.hpp"
@@ -60,6 +59,14 @@ std::vector<std::string_view> bracketed_cells(std::string_view line) {
   return cells;
 }
 
+// "acceleration in units of g", "acceleration in g": the word at the end; `in` is where " in " begins.
+std::string_view unit_after_in(std::string_view cell, std::size_t in) {
+  if (in == std::string::npos) return {};
+  std::string_view rest = stripped(cell.substr(in + 4));
+  if (begins(rest, "units of ")) rest = stripped(rest.substr(9));
+  return rest.find_first_of(" \t") == std::string_view::npos ? rest : std::string_view{};
+}
+
 }  // namespace
 
 std::string known_unit(std::string_view unit) {
@@ -70,25 +77,25 @@ std::string known_unit(std::string_view unit) {
 }
 
 Heading heading_of(std::string_view cell) {
-  static const std::regex brackets(R"(^([^(\[]*)[(\[]\s*([^)\]]*?)\s*[)\]]$)");
-  static const std::regex in_unit(R"(^(.*?)\s+in\s+(?:units\s+of\s+)?(\S+)$)", std::regex::icase);
   Heading heading;
   heading.text = cell;
-  std::string name = heading.text;
-  std::smatch match;
-  if (std::regex_match(heading.text, match, brackets)) {
-    name = match[1];
-    heading.unit = known_unit(match[2].str());
+  std::string_view name = cell;
+  const std::size_t open = cell.find_first_of("(["), close = cell.find_first_of(")]", open);
+  const std::size_t in = lower_case(cell).rfind(" in ");
+  if (open != std::string_view::npos && close == cell.size() - 1) {
+    name = cell.substr(0, open);
+    heading.unit = known_unit(stripped(cell.substr(open + 1, close - open - 1)));
     heading.bracketed = true;
-  } else if (std::regex_match(heading.text, match, in_unit)) {
-    name = match[1];
-    heading.unit = known_unit(match[2].str());
+  } else if (const std::string_view unit = unit_after_in(cell, in); !unit.empty()) {
+    name = cell.substr(0, in);
+    heading.unit = known_unit(unit);
   } else if (const std::string unit = known_unit(cell); role_by_name(name) == Role::unknown) {
     if (role_by_unit(unit) != Role::unknown) heading.unit = unit;
   }
+  const bool only_unit = !heading.unit.empty() && name.size() == cell.size();
+  if (!only_unit) heading.name = stripped(name);
   heading.role = role_by_name(name);
-  const bool unnamed = stripped(name).empty() || name == heading.text;
-  if (heading.role == Role::unknown && !heading.unit.empty() && (unnamed || heading.bracketed))
+  if (heading.role == Role::unknown && !heading.unit.empty() && (heading.name.empty() || heading.bracketed))
     heading.role = role_by_unit(heading.unit);
   return heading;
 }

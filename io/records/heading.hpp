@@ -11,6 +11,7 @@ enum class Role { unknown, time, acceleration, velocity, displacement };
 
 struct Heading {
   std::string text;           // as written
+  std::string name;           // without the unit; empty when the cell is only a unit
   Role role = Role::unknown;  // by its name, else by its unit
   std::string unit;           // in brackets or after "in"; a whole cell that is a unit; empty when none
   bool bracketed = false;     // the unit stands in ( ) or [ ]

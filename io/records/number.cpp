@@ -18,14 +18,38 @@ namespace {
 std::string normal_notation(std::string_view token, char decimal_sign) {
   if (decimal_sign == ',' && token.find('.') != std::string_view::npos) return {};
   if (token.starts_with('+') && !token.substr(1).starts_with('-')) token.remove_prefix(1);
-  std::string text = lower_case(token);
-  if (text.find_first_of("0123456789") == std::string::npos) return text;  // perhaps "nan" or "inf"
-  std::replace(text.begin(), text.end(), 'd', 'e');
-  if (decimal_sign == ',') std::replace(text.begin(), text.end(), ',', '.');
-  return text;
+  std::string text(token);
+  bool has_digit = false;
+  for (char& c : text) {
+    if (c == 'd' || c == 'D') c = 'e';
+    if (c == decimal_sign) c = '.';
+    has_digit |= c >= '0' && c <= '9';
+  }
+  return has_digit ? text : std::string(token);  // perhaps "nan" or "inf"
 }
 
+bool begins_exponent(char c) { return c == 'e' || c == 'E' || c == 'd' || c == 'D'; }
+
 }  // namespace
+
+bool parse_plainly(std::string_view field, double& value) noexcept {
+  const char *begin = field.data(), *end = begin + field.size();
+  while (begin != end && *begin == ' ') ++begin;
+  const auto [rest, error] = std::from_chars(begin, end, value);
+  if (error != std::errc{} || !std::isfinite(value)) return false;
+  for (const char* blank = rest; blank != end; ++blank)
+    if (*blank != ' ') return false;
+  return true;
+}
+
+bool take_plainly(std::string_view& text, double& value) noexcept {
+  const char *begin = text.data(), *end = begin + text.size();
+  while (begin != end && *begin == ' ') ++begin;
+  const auto [rest, error] = std::from_chars(begin, end, value);
+  if (error != std::errc{} || !std::isfinite(value) || (rest != end && *rest != ' ')) return false;
+  text.remove_prefix(static_cast<std::size_t>(rest - text.data()));
+  return true;
+}
 
 ParsedNumber parse_number(std::string_view token, char decimal_sign) {
   const std::string text = normal_notation(token, decimal_sign);
@@ -33,7 +57,7 @@ ParsedNumber parse_number(std::string_view token, char decimal_sign) {
   const auto [end, error] = std::from_chars(text.data(), text.data() + text.size(), value);
   if (error == std::errc::invalid_argument || end != text.data() + text.size()) return {};
   if (error == std::errc::result_out_of_range) {
-    const bool tiny = text.find("e-") != std::string::npos;
+    const bool tiny = text.find("e-") != std::string::npos || text.find("E-") != std::string::npos;
     return tiny ? ParsedNumber{ParsedNumber::Kind::number, 0} : ParsedNumber{ParsedNumber::Kind::not_finite, 0};
   }
   if (!std::isfinite(value)) return {ParsedNumber::Kind::not_finite, 0};
@@ -51,23 +75,22 @@ double require_number(std::string_view token, const std::string& where, char dec
 }
 
 Precision printed_precision(std::string_view token) {
-  const std::string text = lower_case(token);
-  const std::size_t mantissa_end = std::min(text.find_first_of("ed"), text.size());
   Precision precision;
   bool after_sign = false;
-  for (char c : text.substr(0, mantissa_end)) {
+  std::size_t at = 0;
+  for (; at < token.size() && !begins_exponent(token[at]); ++at) {
+    const char c = token[at];
     if (c == '.' || c == ',') after_sign = true;
     if (c < '0' || c > '9') continue;
     if (after_sign) ++precision.decimals;
     if (c != '0' || precision.digits > 0) ++precision.digits;
   }
-  if (mantissa_end < text.size()) {
-    std::size_t begin = mantissa_end + 1;
-    if (text.substr(begin).starts_with('+')) ++begin;
-    int exponent = 0;
-    std::from_chars(text.data() + begin, text.data() + text.size(), exponent);
-    precision.decimals -= exponent;
-  }
+  if (at == token.size()) return precision;
+  ++at;
+  if (at < token.size() && token[at] == '+') ++at;
+  int exponent = 0;
+  std::from_chars(token.data() + at, token.data() + token.size(), exponent);
+  precision.decimals -= exponent;
   return precision;
 }
 

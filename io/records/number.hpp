@@ -18,7 +18,15 @@ struct ParsedNumber {
 };
 ParsedNumber parse_number(std::string_view token, char decimal_sign = '.');
 
-// The same; throws Error (input) at `where` for everything but a finite number.
+// The usual case fast: one finite number in decimal notation with a point and an E, blanks around it. False for all
+// else, which parse_number then judges.
+bool parse_plainly(std::string_view field, double& value) noexcept;
+
+// The same for the first number of a text, which is taken off with the blanks before it. A blank or the end must
+// follow.
+bool take_plainly(std::string_view& text, double& value) noexcept;
+
+// As parse_number; throws Error (input) at `where` for everything but a finite number.
 double require_number(std::string_view token, const std::string& where, char decimal_sign = '.');
 
 // How finely a number is printed: "12.340" has 3 decimals and 5 digits, "1.5E-03" has 4 and 2.

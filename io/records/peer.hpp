@@ -17,6 +17,6 @@ inline constexpr std::string_view peer_name = "PEER database header";
 bool recognises_peer(std::string_view content);
 
 // Throws Error (input) naming file, line, what was found and what is allowed.
-RecordFile read_peer(std::string_view content, const std::string& where, const RecordHints& hints);
+FileOfRecords read_peer(std::string_view content, const std::string& where, const RecordHints& hints);
 
 }  // namespace pilotis

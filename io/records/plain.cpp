@@ -6,6 +6,7 @@
 
 #include "core/error.hpp"
 #include "core/units/units.hpp"
+#include "io/records/components.hpp"
 #include "io/records/even_times.hpp"
 #include "io/records/plain_header.hpp"
 #include "io/records/stated.hpp"
@@ -27,9 +28,10 @@ EvenTimes times_of(const Table& table, const PlainHeader& header, const RecordHi
   std::optional<double> stated;
   if (header.statements.step || hints.step) stated = agreed_step(header.statements, hints, file);
   TimeColumn column;
-  column.finest = table.finest[*header.time_column];
+  column.finest = table.finest;
   column.lines = table.lines;
   column.unit = header.time_unit;
+  column.times.reserve(table.rows());
   for (std::size_t row = 0; row < table.rows(); ++row) column.times.push_back(table.at(row, *header.time_column));
   const bool in_seconds = factor == 1;
   EvenTimes even = even_times(column, stated && !in_seconds ? *stated / factor : stated, file);
@@ -58,39 +60,64 @@ double first_sample_of(const EvenTimes& even, const Statements& says, const Reco
   return first;
 }
 
-void read_timed(const Table& table, const PlainHeader& header, const RecordHints& hints, const std::string& where,
-                RecordFile& file) {
+// Step and first sample, alike for all columns.
+struct Timing {
+  double step = 0, first_sample_at = 0;  // s
+  std::vector<std::string> notes;
+};
+
+Timing timing_by_column(const Table& table, const PlainHeader& header, const RecordHints& hints,
+                        const std::string& where) {
+  Timing timing;
   const EvenTimes even = times_of(table, header, hints, where);
-  if (!header.time_unit_stated) file.notes.push_back("the times have no unit: taken as seconds");
+  if (!header.time_unit_stated) timing.notes.push_back("the times have no unit: taken as seconds");
   if (even.finer_than_printed)
-    file.notes.push_back(
+    timing.notes.push_back(
         fmt::format("the times are rounded: a step of {:.10g} s fits them best; state it to be exact", even.step));
-  file.record.step = even.step;
-  file.record.first_sample_at = first_sample_of(even, header.statements, hints, where, file.notes);
+  timing.step = even.step;
+  timing.first_sample_at = first_sample_of(even, header.statements, hints, where, timing.notes);
+  return timing;
+}
+
+Timing timing_by_statement(const PlainHeader& header, const RecordHints& hints, const std::string& where) {
+  Timing timing;
+  timing.step = agreed_step(header.statements, hints, where);
+  timing.first_sample_at = agreed_first_sample(header.statements, hints, timing.step, where, timing.notes);
+  return timing;
+}
+
+RecordComponent component_of(const Table& table, const PlainColumn& column, Statements says, const Timing& timing,
+                             const RecordHints& hints, const std::string& where) {
+  if (column.unit) state_unit(says, *column.unit, where);
+  RecordComponent component;
+  component.name = column.name;
+  component.azimuth = azimuth_of_name(column.name);
+  component.unit = agreed_unit(says, hints, where);
+  component.record.step = timing.step;
+  component.record.first_sample_at = timing.first_sample_at;
+  const double factor = si_factor(component.unit, Dimension::acceleration, where);
+  component.record.samples.reserve(table.rows());
+  for (std::size_t row = 0; row < table.rows(); ++row)
+    component.record.samples.push_back(table.at(row, column.index) * factor);
+  return component;
 }
 
 }  // namespace
 
 bool recognises_plain(std::string_view) { return true; }
 
-RecordFile read_plain(std::string_view content, const std::string& where, const RecordHints& hints) {
+FileOfRecords read_plain(std::string_view content, const std::string& where, const RecordHints& hints) {
   const PlainText text = sorted_lines(content, where);
   const PlainHeader header = plain_header(text, columns_in(text.rows.front()), where);
-  const Table table = read_table(text.rows, where);
+  const Table table = read_table(text.rows, header.time_column, where);
   require_two_samples(table, where);
-
-  RecordFile file;
+  Timing timing =
+      header.time_column ? timing_by_column(table, header, hints, where) : timing_by_statement(header, hints, where);
+  FileOfRecords file;
   file.format = plain_name;
-  if (header.time_column) {
-    read_timed(table, header, hints, where, file);
-  } else {
-    file.record.step = agreed_step(header.statements, hints, where);
-    file.record.first_sample_at = agreed_first_sample(header.statements, hints, file.record.step, where, file.notes);
-  }
-  file.unit = agreed_unit(header.statements, hints, where);
-  const double factor = si_factor(file.unit, Dimension::acceleration, where);
-  for (std::size_t row = 0; row < table.rows(); ++row)
-    file.record.samples.push_back(table.at(row, header.value_column) * factor);
+  for (const PlainColumn& column : header.values)
+    file.components.push_back(component_of(table, column, header.statements, timing, hints, where));
+  file.notes = std::move(timing.notes);
   return file;
 }
 

@@ -5,8 +5,9 @@
 // names
 // ("time (s), acceleration (m/s^2)") and one of units. A line, comment or not, may state
 //     units: g        step: 0.02 s        first sample at: 0.02 s
-// More than two columns need names that single out the acceleration. Unit and step come from the file or the study, are
-// never guessed, and must agree where both speak. Times start at 0 or at one step, else they are shifted with a note.
+// More than two columns need names that tell which are accelerations; each of these is one component. Unit and step
+// come from the file or the study, are never guessed, and must agree where both speak. Times start at 0 or at one step,
+// else they are shifted with a note.
 #pragma once
 
 #include <string>
@@ -22,6 +23,6 @@ inline constexpr std::string_view plain_name = "plain text";
 bool recognises_plain(std::string_view content);
 
 // Throws Error (input) naming file, line, what was found and what is allowed.
-RecordFile read_plain(std::string_view content, const std::string& where, const RecordHints& hints);
+FileOfRecords read_plain(std::string_view content, const std::string& where, const RecordHints& hints);
 
 }  // namespace pilotis

@@ -3,7 +3,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
-#include <regex>
+#include <array>
 
 #include "core/error.hpp"
 #include "core/units/units.hpp"
@@ -36,25 +36,52 @@ std::string unit_in(const std::string& text) {
   return known_unit(stripped(text));
 }
 
+// "time step (s): 0.02" taken apart.
+struct KeyedLine {
+  std::string key;  // lower case, single blanks, without its unit
+  std::string unit;
+  std::string value;
+};
+
+KeyedLine keyed(std::string_view text) {
+  constexpr std::size_t longest_key = 60;
+  KeyedLine line;
+  const std::size_t mark = text.find_first_of(":=");
+  if (mark > longest_key) return line;
+  std::string key = lower_case(text.substr(0, mark));
+  std::replace(key.begin(), key.end(), '_', ' ');
+  if (const std::size_t open = key.find_first_of("(["); open != std::string::npos) {
+    const std::size_t close = key.find_first_of(")]", open);
+    line.unit = stripped(std::string_view(key).substr(open + 1, close - open - 1));
+    key.resize(open);
+  }
+  for (std::string_view word : words_of(key)) line.key += (line.key.empty() ? "" : " ") + std::string(word);
+  line.value = stripped(text.substr(mark + 1));
+  return line;
+}
+
+constexpr std::array<std::string_view, 6> unit_keys{
+    "unit", "units", "acceleration unit", "acceleration units", "unit of acceleration", "units of acceleration"};
+constexpr std::array<std::string_view, 6> step_keys{"step",    "time step",         "dt",
+                                                    "delta t", "sampling interval", "time interval"};
+constexpr std::array<std::string_view, 2> first_keys{"first sample", "first sample at"};
+
+bool is_among(const std::string& key, const auto& keys) {
+  return std::find(keys.begin(), keys.end(), key) != keys.end();
+}
+
 // Lines such as "units: g" and "step: 0.02 s". True when the line is one.
 bool states_a_fact(const TextLine& line, PlainHeader& header, const std::string& file) {
-  static const std::regex units(R"((?:acceleration\s+)?units?(?:\s+of\s+acceleration)?\s*[:=]\s*(.+))",
-                                std::regex::icase);
-  static const std::regex step(
-      R"((?:step|time\s+step|dt|delta\s+t|sampling\s+interval|time\s+interval)\s*(?:[(\[](\w+)[)\]])?\s*[:=]\s*(.+))",
-      std::regex::icase);
-  static const std::regex first(R"(first[\s_]+sample(?:[\s_]+at)?\s*(?:[(\[](\w+)[)\]])?\s*[:=]\s*(.+))",
-                                std::regex::icase);
-  const std::string text(stripped(line.text));
+  const KeyedLine said = keyed(line.text);
+  if (said.key.empty() || said.value.empty()) return false;
   const std::string where = at_line(file, line.number);
   Statements& says = header.statements;
-  std::smatch match;
-  if (std::regex_match(text, match, units))
-    state_unit(says, {unit_in(match[1]), line.number}, file);
-  else if (std::regex_match(text, match, step))
-    state_time(says.step, {time_in(match[2], match[1], where), line.number}, "the step", file);
-  else if (std::regex_match(text, match, first))
-    state_time(says.first_sample_at, {time_in(match[2], match[1], where), line.number}, "the first sample", file);
+  if (is_among(said.key, unit_keys))
+    state_unit(says, {unit_in(said.value), line.number}, file);
+  else if (is_among(said.key, step_keys))
+    state_time(says.step, {time_in(said.value, said.unit, where), line.number}, "the step", file);
+  else if (is_among(said.key, first_keys))
+    state_time(says.first_sample_at, {time_in(said.value, said.unit, where), line.number}, "the first sample", file);
   else
     return false;
   return true;
@@ -124,15 +151,10 @@ std::vector<std::size_t> columns_of(const NamedColumns& names, Role role) {
                     "commas need ; or tabs between columns");
 }
 
-// The column of values among named ones: the acceleration, or what is left beside the time.
-std::size_t named_value_column(const NamedColumns& names, const std::optional<std::size_t>& time,
-                               const std::string& where) {
-  const std::vector<std::size_t> accelerations = columns_of(names, Role::acceleration);
-  if (accelerations.size() == 1) return accelerations.front();
-  if (accelerations.size() > 1)
-    refuse_columns(where, fmt::format("found {} columns of acceleration, {} and {} among them", accelerations.size(),
-                                      in_quotes(names.headings[accelerations[0]].text),
-                                      in_quotes(names.headings[accelerations[1]].text)));
+// The columns of values among named ones: the accelerations, or what is left beside the time.
+std::vector<std::size_t> named_value_columns(const NamedColumns& names, const std::optional<std::size_t>& time,
+                                             const std::string& where) {
+  if (const auto accelerations = columns_of(names, Role::acceleration); !accelerations.empty()) return accelerations;
   const std::size_t others = names.headings.size() - (time ? 1 : 0);
   if (others != 1)
     refuse_columns(where, fmt::format("found {} columns, none of them named an acceleration", names.headings.size()));
@@ -141,7 +163,7 @@ std::size_t named_value_column(const NamedColumns& names, const std::optional<st
   if (heading.role != Role::unknown)
     throw input_error(where, fmt::format("found {}, which is no acceleration", in_quotes(heading.text)),
                       "the acceleration of the ground is needed");
-  return left;
+  return {left};
 }
 
 void choose_named(const NamedColumns& names, PlainHeader& header, const std::string& file) {
@@ -151,9 +173,11 @@ void choose_named(const NamedColumns& names, PlainHeader& header, const std::str
   if (!times.empty()) header.time_column = times.front();
   const bool first_unnamed = names.headings.size() == 2 && times.empty() && names.headings[0].role == Role::unknown;
   if (first_unnamed) header.time_column = 0;
-  header.value_column = named_value_column(names, header.time_column, where);
-  const Heading& value = names.headings[header.value_column];
-  if (!value.unit.empty()) state_unit(header.statements, {value.unit, names.line}, file);
+  for (const std::size_t index : named_value_columns(names, header.time_column, where)) {
+    const Heading& heading = names.headings[index];
+    header.values.push_back({index, heading.name, std::nullopt});
+    if (!heading.unit.empty()) header.values.back().unit = StatedUnit{heading.unit, names.line};
+  }
   if (times.empty() || names.headings[times.front()].unit.empty()) return;
   header.time_unit = names.headings[times.front()].unit;
   header.time_unit_stated = true;
@@ -165,7 +189,7 @@ void choose_unnamed(std::size_t columns, const PlainText& text, PlainHeader& hea
     refuse_columns(at_line(file, text.rows.front().number),
                    fmt::format("found {} columns in {}", columns, in_quotes(text.rows.front().text)));
   if (columns == 2) header.time_column = 0;
-  header.value_column = columns - 1;
+  header.values.push_back({columns - 1, {}, {}});
 }
 
 }  // namespace

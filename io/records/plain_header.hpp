@@ -11,12 +11,19 @@
 
 namespace pilotis {
 
+// A column of samples.
+struct PlainColumn {
+  std::size_t index = 0;           // counted from 0
+  std::string name;                // by its heading; empty when there is none
+  std::optional<StatedUnit> unit;  // by its heading
+};
+
 struct PlainHeader {
   Statements statements;
   std::string time_unit = "s";
   bool time_unit_stated = false;
   std::optional<std::size_t> time_column;  // counted from 0; empty: samples only
-  std::size_t value_column = 0;
+  std::vector<PlainColumn> values;         // at least one
 };
 
 // Throws Error (input) when a statement cannot be understood, statements contradict each other, the values are no

@@ -19,6 +19,8 @@ struct Wanted {
   fs::path file;
   std::string name;   // empty: from the file name
   ValueReader place;  // for messages
+
+  std::string full_name() const { return file.filename().string(); }
 };
 
 void add_table(TableReader table, const ValueReader& place, const fs::path& folder, std::vector<Wanted>& wanted) {

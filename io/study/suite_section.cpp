@@ -22,6 +22,12 @@ struct Wanted {
   double factor = 1;
   RecordHints hints;
   ValueReader place;  // for messages
+
+  // The file name, and the component where the study names one.
+  std::string full_name() const {
+    const std::string plain = file.filename().string();
+    return hints.component ? fmt::format("{} {}", plain, *hints.component) : plain;
+  }
 };
 
 std::optional<std::string> unit_given(const TableReader& table) {
@@ -45,12 +51,23 @@ double factor_of(const TableReader& table) {
   return factor;
 }
 
+// A motion is one component so far: core/motion/accelerogram.hpp.
+void refuse_several(const TableReader& table) {
+  for (const char* key : {"files", "components"})
+    if (const auto several = table.find(key))
+      throw several->wrong(fmt::format("found {}: two components that shake the building together", key),
+                           "a motion has one component for now; give its file, and its component where the file holds "
+                           "several: { file = \"...\", component = \"...\" }");
+}
+
 void add_table(TableReader table, const ValueReader& place, const fs::path& folder, const RecordHints& suite,
                std::vector<Wanted>& wanted) {
-  table.known_keys({"file", "units", "step", "factor", "first_sample_at", "name"});
+  table.known_keys({"file", "component", "units", "step", "factor", "first_sample_at", "name", "files", "components"});
+  refuse_several(table);
   const ValueReader file = table.at("file", "name the file of the motion");
   RecordHints hints = hints_of(table, suite);
   hints.first_sample_at = table.quantity_if_given(first_sample_at);
+  if (const auto component = table.find("component")) hints.component = component->text();
   const std::string name = table.text_or("name", "");
   const std::vector<fs::path> files = files_named(file, folder);
   if (!name.empty() && files.size() > 1)

@@ -11,8 +11,8 @@
 
 namespace pilotis {
 
-// Names those without one by their file without extension; with it where two would be called alike. Throws Error at the
-// place of the first that is still called like another. T has file (path), name (text) and place (ValueReader); `thing`
+// Names those without one by their file without extension; by their full_name() where two would be called alike. Throws Error at the
+// place of the first that is still called like another. T has file (path), name (text), full_name() and place (ValueReader); `thing`
 // is what one of them is called.
 template <class T>
 void name_by_file(std::vector<T>& listed, std::string_view thing) {
@@ -20,7 +20,7 @@ void name_by_file(std::vector<T>& listed, std::string_view thing) {
   for (const T& one : listed) ++stems[one.name.empty() ? one.file.stem().string() : one.name];
   for (T& one : listed) {
     const std::string stem = one.file.stem().string();
-    if (one.name.empty()) one.name = stems[stem] == 1 ? stem : one.file.filename().string();
+    if (one.name.empty()) one.name = stems[stem] == 1 ? stem : one.full_name();
   }
   std::set<std::string> taken;
   for (const T& one : listed)

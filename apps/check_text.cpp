@@ -35,7 +35,11 @@ std::string motions_text(const Study& study) {
                    fmt::format("{:.4g}", peak.value / standard_gravity), fmt::format("{:.4g}", peak.value),
                    shown(peak.time), shown(motion.factor), motion.unit, motion.format, motion.file});
   }
-  return fmt::format("motions: {} (peaks with the motion's own factor)\n{}", study.motions.size(), table.text());
+  std::string text =
+      fmt::format("motions: {} (peaks with the motion's own factor)\n{}", study.motions.size(), table.text());
+  for (const Motion& motion : study.motions)
+    for (const std::string& line : motion.processing) text += fmt::format("  {}: {}\n", motion.name, line);
+  return text;
 }
 
 std::string loads_text(const Study& study) {

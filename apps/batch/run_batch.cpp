@@ -2,6 +2,7 @@
 
 #include <fmt/chrono.h>
 #include <fmt/format.h>
+#include <fmt/ranges.h>
 #include <unistd.h>
 
 #include <ctime>
@@ -24,7 +25,13 @@ namespace pilotis {
 namespace {
 
 MotionSummary summary_of(const Motion& motion) {
-  return {motion.name, motion.file, motion.digest, motion.step, motion.samples, motion.peak.value};
+  return {motion.name,
+          motion.file,
+          motion.digest,
+          motion.step,
+          motion.samples,
+          motion.peak.value,
+          fmt::format("{}", fmt::join(motion.processing, "; "))};
 }
 
 // The study and the files of its buildings: all that was asked.

@@ -40,6 +40,7 @@ struct Motion {
   double first_sample_at = 0;  // s
   long samples = 0;            // how many
   PeakSample peak;             // the factor applied
+  std::vector<std::string> processing = {};  // what was done to the record, one line each, in order
 
   // s, time of the last sample.
   double duration() const { return first_sample_at + step * static_cast<double>(samples - 1); }

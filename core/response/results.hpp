@@ -70,7 +70,8 @@ struct MotionSummary {
   std::string name, file, digest;
   double step = 0;  // s
   long samples = 0;
-  double peak = 0;  // m/s2, signed, with the motion's own factor
+  double peak = 0;              // m/s2, signed, with the motion's own factor
+  std::string processing = {};  // what was done to the record before it was used, "; " between the steps
 };
 
 struct StudyResults {

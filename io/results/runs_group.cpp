@@ -60,6 +60,8 @@ void write_motions(H5::H5File& file, const std::vector<MotionSummary>& motions) 
   group.texts("file", {"motion"}, column<std::string>(motions, &MotionSummary::file), "file the motion was read from");
   group.texts("digest", {"motion"}, column<std::string>(motions, &MotionSummary::digest),
               "SHA-256 of step, first sample time and samples (little-endian doubles)");
+  group.texts("processing", {"motion"}, column<std::string>(motions, &MotionSummary::processing),
+              "what was done to the record before it was used, in order; empty: nothing");
   group.numbers("step", {"motion"}, column<double>(motions, &MotionSummary::step), "s", "interval between samples");
   group.integers("samples", {"motion"}, column<std::int64_t>(motions, &MotionSummary::samples), "number of samples");
   group.numbers("peak", {"motion"}, column<double>(motions, &MotionSummary::peak), si_unit(Dimension::acceleration),
@@ -72,11 +74,11 @@ std::vector<MotionSummary> read_motions(const ResultFile& from) {
   std::vector<MotionSummary> motions(count);
   if (count == 0) return motions;
   const auto names = group.texts("name", count), files = group.texts("file", count),
-             digests = group.texts("digest", count);
+             digests = group.texts("digest", count), processing = group.texts("processing", count);
   const auto steps = group.numbers("step", count), samples = group.numbers("samples", count),
              peaks = group.numbers("peak", count);
   for (std::size_t i = 0; i < count; ++i)
-    motions[i] = {names[i], files[i], digests[i], steps[i], static_cast<long>(samples[i]), peaks[i]};
+    motions[i] = {names[i], files[i], digests[i], steps[i], static_cast<long>(samples[i]), peaks[i], processing[i]};
   return motions;
 }
 

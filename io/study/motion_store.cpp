@@ -6,6 +6,7 @@
 #include <mutex>
 
 #include "core/error.hpp"
+#include "core/motion/processing/rotate.hpp"
 #include "io/digest.hpp"
 
 namespace pilotis {
@@ -37,17 +38,45 @@ Accelerogram read_again(const MotionSource& source, const Motion& motion) {
 
 }  // namespace
 
+namespace {
+
+// One component, processed; `done` and the notes are added to `read`.
+RecordFile processed_component(const std::filesystem::path& path, const RecordHints& hints,
+                               const std::vector<ProcessStep>& steps, MotionRead& read) {
+  RecordFile file = read_record(path, hints);
+  for (const std::string& note : file.notes) read.notes.push_back(fmt::format("{}: {}", path.string(), note));
+  ProcessedRecord processed = process_all(steps, file.record);
+  file.record = std::move(processed.record);
+  const std::string of = hints.component ? *hints.component + ": " : "";
+  for (const std::string& line : processed.done) read.motion.processing.push_back(of + line);
+  return file;
+}
+
+}  // namespace
+
 MotionRead read_motion(const MotionSource& source) {
-  RecordFile file = read_record(source.file, source.hints);
-  for (double& sample : file.record.samples) sample *= source.factor;
   MotionRead read;
-  read.motion = {source.name,         source.file.string(),        file.format,
-                 file.unit,           digest_of(file.record),      source.factor,
-                 file.record.step,    file.record.first_sample_at, static_cast<long>(file.record.samples.size()),
-                 peak_of(file.record)};
+  RecordFile file = processed_component(source.file, source.hints, source.process, read);
+  if (source.pair) {
+    const RecordFile second = processed_component(source.pair->file, source.pair->hints, source.process, read);
+    RotatedPair turned = rotated(file.record, second.record, source.pair->angle, source.file.string());
+    file.record = std::move(turned.first);
+    read.motion.processing.push_back(turned.done);
+  }
+  for (double& sample : file.record.samples) sample *= source.factor;
+  read.motion = {source.name,
+                 source.file.string(),
+                 file.format,
+                 file.unit,
+                 digest_of(file.record),
+                 source.factor,
+                 file.record.step,
+                 file.record.first_sample_at,
+                 static_cast<long>(file.record.samples.size()),
+                 peak_of(file.record),
+                 std::move(read.motion.processing)};
   read.record = std::move(file.record);
   read.record.samples.shrink_to_fit();
-  for (const std::string& note : file.notes) read.notes.push_back(fmt::format("{}: {}", source.file.string(), note));
   return read;
 }
 

@@ -4,14 +4,24 @@
 #include <cstddef>
 #include <filesystem>
 #include <memory>
+#include <optional>
 #include <span>
 #include <string>
 #include <vector>
 
 #include "core/motion/accelerogram.hpp"
+#include "core/motion/processing/registry.hpp"
 #include "io/records/record.hpp"
 
 namespace pilotis {
+
+// The second of two horizontal components that are turned into one (core/motion/processing/rotate.hpp). Both are
+// processed alike before they are turned.
+struct PairedComponent {
+  std::filesystem::path file;
+  RecordHints hints;
+  double angle = 0;  // rad, from the first component towards the second
+};
 
 // A motion as the study asks for it.
 struct MotionSource {
@@ -19,6 +29,8 @@ struct MotionSource {
   std::string name;   // unique in the suite
   double factor = 1;  // of this motion alone, not 0
   RecordHints hints;
+  std::vector<ProcessStep> process = {};     // done to the record before the factor is applied, in order
+  std::optional<PairedComponent> pair = {};  // the other horizontal component, where two make the motion
 };
 
 // A motion as read, its factor applied to the samples.

@@ -11,9 +11,9 @@
 
 namespace pilotis {
 
-// Names those without one by their file without extension; by their full_name() where two would be called alike. Throws Error at the
-// place of the first that is still called like another. T has file (path), name (text), full_name() and place (ValueReader); `thing`
-// is what one of them is called.
+// Names those without one by their file without extension; by their full_name() where two would be called alike. Throws
+// Error at the place of the first that is still called like another. T has file (path), name (text), full_name() and
+// place (ValueReader); `thing` is what one of them is called.
 template <class T>
 void name_by_file(std::vector<T>& listed, std::string_view thing) {
   std::map<std::string, int> stems;

@@ -154,10 +154,10 @@ std::string record_text(const std::string& file, const FileOfRecords& records) {
   for (const RecordComponent& component : records.components) {
     const Accelerogram& record = component.record;
     const PeakSample peak = peak_of(record);
-    table.add_row({component_label(component), component.azimuth ? number(*component.azimuth) : "-",
-                   fmt::format("{}", record.samples.size()), number(record.step), number(record.first_sample_at),
-                   number(record.duration() - record.first_sample_at),
-                   fmt::format("{:.4g}", peak.value / standard_gravity), number(peak.value), number(peak.time),
+    table.add_row({component_label(component), component.azimuth ? shown(*component.azimuth) : "-",
+                   fmt::format("{}", record.samples.size()), shown(record.step), shown(record.first_sample_at),
+                   shown(record.duration() - record.first_sample_at),
+                   fmt::format("{:.4g}", peak.value / standard_gravity), shown(peak.value), shown(peak.time),
                    component.unit});
   }
   return fmt::format("{}: record, format {}\n{}", file, records.format, table.text());

@@ -10,9 +10,11 @@ namespace pilotis {
 
 namespace {
 
-// A shard is what is lost when the machine dies: about a second of one core, and never more memory than this.
+// A shard is what is lost when the machine dies: about a second of one core. Several of them are in memory at a time,
+// in every worker and on their way to the disk: so much for peaks and so much for histories.
 constexpr double shard_story_steps = 4e7;
-constexpr double shard_bytes = 32 << 20;
+constexpr double shard_peak_bytes = 1 << 20, shard_history_bytes = 32 << 20;
+constexpr double peak_bytes_of_a_story = 600;  // ten peaks with time and error, kept twice while the errors are told
 // Enough shards that many workers end together, but none with fewer runs than the widest pack has lanes.
 constexpr std::size_t shards_wanted = 64, smallest_shard = 8;
 // Below both of these a study is over in seconds and its results fit in memory.
@@ -116,8 +118,9 @@ void BatchPlan::cut(std::size_t building, const Work& work) {
   const auto motions = static_cast<double>(std::max<std::size_t>(1, study_.motions.size()));
   const double stories = static_cast<double>(buildings_[building].summary.heights.size());
   const double per_run = work.story_steps / motions;
-  const double bytes = work.history_bytes / motions + 400 * stories;  // peaks with time and error, and names
-  const double by_work = shard_story_steps / per_run, by_memory = shard_bytes / bytes;
+  const double by_work = shard_story_steps / per_run;
+  const double by_memory = std::min(shard_peak_bytes / (peak_bytes_of_a_story * stories),
+                                    shard_history_bytes / std::max(1.0, work.history_bytes / motions));
   const double by_number = static_cast<double>(this->runs()) / static_cast<double>(shards_wanted);
   const double wanted = std::max(std::min(by_work, by_number), static_cast<double>(smallest_shard));
   auto size = static_cast<std::size_t>(std::max(1.0, std::min(wanted, by_memory)));

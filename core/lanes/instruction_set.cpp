@@ -16,7 +16,7 @@ constexpr const char* variable = "PILOTIS_INSTRUCTION_SET";
 
 std::vector<InstructionSet> found() {
   std::vector<InstructionSet> sets{InstructionSet::baseline};
-#if defined(__x86_64__)
+#if defined(__x86_64__) && !defined(PILOTIS_BASELINE_ALONE)
   if (__builtin_cpu_supports("x86-64-v2")) sets.push_back(InstructionSet::x86_64_v2);
   if (__builtin_cpu_supports("x86-64-v3")) sets.push_back(InstructionSet::x86_64_v3);
   if (__builtin_cpu_supports("x86-64-v4")) sets.push_back(InstructionSet::x86_64_v4);

@@ -8,7 +8,8 @@
 
 namespace pilotis {
 
-#if defined(__x86_64__)
+// PILOTIS_BASELINE_ALONE: a build whose kernels are compiled for the baseline only.
+#if defined(__x86_64__) && !defined(PILOTIS_BASELINE_ALONE)
 enum class InstructionSet { baseline, x86_64_v2, x86_64_v3, x86_64_v4 };
 // Declares a kernel in the namespace of every set, and lists all of them in the order of the enum.
 #define PILOTIS_DECLARE_KERNELS(...) \

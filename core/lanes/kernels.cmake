@@ -6,7 +6,7 @@
 # namespace are made local to it. On processors other than x86-64 there is the baseline alone.
 set(PILOTIS_INSTRUCTION_SETS baseline)
 set(PILOTIS_LANES_baseline 2)
-if(CMAKE_SYSTEM_PROCESSOR STREQUAL "x86_64")
+if(CMAKE_SYSTEM_PROCESSOR STREQUAL "x86_64" AND NOT PILOTIS_SANITIZE)  # with sanitizers the baseline alone: time
   list(APPEND PILOTIS_INSTRUCTION_SETS x86_64_v2 x86_64_v3 x86_64_v4)
   set(PILOTIS_LANES_x86_64_v2 2)
   set(PILOTIS_MARCH_x86_64_v2 -march=x86-64-v2)

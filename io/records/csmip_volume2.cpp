@@ -70,9 +70,11 @@ RecordComponent component_of(const std::vector<TextLine>& header, Block block, s
   read.stated_samples = block.promise.values;
   read.values = std::move(values);
   read.says.step = block.step;
-  read.says.unit = block.unit.value_or(StatedUnit{"cm/s2", block.promise.line});
+  read.says.unit = block.unit;
+  const bool assumed = !block.unit && !hints.unit;
+  if (assumed) read.says.unit = StatedUnit{"cm/s2", block.promise.line};
   RecordComponent component = finished(std::move(read), hints, where);
-  if (!block.unit) component.notes.push_back("the file gives no unit: taken as cm/s2, the unit of its format");
+  if (assumed) component.notes.push_back("the file gives no unit: taken as cm/s2, the unit of its format");
   return component;
 }
 

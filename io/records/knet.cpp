@@ -59,6 +59,14 @@ std::optional<StatedPeak> peak_in(const std::vector<TextLine>& header) {
   return std::nullopt;
 }
 
+// Of the surface sensor 4 points north, 5 east and 6 up; how a borehole sensor is turned is not known exactly.
+bool is_number_of_kiknet(const std::string& name) { return name.size() == 1 && name >= "1" && name <= "6"; }
+std::optional<double> azimuth_of_kiknet(char number) {
+  if (number == '4') return 0;
+  if (number == '5') return 90;
+  return std::nullopt;
+}
+
 // Counts are whole numbers: the mean is exact enough in any order.
 double take_off_mean(std::vector<double>& values) {
   const double mean = std::accumulate(values.begin(), values.end(), 0.0) / static_cast<double>(values.size());
@@ -98,10 +106,7 @@ FileOfRecords read_knet(std::string_view content, const std::string& where, cons
   file.components.push_back(finished(std::move(read), hints, where));
   RecordComponent& component = file.components.front();
   component.notes.push_back(fmt::format("the mean of the record, {:.4g} gal, is taken off", mean * scale));
-  component.azimuth = component.name == "4"                                  ? std::optional(0.0)
-                      : component.name == "5"                                ? std::optional(90.0)
-                      : is_borehole(component.name) || component.name == "6" ? std::nullopt
-                                                                             : component.azimuth;
+  if (is_number_of_kiknet(component.name)) component.azimuth = azimuth_of_kiknet(component.name.front());
   if (is_borehole(component.name))
     component.notes.push_back("recorded at the foot of a borehole, not at the surface (KiK-net, components 1 to 3)");
   return file;

@@ -32,7 +32,7 @@ def record():
     return [0.1 * draw.gauss(0, 1) for _ in range(1559)]
 
 
-def write_study(folder, factors, stories=STORIES, duration=DURATION, keep="", check="false", samples=None):
+def write_study(folder, factors, stories=STORIES, duration=DURATION, keep="histories = \"none\"", check="false", samples=None):
     folder.mkdir(parents=True, exist_ok=True)
     (folder / "motion.csv").write_text("\n".join(f"{a:.6f}" for a in (samples or record())) + "\n")
     tables = "".join(f"""[[story]]
@@ -90,8 +90,8 @@ def numpy_loop(samples, factor):
     above = numpy.append(k[1:], 0.0)
     damping_diagonal, damping_off = 0.2 * mass + 0.002 * (k + above), -0.002 * k[1:]
     times = numpy.arange(int(round(DURATION / DT)) + 1) * DT
-    at = numpy.concatenate([[0], 0.02 * numpy.arange(1, len(samples) + 2)])
-    ground = factor * 9.80665 * numpy.interp(times, at, [0, *samples, 0])
+    ground = factor * 9.80665 * numpy.interp(times, 0.02 * numpy.arange(len(samples) + 1),
+                                             [*(round(a, 6) for a in samples), 0])
     u = numpy.zeros(STORIES); v = u.copy(); slip = u.copy(); a = -ground[0] * numpy.ones(STORIES)
     peaks = u.copy()
     c_k, c_c = DT * DT / 4, DT / 2

@@ -35,7 +35,7 @@ constexpr std::array<DimensionFacts, 16> facts{{
     {Dimension::acceleration, "m/s2", "m/s2", "acceleration", "g, m/s2, cm/s2, mm/s2, gal, in/s2"},
     {Dimension::moment, "N m", "N m", "moment (force length)", "N m, kN m, kip ft"},
     {Dimension::per_time, "1/s", "1/s", "rate (1/time)", "1/s"},
-    {Dimension::frequency, "Hz", "Hz", "frequency (cycles/time)", "Hz, mHz"},
+    {Dimension::frequency, "Hz", "Hz", "frequency", "Hz, mHz, kHz"},
     {Dimension::stress, "Pa", "Pa", "stress (force/area)", "Pa, kPa, MPa, bar"},
     {Dimension::density, "kg/m3", "kg/m3", "density (mass/volume)", "kg/m3, t/m3, g/cm3"},
     {Dimension::slowness, "s/m", "s/m", "time/distance", "s/km, s/m"},

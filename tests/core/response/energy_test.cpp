@@ -154,7 +154,7 @@ TEST(EnergyWatch, AbsorbedIsTheAreaOfTheLoops) {
         reply<double>(std::get<ElementGroup<Bilinear>>(system.groups).laws[0], d, 0.0, memory, trial).force;
     memory = trial;
     state.u[0] = d;
-    watch.see({0, true, state, &force, 0, nullptr, &still, &still});
+    watch.see({0, true, state, &force, 0, nullptr, &still, &still, &d, nullptr});
   };
   for (const double d : {0.0, u_y, mu * u_y}) push_to(d);
   const double first = watch.now().absorbed;

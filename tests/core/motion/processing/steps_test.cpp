@@ -91,7 +91,7 @@ TEST(EveryStep, RefusesValuesOutOfRangeByKey) {
   const Accelerogram record = shaking();
   expect_refused("bandpass", {-1, 20, 4, 0}, record, "study.toml:3: process[1].low: found -1 Hz");
   expect_refused("bandpass", {1, 20, 2.5, 0}, record, "study.toml:3: process[1].order: found 2.5");
-  expect_refused("bandpass", {1, 20, 4, 2}, record, "study.toml:3: process[1].pass: found choice 2");
+  expect_refused("bandpass", {1, 20, 4, 2}, record, "study.toml:3: process[1].pass: found 2");
   expect_refused("bandpass", {20, 1, 4, 0}, record, "study.toml:3: process[1].low: found 20 Hz");
   expect_refused("bandpass", {1, 50, 4, 0}, record, "study.toml:3: process[1].high: found 50 Hz for a record");
   expect_refused("lowpass", {60, 4, 0}, record, "study.toml:3: process[1].corner: found 60 Hz for a record");

@@ -144,7 +144,7 @@ TEST(Targets, AreMadeByName) {
     }
   };
   refused("en_1998", {0, 0, 0, 0.05}, "target.ag: found 0 m/s2");
-  refused("en_1998", {1, 0, 5, 0.05}, "target.ground: found choice 5; ground type must be one of A, B, C, D, E");
+  refused("en_1998", {1, 0, 5, 0.05}, "target.ground: found 5; ground type must be one of A, B, C, D, E");
   refused("en_1998", {1}, "target: found 1 values");
   refused("asce_7_16_design", {g, 0.6 * g, 0.5},
           "target.t_l: found 0.5 s; it must be at least T_S = S_D1/S_DS = 0.6 s");

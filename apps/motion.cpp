@@ -104,10 +104,11 @@ void print_tables(const Options& options, const MotionRequest& request, const Ga
 
 void print_text(const Options& options, const GatherOptions& asked, const Gathered& gathered) {
   const ScreenStyle style = screen_style(stdout);
+  const int width = is_terminal(stdout) ? style.width : 0;
   if (gathered.records.size() == 1)
-    print_out(record_text(gathered.records[0], asked.told));
+    print_out(record_text(gathered.records[0], asked.told, width));
   else
-    print_out(measures_table(gathered.records, asked.told, is_terminal(stdout) ? style.width : 0));
+    print_out(measures_table(gathered.records, asked.told, width));
   print_tables(options, asked.told, gathered);
   if (draws(options, asked.files.size()))
     print_charts(picture_rows(gathered.records, asked.told, gathered.pair), style);
@@ -131,8 +132,8 @@ int motion(const Options& options) {
     fmt::print(stderr, "pilotis: stopped; no file was written\n");
     return not_completed;
   }
-  if (!options.json && !gathered.records.empty()) print_text(options, asked, gathered);
   if (!options.svg.empty() && !gathered.records.empty()) write_svg(options.svg, asked, gathered);
+  if (!options.json && !gathered.records.empty()) print_text(options, asked, gathered);
   if (!options.quiet) {
     for (const auto& file : gathered.csv_files) fmt::print(stderr, "written: {}\n", file.string());
     if (!options.svg.empty() && !gathered.records.empty()) fmt::print(stderr, "written: {}\n", options.svg);

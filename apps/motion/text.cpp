@@ -4,6 +4,8 @@
 
 #include <algorithm>
 #include <cmath>
+#include <cstdio>
+#include <sstream>
 
 #include "apps/motion/names.hpp"
 #include "apps/text_table.hpp"
@@ -64,6 +66,17 @@ std::string block(const std::vector<RecordNumbers>& records, const std::vector<s
   return table.text();
 }
 
+// Every line cut to the screen's width.
+std::string fitted(const std::string& text, int width) {
+  if (width <= 0) return text;
+  const ScreenStyle style = screen_style(stdout);
+  std::istringstream lines(text);
+  std::string cut;
+  for (std::string line; std::getline(lines, line);)
+    cut += clipped(line, static_cast<std::size_t>(width), style) + "\n";
+  return cut;
+}
+
 }  // namespace
 
 std::string measures_list() {
@@ -74,7 +87,7 @@ std::string measures_list() {
   return text;
 }
 
-std::string record_text(const RecordNumbers& record, const MotionRequest& request) {
+std::string record_text(const RecordNumbers& record, const MotionRequest& request, int width) {
   std::string text = fmt::format("{}: {}, in {}, {} samples every {:g} s, {:g} s long\n", shown_names({record})[0],
                                  record.format, record.unit, record.samples, record.record.step,
                                  record.record.step * static_cast<double>(record.samples - 1));
@@ -85,7 +98,7 @@ std::string record_text(const RecordNumbers& record, const MotionRequest& reques
     table.add_row({std::string(measure.name), in_screen_unit(record.measures[i], measure.dimension),
                    screen_unit(measure.dimension).unit, std::string(measure.long_name)});
   }
-  return text + table.text();
+  return text + fitted(table.text(), width);
 }
 
 std::string measures_table(const std::vector<RecordNumbers>& records, const MotionRequest& request, int width) {

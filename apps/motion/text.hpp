@@ -11,8 +11,8 @@ namespace pilotis {
 // Every measure with its unit, definition and source.
 std::string measures_list();
 
-// What the file is, then a line for each measure with its definition.
-std::string record_text(const RecordNumbers& record, const MotionRequest& request);
+// What the file is, then a line for each measure with its definition, cut to fit a screen (`width` > 0).
+std::string record_text(const RecordNumbers& record, const MotionRequest& request, int width);
 
 // A row for each record, a column for each measure. On a screen (`width` > 0) that is too narrow, the columns go on
 // below in another block with the records' names.

@@ -48,13 +48,12 @@ Axis linear_axis(double low, double high, int most_ticks, AxisEnds ends) {
     high += room;
   }
   const double step = nice_step((high - low) / most_ticks);
-  long first = std::lround(std::ceil(low / step - hair)), last = std::lround(std::floor(high / step + hair));
-  if (ends == AxisEnds::on_ticks) {
-    first = std::lround(std::floor(low / step + hair));
-    last = std::lround(std::ceil(high / step - hair));
-    low = static_cast<double>(first) * step;
-    high = static_cast<double>(last) * step;
+  if (ends == AxisEnds::drawn_out) {
+    const double half = step / 2;
+    low = half * std::floor(low / half + hair);
+    high = half * std::ceil(high / half - hair);
   }
+  const long first = std::lround(std::ceil(low / step - hair)), last = std::lround(std::floor(high / step + hair));
   Axis axis{low, high, false, {}};
   for (long i = first; i <= last; ++i) axis.ticks.push_back(static_cast<double>(i) * step);
   return axis;

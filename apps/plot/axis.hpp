@@ -16,8 +16,8 @@ struct Axis {
 };
 
 enum class AxisEnds {
-  exact,    // the axis ends where the values do
-  on_ticks  // and is drawn out to the next ticks
+  exact,     // the axis ends where the values do
+  drawn_out  // and is drawn out to the next tick or to half the way there
 };
 
 // Ticks at 1, 2 or 5 times a power of ten, about `most_ticks` at most (Heckbert, "Nice numbers for graph labels",

@@ -57,7 +57,7 @@ ChartAxes axes_of(const Chart& chart, int most_x_ticks, int most_y_ticks) {
     for (const double value : line.y) y.hold(value, chart.logarithmic_y);
   }
   return {axis_of(x, chart.logarithmic_x, most_x_ticks, AxisEnds::exact),
-          axis_of(y, chart.logarithmic_y, most_y_ticks, AxisEnds::on_ticks)};
+          axis_of(y, chart.logarithmic_y, most_y_ticks, AxisEnds::drawn_out)};
 }
 
 ChartLine thinned(const ChartLine& line, const Axis& x, int columns) {

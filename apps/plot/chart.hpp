@@ -26,7 +26,7 @@ struct Chart {
   std::vector<ChartLine> lines;
 };
 
-// The axes that hold all lines. x ends where the values do; y is drawn out to ticks, and holds 0 where it is linear.
+// The axes that hold all lines. x ends where the values do; y is drawn out (axis.hpp), and holds 0 where it is linear.
 struct ChartAxes {
   Axis x, y;
 };

@@ -90,7 +90,8 @@ std::string floor_text(const Axis& x, const Canvas& canvas, int columns, std::si
     const auto column = static_cast<int>(cell_of(x.place_of(tick), canvas.dots_across(), columns));
     const std::string number = tick_text(tick);
     const int end = static_cast<int>(margin) + 1 + columns, size = static_cast<int>(number.size());
-    const int begin = std::min(static_cast<int>(margin) + 1 + column - (size - 1) / 2, end - size);
+    const int first = static_cast<int>(margin) + 1;
+    const int begin = std::clamp(first + column - (size - 1) / 2, first, end - size);
     ticks[static_cast<std::size_t>(column)] = true;
     if (begin <= static_cast<int>(numbers.size()) - (numbers.back() == ' ' ? 1 : 0)) continue;
     numbers += std::string(static_cast<std::size_t>(begin) - numbers.size(), ' ') + number;

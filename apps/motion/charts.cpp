@@ -62,7 +62,8 @@ Chart history_chart(const std::string& title, const char* what, const std::vecto
   const ShownUnit unit = screen_unit(dimension);
   const auto largest =
       std::max_element(values.begin(), values.end(), [](double a, double b) { return std::abs(a) < std::abs(b); });
-  Chart chart{fmt::format("{}: peak {:.3g} {} at {:g} s", title, *largest / unit.factor, unit.unit,
+  Chart chart{title,
+              fmt::format("peak {:.3g} {} at {:g} s", *largest / unit.factor, unit.unit,
                           step * static_cast<double>(largest - values.begin())),
               "time (s)",
               fmt::format("{} ({})", what, unit.unit),
@@ -102,7 +103,7 @@ bool wide(const std::vector<double>& values) {
 }
 
 Chart empty_spectrum(std::string title, std::string y_title, const MotionRequest& request) {
-  return {std::move(title), "period (s)", std::move(y_title), wide(request.periods), false, true, {}};
+  return {std::move(title), "", "period (s)", std::move(y_title), wide(request.periods), false, true, {}};
 }
 
 // What is held and what follows from it.
@@ -132,7 +133,7 @@ Chart inelastic_chart(const std::vector<RecordNumbers>& records, const MotionReq
 }
 
 Chart fourier_chart(const std::vector<RecordNumbers>& records) {
-  Chart chart{"Fourier amplitude spectrum", "frequency (Hz)", "amplitude (m/s)", true, true, true, {}};
+  Chart chart{"Fourier amplitude spectrum", "", "frequency (Hz)", "amplitude (m/s)", true, true, true, {}};
   const std::vector<std::string> names = shown_names(records);
   for (std::size_t r = 0; r < records.size(); ++r) {
     const FourierAmplitudes& fourier = records[r].fourier;

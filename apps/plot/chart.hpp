@@ -19,6 +19,7 @@ struct ChartLine {
 
 struct Chart {
   std::string title;
+  std::string note;              // beside the title, e.g. the peak
   std::string x_title, y_title;  // with their units, e.g. "period (s)"
   bool logarithmic_x = false;    // what is not above 0 is left out
   bool logarithmic_y = false;

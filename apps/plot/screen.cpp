@@ -101,9 +101,21 @@ std::string floor_text(const Axis& x, const Canvas& canvas, int columns, std::si
   return text + "\n" + numbers + "\n";
 }
 
+// Without color lines cannot be told apart, but what they are can be said.
+std::string plain_legend(const std::vector<ChartLine>& lines, std::size_t margin, const ScreenStyle& style) {
+  std::string names;
+  for (const ChartLine& line : lines)
+    if (!line.name.empty()) names += (names.empty() ? "lines: " : ", ") + line.name;
+  std::string text;
+  for (const std::string& row : wrapped(names, static_cast<std::size_t>(style.width) - margin - 2))
+    text += std::string(margin + 2, ' ') + row + "\n";
+  return text;
+}
+
 std::string legend(const std::vector<ChartLine>& lines, const std::vector<std::string>& escapes, std::size_t margin,
                    const Frame& frame, const ScreenStyle& style) {
-  if (lines.size() < 2 || !style.color) return "";
+  if (lines.size() < 2) return "";
+  if (!style.color) return plain_legend(lines, margin, style);
   std::string text, row;
   std::size_t used = 0;
   for (std::size_t i = 0; i < lines.size(); ++i) {
@@ -133,7 +145,8 @@ std::string chart_text(const Chart& chart, int rows, const ScreenStyle& style) {
   const int columns = width - static_cast<int>(margin) - 2;
   Canvas canvas(columns, rows, style.unicode);
   for (std::size_t i = 0; i < lines.size(); ++i) draw(lines[i], axes, static_cast<int>(i), canvas);
-  const std::string about = chart.title + (chart.title.empty() ? "" : ": ") + chart.y_title + " over " + chart.x_title;
+  const std::string note = chart.note.empty() ? "" : ", " + chart.note;
+  const std::string about = chart.title + ": " + chart.y_title + " over " + chart.x_title + note;
   std::string text =
       "  " + painted(clipped(about, static_cast<std::size_t>(width) - 2, style), Tone::strong, style) + "\n";
   const std::vector<std::string> labels = row_labels(axes.y, rows, canvas);

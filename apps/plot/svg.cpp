@@ -16,7 +16,7 @@ namespace {
 // Pixels.
 constexpr double page_width = 960, title_height = 44, history_height = 200, tall_height = 400, legend_row = 18;
 constexpr double left_margin = 66, right_margin = 18, top_margin = 30, bottom_margin = 44;
-constexpr double character_width = 6.3;  // of the text's 11 px, about
+constexpr double character_width = 6.3, bold_width = 7.6;  // of the text's 11 px and of a bold title's 12 px, about
 
 // Colors that the color-blind can tell apart: Okabe & Ito 2008, Color universal design (from memory), yellow left out.
 constexpr std::array<const char*, 7> colors{"#0072b2", "#d55e00", "#009e73", "#cc79a7",
@@ -42,8 +42,15 @@ class Picture {
   std::string text_;
 };
 
-std::string cut(const std::string& text, double width) {
-  return clipped(text, static_cast<std::size_t>(std::max(4.0, width / character_width)), ScreenStyle{});
+std::string cut(const std::string& text, double width, double character = character_width) {
+  return clipped(text, static_cast<std::size_t>(std::max(4.0, width / character)), ScreenStyle{});
+}
+
+// The title from the left, the note from the right.
+void add_heading(Picture& picture, const Chart& chart, double left_end, double right_end, double y) {
+  const double note = character_width * static_cast<double>(columns_of(chart.note));
+  picture.add_text(left_end, y, "start", cut(chart.title, right_end - left_end - note, bold_width), " class=\"chart\"");
+  if (!chart.note.empty()) picture.add_text(right_end, y, "end", chart.note);
 }
 
 const char* color_of(const ChartLine& line, std::size_t number) {
@@ -141,7 +148,7 @@ void add_chart(Picture& picture, const Chart& chart, const Box& outer) {
   const Box box{outer.x + left_margin, outer.y + top_margin, outer.width - left_margin - right_margin,
                 outer.height - top_margin - bottom_margin - legend};
   const ChartAxes axes = axes_of(chart, static_cast<int>(box.width / 60), static_cast<int>(box.height / 30));
-  picture.add_text(box.x, outer.y + 20, "start", cut(chart.title, box.width), " class=\"chart\"");
+  add_heading(picture, chart, outer.x + 16, box.x + box.width, outer.y + 20);
   add_x_axis(picture, axes.x, box, chart.x_title);
   add_y_axis(picture, axes.y, box, chart.y_title);
   const std::vector<std::size_t> numbers = color_numbers(chart);
@@ -197,7 +204,7 @@ std::string svg_of(const std::string& title, const std::vector<std::vector<Chart
       ".frame {{ fill: none; stroke: #444; stroke-width: 1; }}\n</style>\n"
       "<rect width=\"100%\" height=\"100%\" fill=\"white\"/>\n",
       page_width, height, xml_text(title));
-  picture.add_text(left_margin, 28, "start", clipped(title, 95, ScreenStyle{}), " class=\"page\"");
+  picture.add_text(16, 28, "start", clipped(title, 95, ScreenStyle{}), " class=\"page\"");
   double y = title_height;
   for (const std::vector<Chart>& row : rows) {
     const double width = page_width / static_cast<double>(row.size()), tall = height_of(row);

@@ -18,6 +18,7 @@ ExitStatus exit_status_of(const Error& error);
 void add_check(CLI::App& app, int& status);
 void add_run(CLI::App& app, int& status);
 void add_modes(CLI::App& app, int& status);
+void add_motion(CLI::App& app, int& status);
 void add_synth(CLI::App& app, int& status);
 void add_verdict(CLI::App& app, int& status);
 void add_export(CLI::App& app, int& status);

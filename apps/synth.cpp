@@ -1,13 +1,13 @@
 // pilotis synth: makes ground motions and writes them as CSV.
 #include <fmt/format.h>
 
-#include <charconv>
 #include <cstdio>
 #include <filesystem>
 #include <map>
 #include <memory>
 
 #include "apps/commands.hpp"
+#include "apps/quantity_text.hpp"
 #include "apps/synth_curve.hpp"
 #include "apps/synth_file.hpp"
 #include "apps/text_table.hpp"
@@ -26,18 +26,6 @@ struct SynthOptions {
   std::map<std::string, std::string> values;  // by key of the parameter or table, as typed
 };
 
-// "0.35 g", "0.35g" or, in SI, "3.4".
-double quantity(const std::string& text, Dimension dimension, const std::string& where) {
-  double number = 0;
-  const auto [end, error] = std::from_chars(text.data(), text.data() + text.size(), number);
-  if (error != std::errc{})
-    throw input_error(where, fmt::format("found \"{}\"", text),
-                      fmt::format("a number is needed, with a unit or in {}", si_unit(dimension)));
-  std::string unit(end, text.data() + text.size());
-  unit.erase(0, unit.find_first_not_of(' '));
-  return unit.empty() ? number : number * si_factor(unit, dimension, where);
-}
-
 // The place of the word among the parameter's choices.
 double choice(const std::string& text, const Parameter& parameter, const std::string& where) {
   for (std::size_t i = 0; i < parameter.choices.size(); ++i)
@@ -50,13 +38,13 @@ double value_of(const Parameter& parameter, const std::string& typed) {
   if (typed.empty() && !parameter.otherwise)
     throw input_error(where, "it is missing", fmt::format("{} is needed", parameter.meaning));
   if (typed.empty()) return *parameter.otherwise;
-  return parameter.choices.empty() ? quantity(typed, parameter.dimension, where) : choice(typed, parameter, where);
+  return parameter.choices.empty() ? quantity_of(typed, parameter.dimension, where) : choice(typed, parameter, where);
 }
 
 SynthRecipe recipe_of(const SyntheticKind& kind, const SynthOptions& options) {
   SynthRecipe recipe{&kind, {}, {}, {}, {}};
-  recipe.grid = {options.seed, quantity(options.step, Dimension::time, "synth --step"),
-                 quantity(options.duration, Dimension::time, "synth --duration")};
+  recipe.grid = {options.seed, quantity_of(options.step, Dimension::time, "synth --step"),
+                 quantity_of(options.duration, Dimension::time, "synth --duration")};
   for (const Parameter& parameter : kind.method.parameters)
     recipe.values.push_back(value_of(parameter, options.values.at(std::string(parameter.key))));
   for (const CurveParameter& curve : kind.curves) {

@@ -44,12 +44,13 @@ ScreenStyle style_for(bool is_terminal, int columns, const ScreenEnvironment& en
   return style;
 }
 
+bool is_terminal(std::FILE* stream) { return ::isatty(::fileno(stream)) == 1; }
+
 ScreenStyle screen_style(std::FILE* stream) {
-  const int file = ::fileno(stream);
-  const bool is_terminal = ::isatty(file) == 1;
+  const bool terminal = is_terminal(stream);
   winsize size{};
-  const int columns = is_terminal && ::ioctl(file, TIOCGWINSZ, &size) == 0 ? size.ws_col : 0;
-  return style_for(is_terminal, columns, screen_environment());
+  const int columns = terminal && ::ioctl(::fileno(stream), TIOCGWINSZ, &size) == 0 ? size.ws_col : 0;
+  return style_for(terminal, columns, screen_environment());
 }
 
 void print_out(std::string_view text) {

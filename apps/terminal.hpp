@@ -23,6 +23,8 @@ ScreenEnvironment screen_environment();
 // is UTF-8; `columns` is the terminal's width, 0 where unknown: then 100.
 ScreenStyle style_for(bool is_terminal, int columns, const ScreenEnvironment& environment);
 
+bool is_terminal(std::FILE* stream);
+
 // For a stream of this process.
 ScreenStyle screen_style(std::FILE* stream);
 

@@ -1,6 +1,7 @@
 #include "apps/text_table.hpp"
 
 #include <algorithm>
+#include <sstream>
 #include <stdexcept>
 
 namespace pilotis {
@@ -18,6 +19,20 @@ std::string padded(const std::string& text, std::size_t width, TextTable::Align 
   return align == TextTable::Align::left ? text + blanks : blanks + text;
 }
 
+// Row by row; shorter titles stand at the bottom.
+std::vector<std::vector<std::string>> title_lines(const std::vector<TextTable::Column>& columns) {
+  std::size_t rows = 1;
+  for (const TextTable::Column& column : columns)
+    rows = std::max(rows, static_cast<std::size_t>(std::count(column.title.begin(), column.title.end(), '\n')) + 1);
+  std::vector<std::vector<std::string>> lines(rows, std::vector<std::string>(columns.size()));
+  for (std::size_t i = 0; i < columns.size(); ++i) {
+    std::istringstream title(columns[i].title);
+    const auto own = static_cast<std::size_t>(std::count(columns[i].title.begin(), columns[i].title.end(), '\n')) + 1;
+    for (std::size_t row = rows - own; row < rows; ++row) std::getline(title, lines[row][i]);
+  }
+  return lines;
+}
+
 }  // namespace
 
 void TextTable::add_row(std::vector<std::string> cells) {
@@ -26,9 +41,7 @@ void TextTable::add_row(std::vector<std::string> cells) {
 }
 
 std::string TextTable::text() const {
-  std::vector<std::string> titles;
-  for (const Column& column : columns_) titles.push_back(column.title);
-  std::vector<std::vector<std::string>> lines{titles};
+  std::vector<std::vector<std::string>> lines = title_lines(columns_);
   lines.insert(lines.end(), rows_.begin(), rows_.end());
   std::vector<std::size_t> widths(columns_.size());
   for (const auto& line : lines)

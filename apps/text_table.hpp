@@ -10,7 +10,7 @@ class TextTable {
  public:
   enum class Align { left, right };
   struct Column {
-    std::string title;
+    std::string title;  // of several lines where it has line breaks
     Align align = Align::right;
   };
 
@@ -19,7 +19,7 @@ class TextTable {
   // One cell for each column; throws std::logic_error otherwise.
   void add_row(std::vector<std::string> cells);
 
-  // Title line and rows, each indented by two spaces and ended by a newline, without blanks at line ends.
+  // Title lines and rows, each indented by two spaces and ended by a newline, without blanks at line ends.
   std::string text() const;
 
  private:

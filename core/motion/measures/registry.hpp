@@ -15,6 +15,7 @@ struct Measure {
   std::string_view name;       // as in studies and result files
   Dimension dimension;         // values are SI
   std::string_view long_name;  // one line
+  std::string_view source;     // who defined it, and where
   int power;                   // a motion k times as large has a measure k^power times as large; -1: no power of k
   // One of the two is there.
   double (*of_record)(const Accelerogram&) = nullptr;

@@ -137,7 +137,7 @@ RotatedSpectrum rotated_spectrum(const Ground& first, const Ground& second, std:
     RotatedPeak& peak = spectrum.displacement[i];
     spectrum.median_pseudo_acceleration.push_back(omega * omega * peak.median);
     spectrum.largest_pseudo_acceleration.push_back(omega * omega * peak.largest);
-    if (rigid) peak = {};
+    if (rigid) peak = {0, 0, 0, peak.direction_of_largest};
   }
   return spectrum;
 }

@@ -34,7 +34,7 @@ void rotated_peaks(const Ground& first, const Ground& second, std::span<const Os
 struct RotatedSpectrum {
   double damping_ratio;                             // -
   std::vector<double> periods;                      // s
-  std::vector<RotatedPeak> displacement;            // m; zeros at T = 0
+  std::vector<RotatedPeak> displacement;            // m; zeros at T = 0, but for the direction
   std::vector<double> median_pseudo_acceleration;   // PSA RotD50, m/s2
   std::vector<double> largest_pseudo_acceleration;  // PSA RotD100, m/s2
 };

@@ -5,12 +5,21 @@
 
 #include "core/error.hpp"
 #include "io/file_pattern.hpp"
+#include "io/records/components.hpp"
 
 namespace pilotis {
 
 std::vector<ReadComponent> components_of(const std::string& file, const RecordHints& hints) {
-  RecordFile read = read_record(file, hints);
-  return {{"", read.format, read.unit, std::move(read.notes), std::move(read.record)}};
+  FileOfRecords read = read_record_file(file, hints);
+  std::vector<ReadComponent> components;
+  for (RecordComponent& one : read.components) {
+    std::vector<std::string> notes = components.empty() ? read.notes : std::vector<std::string>{};
+    notes.insert(notes.end(), one.notes.begin(), one.notes.end());
+    // The only component of a file goes by the file's name.
+    const std::string name = read.components.size() > 1 ? component_label(one) : "";
+    components.push_back({name, read.format, one.unit, std::move(notes), std::move(one.record)});
+  }
+  return components;
 }
 
 std::vector<std::string> files_meant(const std::vector<std::string>& typed) {

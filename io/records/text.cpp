@@ -12,6 +12,8 @@ constexpr char dos_end_of_file = 0x1A;
 
 char lower(char c) { return c >= 'A' && c <= 'Z' ? static_cast<char>(c - 'A' + 'a') : c; }
 
+bool same_letter(char a, char b) { return lower(a) == lower(b); }
+
 bool is_digit(char c) { return c >= '0' && c <= '9'; }
 
 std::size_t first_not_digit(std::string_view text, std::size_t begin) {
@@ -94,12 +96,11 @@ std::string lower_case(std::string_view text) {
 }
 
 bool holds(std::string_view text, std::string_view phrase) {
-  const auto same = [](char a, char b) { return lower(a) == lower(b); };
-  return std::search(text.begin(), text.end(), phrase.begin(), phrase.end(), same) != text.end();
+  return std::search(text.begin(), text.end(), phrase.begin(), phrase.end(), same_letter) != text.end();
 }
 
 bool begins(std::string_view text, std::string_view phrase) {
-  return text.size() >= phrase.size() && lower_case(text.substr(0, phrase.size())) == lower_case(phrase);
+  return text.size() >= phrase.size() && std::equal(phrase.begin(), phrase.end(), text.begin(), same_letter);
 }
 
 std::string_view first_line_of(std::string_view content) {
@@ -107,8 +108,7 @@ std::string_view first_line_of(std::string_view content) {
 }
 
 std::string_view text_after(std::string_view text, std::string_view phrase) {
-  const auto same = [](char a, char b) { return lower(a) == lower(b); };
-  const auto found = std::search(text.begin(), text.end(), phrase.begin(), phrase.end(), same);
+  const auto found = std::search(text.begin(), text.end(), phrase.begin(), phrase.end(), same_letter);
   if (found == text.end()) return {};
   return text.substr(static_cast<std::size_t>(found - text.begin()) + phrase.size());
 }

@@ -36,7 +36,7 @@ void Progress::show(double done, long all, long failures) {
   const double rate = (done - static_cast<double>(before_)) / elapsed;
   const double whole = static_cast<double>(all);
   const std::string text =
-      fmt::format("{}/{} runs, {:.3g} runs/s, {}{}", static_cast<long>(done), all, rate,
+      fmt::format("{}/{} {}, {:.3g} {}/s, {}{}", static_cast<long>(done), all, things_, rate, things_,
                   time_left((whole - done) / rate), failures > 0 ? fmt::format(", {} failed", failures) : "");
   if (terminal_)
     fmt::print(stderr, "\r\033[K[{}] {}", bar(done / whole), text);

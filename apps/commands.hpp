@@ -20,6 +20,7 @@ void add_run(CLI::App& app, int& status);
 void add_modes(CLI::App& app, int& status);
 void add_motion(CLI::App& app, int& status);
 void add_synth(CLI::App& app, int& status);
+void add_fit(CLI::App& app, int& status);
 void add_verdict(CLI::App& app, int& status);
 void add_export(CLI::App& app, int& status);
 

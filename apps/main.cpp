@@ -27,6 +27,7 @@ int main(int argc, char** argv) {
   pilotis::add_modes(app, status);
   pilotis::add_motion(app, status);
   pilotis::add_synth(app, status);
+  pilotis::add_fit(app, status);
   pilotis::add_verdict(app, status);
   pilotis::add_export(app, status);
   try {

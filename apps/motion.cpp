@@ -12,7 +12,7 @@
 #include "apps/motion/text.hpp"
 #include "apps/plot/screen.hpp"
 #include "apps/plot/svg.hpp"
-#include "apps/quantity_text.hpp"
+#include "apps/typed_values.hpp"
 #include "core/error.hpp"
 
 namespace pilotis {
@@ -35,11 +35,11 @@ RecordHints hints_of(const Options& options) {
     si_factor(options.unit, Dimension::acceleration, "motion --units");
     hints.unit = options.unit;
   }
-  if (!options.step.empty()) hints.step = quantity_of(options.step, Dimension::time, "motion --step");
+  if (!options.step.empty()) hints.step = typed_quantity(options.step, Dimension::time, "motion --step");
   if (hints.step && !(*hints.step > 0))
     throw input_error("motion --step", fmt::format("found \"{}\"", options.step), "a time above 0 is needed");
   if (!options.first_sample_at.empty())
-    hints.first_sample_at = quantity_of(options.first_sample_at, Dimension::time, "motion --first-sample-at");
+    hints.first_sample_at = typed_quantity(options.first_sample_at, Dimension::time, "motion --first-sample-at");
   return hints;
 }
 

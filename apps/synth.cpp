@@ -7,10 +7,11 @@
 #include <memory>
 
 #include "apps/commands.hpp"
-#include "apps/quantity_text.hpp"
 #include "apps/synth_curve.hpp"
 #include "apps/synth_file.hpp"
+#include "apps/synth_target.hpp"
 #include "apps/text_table.hpp"
+#include "apps/typed_values.hpp"
 #include "core/error.hpp"
 #include "core/motion/synthetic/registry.hpp"
 #include "core/units/units.hpp"
@@ -24,37 +25,33 @@ struct SynthOptions {
   std::uint64_t seed = 1;
   int count = 0;                              // 0: one motion into a file; else a suite into a folder
   std::map<std::string, std::string> values;  // by key of the parameter or table, as typed
+  SynthTarget target;
 };
 
-// The place of the word among the parameter's choices.
-double choice(const std::string& text, const Parameter& parameter, const std::string& where) {
-  for (std::size_t i = 0; i < parameter.choices.size(); ++i)
-    if (parameter.choices[i] == text) return static_cast<double>(i);
-  throw input_error(where, fmt::format("found \"{}\"", text), allowed_range(parameter) + " is needed");
-}
-
-double value_of(const Parameter& parameter, const std::string& typed) {
-  const std::string where = "synth " + option_name(parameter.key);
-  if (typed.empty() && !parameter.otherwise)
-    throw input_error(where, "it is missing", fmt::format("{} is needed", parameter.meaning));
-  if (typed.empty()) return *parameter.otherwise;
-  return parameter.choices.empty() ? quantity_of(typed, parameter.dimension, where) : choice(typed, parameter, where);
+// The kind's table as typed.
+void add_curve(const CurveParameter& curve, const SynthOptions& options, SynthRecipe& recipe) {
+  if (curve.is_target) {
+    const std::vector<double>& values = recipe.values;
+    const auto parameters = recipe.kind->method.parameters;
+    std::size_t damping = 0;
+    while (parameters[damping].key != "damping") ++damping;
+    return add_target(options.target, values[damping], recipe);
+  }
+  const std::string option = option_name(curve.key), &file = options.values.at(std::string(curve.key));
+  if (file.empty() && curve.required)
+    throw input_error("synth " + option, "it is missing",
+                      fmt::format("{} is needed: a file with the columns \"{}\"", curve.meaning, curve_heading(curve)));
+  recipe.curves.push_back(file.empty() ? Curve{} : read_curve(file, curve));
+  recipe.curve_options.push_back(file.empty() ? "" : fmt::format("{} \"{}\"", option, file));
 }
 
 SynthRecipe recipe_of(const SyntheticKind& kind, const SynthOptions& options) {
-  SynthRecipe recipe{&kind, {}, {}, {}, {}};
-  recipe.grid = {options.seed, quantity_of(options.step, Dimension::time, "synth --step"),
-                 quantity_of(options.duration, Dimension::time, "synth --duration")};
+  SynthRecipe recipe{&kind, {}, {}, {}, {}, {}};
+  recipe.grid = {options.seed, typed_quantity(options.step, Dimension::time, "synth --step"),
+                 typed_quantity(options.duration, Dimension::time, "synth --duration")};
   for (const Parameter& parameter : kind.method.parameters)
-    recipe.values.push_back(value_of(parameter, options.values.at(std::string(parameter.key))));
-  for (const CurveParameter& curve : kind.curves) {
-    recipe.curve_files.push_back(options.values.at(std::string(curve.key)));
-    if (recipe.curve_files.back().empty() && curve.required)
-      throw input_error(
-          "synth " + option_name(curve.key), "it is missing",
-          fmt::format("{} is needed: a file with the columns \"{}\"", curve.meaning, curve_heading(curve)));
-    recipe.curves.push_back(recipe.curve_files.back().empty() ? Curve{} : read_curve(recipe.curve_files.back(), curve));
-  }
+    recipe.values.push_back(typed_value(parameter, options.values.at(std::string(parameter.key)), "synth"));
+  for (const CurveParameter& curve : kind.curves) add_curve(curve, options, recipe);
   return recipe;
 }
 
@@ -100,22 +97,6 @@ void synthesize(const SyntheticKind& kind, const SynthOptions& options) {
   write_suite(recipe, options.count, options.output);
 }
 
-std::string default_text(const Parameter& parameter) {
-  if (!parameter.otherwise) return "required";
-  if (!parameter.choices.empty()) return std::string(parameter.choices[static_cast<std::size_t>(*parameter.otherwise)]);
-  if (parameter.dimension == Dimension::none) return fmt::format("{:g}", *parameter.otherwise);
-  return fmt::format("{:g} {}", *parameter.otherwise, si_unit(parameter.dimension));
-}
-
-std::string help_of(const Parameter& parameter) {
-  std::string text(parameter.meaning);
-  if (parameter.dimension != Dimension::none)
-    text += fmt::format(", e.g. \"1.5 {0}\"; a bare number is in {0}", si_unit(parameter.dimension));
-  text += parameter.otherwise ? fmt::format(" [{}]", default_text(parameter)) : " (required)";
-  const std::string range = allowed_range(parameter);
-  return range.empty() ? text : fmt::format("{}; {}", text, range);
-}
-
 std::string help_of(const CurveParameter& curve) {
   return fmt::format("{}: a file with the columns \"{}\" (other units may stand there){}", curve.meaning,
                      curve_heading(curve), curve.required ? " (required)" : "");
@@ -132,8 +113,9 @@ void list_kinds() {
       table.add_row({option_name(parameter.key), default_text(parameter), allowed_range(parameter),
                      std::string(parameter.meaning)});
     for (const CurveParameter& curve : kind.curves)
-      table.add_row({option_name(curve.key), curve.required ? "required" : "none",
-                     fmt::format("a file: {}", curve_heading(curve)), std::string(curve.meaning)});
+      table.add_row({curve.is_target ? "--target-file" : option_name(curve.key), curve.required ? "required" : "none",
+                     fmt::format("a file: {}{}", curve_heading(curve), curve.is_target ? "; or --target by name" : ""),
+                     std::string(curve.meaning)});
     fmt::print("{}\n", table.text());
   }
 }
@@ -172,7 +154,10 @@ void add_kind(CLI::App& synth, const SyntheticKind& kind) {
   for (const Parameter& parameter : kind.method.parameters)
     command->add_option(option_name(parameter.key), options->values[std::string(parameter.key)], help_of(parameter));
   for (const CurveParameter& curve : kind.curves)
-    command->add_option(option_name(curve.key), options->values[std::string(curve.key)], help_of(curve));
+    if (curve.is_target)
+      add_synth_target_options(*command, options->target);
+    else
+      command->add_option(option_name(curve.key), options->values[std::string(curve.key)], help_of(curve));
   command->footer("Example:\n  " + example_of(kind));
   command->callback([options, &kind] { synthesize(kind, *options); });
 }

@@ -11,14 +11,12 @@ namespace pilotis {
 // How a motion was made: enough to make it again.
 struct SynthRecipe {
   const SyntheticKind* kind = nullptr;
-  std::vector<double> values;            // SI, in the order of the kind's parameters
-  std::vector<Curve> curves;             // in the order of the kind's tables
-  std::vector<std::string> curve_files;  // as typed; empty where not given
+  std::vector<double> values;              // SI, in the order of the kind's parameters
+  std::vector<Curve> curves;               // in the order of the kind's tables
+  std::vector<std::string> curve_options;  // how each is given on the command line; empty where not given
+  std::vector<std::string> notes;          // what the target is, one line
   SyntheticGrid grid;
 };
-
-// "--ground-period" for "ground_period".
-std::string option_name(std::string_view key);
 
 // The command that made the motion, every value written out.
 std::string command_line(const SynthRecipe& recipe);

@@ -4,7 +4,7 @@
 
 #include <sstream>
 
-#include "apps/quantity_text.hpp"
+#include "apps/typed_values.hpp"
 #include "core/error.hpp"
 #include "core/motion/spectra/response_spectrum.hpp"
 
@@ -26,13 +26,13 @@ std::vector<std::string> parts_of(const std::string& text, char separator) {
 
 std::vector<double> numbers_typed(const std::string& text, Dimension dimension, const std::string& where) {
   std::vector<double> numbers;
-  for (const std::string& part : parts_of(text, ',')) numbers.push_back(quantity_of(part, dimension, where));
+  for (const std::string& part : parts_of(text, ',')) numbers.push_back(typed_quantity(part, dimension, where));
   if (numbers.empty()) throw input_error(where, "found nothing", "at least one number is needed");
   return numbers;
 }
 
 int count_typed(const std::string& text, const std::string& where) {
-  const double number = quantity_of(text, Dimension::none, where);
+  const double number = typed_quantity(text, Dimension::none, where);
   if (number != static_cast<int>(number) || number < 2 || number > 1e6)
     throw input_error(where, fmt::format("found the count \"{}\"", text), "a whole number from 2 is needed");
   return static_cast<int>(number);
@@ -40,7 +40,8 @@ int count_typed(const std::string& text, const std::string& where) {
 
 double ratio_typed(const std::string& text, const std::string& where) {
   const bool percent = text.ends_with('%');
-  const double number = quantity_of(percent ? trimmed(text.substr(0, text.size() - 1)) : text, Dimension::none, where);
+  const double number =
+      typed_quantity(percent ? trimmed(text.substr(0, text.size() - 1)) : text, Dimension::none, where);
   const double ratio = percent ? number / 100 : number;
   if (!(ratio >= 0 && ratio < 1))
     throw input_error(where, fmt::format("found \"{}\"", text), "a ratio from 0 to below 1 is needed, 0.05 or 5%");
@@ -53,7 +54,7 @@ constexpr const char* inelastic_where = "motion --inelastic";
 void take_inelastic(InelasticRequest& request, const std::string& key, const std::string& value) {
   using Held = InelasticRequest::Held;
   const bool strength = key == "strength";
-  const double number = quantity_of(value, strength ? Dimension::acceleration : Dimension::none, inelastic_where);
+  const double number = typed_quantity(value, strength ? Dimension::acceleration : Dimension::none, inelastic_where);
   if (key == "post_yield_ratio") {
     request.post_yield_ratio = number;
     return;
@@ -96,7 +97,7 @@ std::vector<double> periods_typed(const std::string& text) {
   if (range.size() < 2) return numbers_typed(text, Dimension::time, where);
   if (range.size() != 3)
     throw input_error(where, fmt::format("found \"{}\"", text), "shortest:longest:count is needed, e.g. 0.05:4:80");
-  return period_grid(quantity_of(range[0], Dimension::time, where), quantity_of(range[1], Dimension::time, where),
+  return period_grid(typed_quantity(range[0], Dimension::time, where), typed_quantity(range[1], Dimension::time, where),
                      count_typed(range[2], where), where);
 }
 

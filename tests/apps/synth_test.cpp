@@ -100,7 +100,10 @@ TEST_F(Synth, WrongInputIsStatusTwoAndWritesNothing) {
                                 "ricker --amplitude 1 --frequency 1 --count 2 -o suite",
                                 "spectrum_compatible -o m.csv",
                                 "spectrum_compatible --target said -o m.csv",
-                                "spectrum_compatible --target none.csv -o m.csv",
+                                "spectrum_compatible --target-file said -o m.csv",
+                                "spectrum_compatible --target-file none.csv -o m.csv",
+                                "spectrum_compatible --target en_1998 --type 1 --ground B -o m.csv",
+                                "spectrum_compatible --target en_1998 --ag 3 --type 1 --ground B --to 5 -o m.csv",
                                 "kanai_tajimi --pga 3 -o no/such/m.csv",
                                 "unknown -o m.csv",
                                 ""}) {
@@ -109,9 +112,8 @@ TEST_F(Synth, WrongInputIsStatusTwoAndWritesNothing) {
   }
 }
 
-// Each example of the help, as typed; the one that needs a target finds it.
+// Each example of the help, as typed.
 TEST_F(Synth, EveryExampleOfTheHelpWorks) {
-  std::ofstream(path("spectrum.csv")) << "# invented\nperiod (s), acceleration (g)\n0.1, 0.5\n0.3, 0.6\n2, 0.1\n";
   ASSERT_EQ(synth("--help"), 0);
   const std::string help = text_of("said"), mark = "\n  pilotis synth ";
   std::size_t examples = 0;

@@ -45,7 +45,7 @@ std::string help_text() {
 
 // The first command of apps/commands.hpp that the help does not list; empty when all are there.
 std::string missing_command(const std::string& help) {
-  for (const char* name : {"check", "run", "modes", "motion", "synth", "verdict", "export"})
+  for (const char* name : {"check", "run", "modes", "motion", "synth", "fit", "verdict", "export"})
     if (help.find(std::string("\n  ") + name + " ") == std::string::npos) return name;
   return "";
 }

@@ -9,6 +9,7 @@
 #include <numbers>
 
 #include "core/error.hpp"
+#include "core/motion/spectra/signed_peaks.hpp"
 #include "core/motion/synthetic/baseline.hpp"
 
 namespace pilotis {
@@ -57,15 +58,25 @@ std::vector<Point> points_of(std::span<const MatchTarget> targets, const Acceler
   return points;
 }
 
-std::vector<OscillatorPeak> peaks_of(const Accelerogram& record, std::span<const MatchTarget> targets,
-                                     const SpectrumFunction& spectrum) {
-  std::vector<OscillatorPeak> peaks;
-  for (const MatchTarget& target : targets)
-    for (const OscillatorPeak& peak : spectrum(record, target.periods, target.damping)) peaks.push_back(peak);
+// The largest response of a matched oscillator.
+struct Peak {
+  double pseudo_acceleration = 0;  // omega^2 u with its sign, m/s2
+  double time = 0;                 // s
+};
+
+std::vector<Peak> peaks_of(const Accelerogram& record, const std::vector<Point>& points, const std::string& where) {
+  std::vector<Oscillator> oscillators;
+  for (const Point& point : points) oscillators.push_back({point.period, point.damping});
+  const std::vector<SignedPeak> displacements = signed_peaks(ground_of(record), oscillators, where);
+  std::vector<Peak> peaks;
+  for (std::size_t i = 0; i < points.size(); ++i) {
+    const double omega = 2 * std::numbers::pi / points[i].period;
+    peaks.push_back({omega * omega * displacements[i].displacement, displacements[i].time});
+  }
   return peaks;
 }
 
-double deviation_of(const std::vector<OscillatorPeak>& peaks, const std::vector<Point>& points) {
+double deviation_of(const std::vector<Peak>& peaks, const std::vector<Point>& points) {
   double deviation = 0;
   for (std::size_t i = 0; i < points.size(); ++i)
     deviation = std::max(deviation, std::abs(std::abs(peaks[i].pseudo_acceleration) / points[i].target - 1));
@@ -88,14 +99,14 @@ std::vector<double> response_weights(const Accelerogram& record, const Point& po
 }
 
 // Adds to `record` what brings each response at its peak's time to its target, as far as the response is linear.
-void add_wavelets(Accelerogram& record, const std::vector<Point>& points, const std::vector<OscillatorPeak>& peaks) {
+void add_wavelets(Accelerogram& record, const std::vector<Point>& points, const std::vector<Peak>& peaks) {
   const auto count = static_cast<Eigen::Index>(points.size());
   const auto samples = static_cast<Eigen::Index>(record.samples.size());
   Eigen::MatrixXd wavelets(samples, count), weights(samples, count);
   Eigen::VectorXd wanted(count);
   for (Eigen::Index j = 0; j < count; ++j) {
     const Point& point = points[static_cast<std::size_t>(j)];
-    const OscillatorPeak& peak = peaks[static_cast<std::size_t>(j)];
+    const Peak& peak = peaks[static_cast<std::size_t>(j)];
     const std::vector<double> wavelet = match_wavelet(record, point.period, point.damping, peak.time);
     const std::vector<double> weight = response_weights(record, point, peak.time);
     wavelets.col(j) = Eigen::Map<const Eigen::VectorXd>(wavelet.data(), samples);
@@ -143,7 +154,7 @@ std::vector<double> match_wavelet(const Accelerogram& record, double period, dou
 }
 
 Match matched(const Accelerogram& record, std::span<const MatchTarget> targets, const MatchSettings& settings,
-              const std::string& where, const SpectrumFunction& spectrum) {
+              const std::string& where) {
   validate(record, where);
   require_settings(settings, where);
   const std::vector<Point> points = points_of(targets, record, where);
@@ -151,7 +162,7 @@ Match matched(const Accelerogram& record, std::span<const MatchTarget> targets, 
   Match best;
   best.deviation = std::numeric_limits<double>::infinity();
   for (int iteration = 0;; ++iteration) {
-    const std::vector<OscillatorPeak> peaks = peaks_of(trial, targets, spectrum);
+    const std::vector<Peak> peaks = peaks_of(trial, points, where);
     const double deviation = deviation_of(peaks, points);
     if (deviation < best.deviation) best = {trial, deviation <= settings.tolerance, deviation, 0};
     best.iterations = iteration;

@@ -20,7 +20,6 @@
 #include <vector>
 
 #include "core/motion/accelerogram.hpp"
-#include "core/motion/synthetic/oscillator_peak.hpp"
 
 namespace pilotis {
 
@@ -43,11 +42,11 @@ struct Match {
   int iterations = 0;    // done
 };
 
-// The best of all iterations. `spectrum` answers as oscillator_peaks does, times included. Throws Error (input) at
-// `where` when the record or a target is not as described, or a period is shorter than two steps or longer than the
+// The best of all iterations; spectra are those of core/motion/spectra with their usual step rule. Throws Error (input)
+// at `where` when the record or a target is not as described, or a period is shorter than two steps or longer than the
 // record.
 Match matched(const Accelerogram& record, std::span<const MatchTarget> targets, const MatchSettings& settings,
-              const std::string& where, const SpectrumFunction& spectrum = oscillator_peaks);
+              const std::string& where);
 
 // w_j, with its velocity and displacement taken to zero, on the grid of `record`; `peak` is t_j, s.
 std::vector<double> match_wavelet(const Accelerogram& record, double period, double damping, double peak);

@@ -20,7 +20,7 @@ namespace pilotis {
 
 struct SelectionWish {
   std::size_t count = 0;                     // how many, at least 1
-  std::vector<double> deviation;             // sigma_p, [period], >= 0, of ln; empty: 0, motions as alike as can be
+  std::vector<double> deviation = {};        // sigma_p, [period], >= 0, of ln; empty: 0, motions as alike as can be
   double spread_weight = 1;                  // v, >= 0
   bool scale_each = true;                    // k_m of least squares; false: as they are
   double least_factor = 0, most_factor = 0;  // motions whose k_m lies outside are left out; most 0: no limit

@@ -14,7 +14,7 @@ Swing free_vibration(const Oscillator& oscillator, double q0, double rate) {
   if (angle <= 0) angle += std::numbers::pi;
   const double first =
       std::exp(-zeta / root * angle) * (q0 * std::cos(angle) + (rate + zeta * omega * q0) / damped * std::sin(angle));
-  return {first, -first * std::exp(-zeta / root * std::numbers::pi)};
+  return {first, -first * std::exp(-zeta / root * std::numbers::pi), angle / damped};
 }
 
 }  // namespace pilotis

@@ -12,6 +12,7 @@ namespace pilotis {
 
 struct Swing {
   double first, second;  // the first two extremes for t > 0, of opposite sign; 0, 0 when at rest
+  double first_at;       // s, when the first is
 };
 
 // q0 in any unit, rate = q0' in that unit per second. period > 0.

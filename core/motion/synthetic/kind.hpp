@@ -25,6 +25,7 @@ struct CurveParameter {
   Dimension x = Dimension::none, y = Dimension::none;
   std::string_view meaning;  // one line
   bool required = true;
+  bool is_target = false;  // a target spectrum: may also be one of core/motion/target by name
 };
 
 struct SyntheticKind {

@@ -10,6 +10,7 @@
 
 #include "core/error.hpp"
 #include "core/motion/fft.hpp"
+#include "core/motion/spectra/response_spectrum.hpp"
 #include "core/motion/synthetic/baseline.hpp"
 #include "core/motion/synthetic/curve.hpp"
 #include "core/motion/synthetic/envelope.hpp"
@@ -47,12 +48,16 @@ std::vector<double> density_of_target(const Curve& target, double damping, doubl
   return density;
 }
 
+std::vector<double> target_grid(double shortest, double longest) {
+  return period_grid(shortest, longest, 100, "target spectrum");
+}
+
 namespace spectrum_compatible {
 
 namespace {
 
 constexpr CurveParameter curves[] = {{"target", "period", "acceleration", Dimension::time, Dimension::acceleration,
-                                      "target spectrum, pseudo-acceleration over period"}};
+                                      "target spectrum, pseudo-acceleration over period", true, true}};
 constexpr std::array<Parameter, 4> own_parameters{{
     damping_ratio("damping", "damping ratio of the target spectrum", 0.05),
     {.key = "tolerance",
@@ -138,19 +143,22 @@ struct Trial {
 };
 
 Trial tried(const Sinusoids& sinusoids, const std::vector<double>& envelope, const SyntheticInput& input,
-            const std::vector<double>& periods, const SpectrumFunction& spectrum) {
+            const std::vector<double>& periods) {
   Trial trial;
   trial.motion.record.step = input.grid.step;
   std::vector<double>& samples = trial.motion.record.samples = sinusoids.sum();
   for (std::size_t i = 0; i < samples.size(); ++i) samples[i] *= envelope[i];
   trial.motion.notes = {correct_baseline(samples, envelope)};
-  const std::vector<OscillatorPeak> peaks = spectrum(trial.motion.record, periods, input["damping"]);
+  const double damping = input["damping"];
+  const std::vector<double> spectrum =
+      response_spectrum(ground_of(trial.motion.record), periods, {&damping, 1}, input.where)
+          .curves.front()
+          .pseudo_acceleration;
   trial.ratio.x = periods;
   for (std::size_t i = 0; i < periods.size(); ++i) {
     const double target = log_log(input.curve("target"), periods[i]);
-    const double reached = std::abs(peaks[i].pseudo_acceleration);
-    trial.ratio.y.push_back(target / reached);
-    const double deviation = std::abs(reached / target - 1);
+    trial.ratio.y.push_back(target / spectrum[i]);
+    const double deviation = std::abs(spectrum[i] / target - 1);
     if (deviation > trial.deviation) trial.worst = periods[i];
     trial.deviation = std::max(trial.deviation, deviation);
   }
@@ -161,19 +169,19 @@ Trial tried(const Sinusoids& sinusoids, const std::vector<double>& envelope, con
 
 const SyntheticKind kind{
     {"spectrum_compatible", "sinusoids iterated onto a target response spectrum (Gasparini, Vanmarcke)", parameters},
-    " --target spectrum.csv",
+    " --target en_1998 --ag \"0.25 g\" --type 1 --ground B",
     curves};
 
 namespace {
 
 // The best of one set of phases, iterated as far as the tolerance or the number of iterations allows.
 Trial iterated(Sinusoids sinusoids, const std::vector<double>& envelope, const SyntheticInput& input,
-               const std::vector<double>& periods, const SpectrumFunction& spectrum) {
-  Trial trial = tried(sinusoids, envelope, input, periods, spectrum);
+               const std::vector<double>& periods) {
+  Trial trial = tried(sinusoids, envelope, input, periods);
   Trial best = trial;
   for (int i = 0; best.deviation > input["tolerance"] && i < input["iterations"]; ++i) {
     sinusoids.multiply(trial.ratio);
-    trial = tried(sinusoids, envelope, input, periods, spectrum);
+    trial = tried(sinusoids, envelope, input, periods);
     if (trial.deviation < best.deviation) best = trial;
   }
   return best;
@@ -181,18 +189,18 @@ Trial iterated(Sinusoids sinusoids, const std::vector<double>& envelope, const S
 
 }  // namespace
 
-MadeMotion make_with(const SyntheticInput& input, const SpectrumFunction& spectrum) {
+MadeMotion make(const SyntheticInput& input) {
   require_fitting_grid(input);
   const std::vector<double> envelope = sampled(envelope_of(input), input);
   const Curve& target = input.curve("target");
-  const std::vector<double> periods = equal_ratios(target.x.front(), target.x.back(), 100);
+  const std::vector<double> periods = target_grid(target.x.front(), target.x.back());
   const double strong = integral_of_square(envelope, input.grid.step);
   NormalNumbers numbers(input.grid.seed);
   Trial best;
   best.deviation = std::numeric_limits<double>::infinity();
   int draw = 0;
   for (; best.deviation > input["tolerance"] && draw < input["draws"]; ++draw) {
-    Trial trial = iterated(Sinusoids(input, strong, numbers), envelope, input, periods, spectrum);
+    Trial trial = iterated(Sinusoids(input, strong, numbers), envelope, input, periods);
     if (trial.deviation < best.deviation) best = std::move(trial);
   }
   if (best.deviation > input["tolerance"])
@@ -205,8 +213,6 @@ MadeMotion make_with(const SyntheticInput& input, const SpectrumFunction& spectr
                                           100 * best.deviation, target.x.front(), target.x.back(), draw));
   return best.motion;
 }
-
-MadeMotion make(const SyntheticInput& input) { return make_with(input, oscillator_peaks); }
 
 }  // namespace spectrum_compatible
 

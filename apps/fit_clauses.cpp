@@ -17,7 +17,6 @@ namespace pilotis {
 namespace {
 
 constexpr double code_damping = 0.05;
-constexpr int periods_checked = 200;
 
 double positive_period(const std::string& text, const std::string& where) {
   const double period = typed_quantity(text, Dimension::time, where);
@@ -35,7 +34,7 @@ CodeCheck en_1998_check(const TypedCode& typed, const TypedTarget& target, bool 
   suite.kind =
       typed.accelerograms == "artificial" ? AccelerogramKind::artificial : AccelerogramKind::recorded_or_simulated;
   const double T1 = suite.fundamental_period;
-  return {period_grid(0.2 * T1, 2 * T1, periods_checked, command + " --period"),
+  return {period_grid(0.2 * T1, 2 * T1, checked_periods, command + " --period"),
           [code, suite, command](const SuiteSpectra& spectra, const std::vector<double>& peaks) mutable {
             suite.spectra = spectra;
             suite.peak_accelerations = peaks;
@@ -69,7 +68,7 @@ CodeCheck asce_7_16_check(const TypedCode& typed, const TypedTarget& target, dou
   suite.first_period_y = positive_period(typed.periods.back(), command + " --period");
   if (!typed.mass_period.empty())
     suite.period_of_90_percent_mass = positive_period(typed.mass_period, command + " --mass-period");
-  return {period_grid(from, to, periods_checked, command + " --from"),
+  return {period_grid(from, to, checked_periods, command + " --from"),
           [suite, code = mcer_of(target, command), command](const SuiteSpectra& spectra,
                                                             const std::vector<double>&) mutable {
             suite.maximum_direction = spectra;

@@ -34,6 +34,10 @@ struct CodeCheck {
   CodeFindings findings;
 };
 
+// Periods in equal ratios over a code's range. A fit takes as many where it is not told otherwise, so that over one and
+// the same range a mean that is lifted to a share of the target is found there.
+constexpr int checked_periods = 200;
+
 // `from`, `to`: s, the range of the fit. `pairs`: motions are pairs of components. Throws Error (input) when what the
 // code needs is missing: before anything is computed.
 CodeCheck code_check(const TypedCode& typed, const TypedTarget& target, double from, double to, bool pairs,

@@ -36,12 +36,11 @@ RecordHints hints_of(const FitOptions& options) {
 }
 
 std::vector<double> fitted_periods(double from, double to, const FitOptions& options) {
-  constexpr int usual = 100;
   constexpr double usual_per_decade = 30;  // of matched periods; between them the spectrum is free
   int count = options.periods;
   if (count == 0 && options.matching && to > from && from > 0)
     count = 1 + static_cast<int>(std::ceil(usual_per_decade * std::log10(to / from)));
-  return period_grid(from, to, count > 0 ? count : usual, options.command + " --from");
+  return period_grid(from, to, count > 0 ? count : checked_periods, options.command + " --from");
 }
 
 // For the picture: from half the range's begin to twice its end.
@@ -66,7 +65,7 @@ void add_fit_options(CLI::App& command, FitOptions& options) {
   command.add_option("--to", options.to, "longest period of the fit; a bare number is in s [2 times --period]");
   command
       .add_option("--periods", options.periods,
-                  fmt::format("how many periods in equal ratios [{}]", matching ? "30 a decade" : "100"))
+                  fmt::format("how many periods in equal ratios [{}]", matching ? "30 a decade" : "200"))
       ->check(CLI::Range(2, 10000));
   command.add_option("--units", options.units, "acceleration unit of records that do not say, e.g. g");
   command.add_option("--step", options.step, "time step of records that do not say; a bare number is in s");

@@ -28,8 +28,8 @@ std::vector<double> target_values(const Method& target, const TypedTarget& typed
                                   std::string_view command);
 
 // `damping`: fraction of critical, of the spectrum that is wanted. Throws Error (input) when neither or both are given,
-// a number is missing, a parameter is given that the target does not take, or a code has its spectrum for another
-// damping only.
+// a number is missing, or a code has its spectrum for another damping only. Numbers of other targets are left alone: a
+// code that is checked may need them.
 TargetSpectrum target_of(const TypedTarget& typed, double damping, std::string_view command);
 
 // The options that give the same target again, with every number written out; without --damping.

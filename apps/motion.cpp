@@ -23,6 +23,7 @@ struct Options {
   std::vector<std::string> files;
   std::string measures = "all", periods, damping = "0.05", inelastic;  // as typed
   std::string unit, step, first_sample_at;                             // of records that do not say
+  std::string component;                                               // of files that hold several; empty: all
   std::string csv, svg;                                                // files
   bool list = false, spectrum = false, histories = false, fourier = false, rotd = false;
   bool plot = false, no_plot = false, json = false, quiet = false;
@@ -35,6 +36,7 @@ RecordHints hints_of(const Options& options) {
     si_factor(options.unit, Dimension::acceleration, "motion --units");
     hints.unit = options.unit;
   }
+  if (!options.component.empty()) hints.component = options.component;
   if (!options.step.empty()) hints.step = typed_quantity(options.step, Dimension::time, "motion --step");
   if (hints.step && !(*hints.step > 0))
     throw input_error("motion --step", fmt::format("found \"{}\"", options.step), "a time above 0 is needed");
@@ -153,7 +155,10 @@ void add_options(CLI::App& command, Options& options) {
   command.add_option("--inelastic", options.inelastic,
                      "spectrum of the bilinear oscillator: ductility=4, strength=\"0.2 g\" (yield force over mass) or "
                      "strength_ratio=0.25 (of the elastic strength); ,post_yield_ratio=0.03 may follow [0]");
-  command.add_flag("--rotd", options.rotd, "RotD50 and RotD100 of two horizontal components, each a file");
+  command.add_option("--component", options.component,
+                     "name, azimuth or number of the component, where a file holds several; all unless given");
+  command.add_flag("--rotd", options.rotd,
+                   "RotD50 and RotD100 of two horizontal components: two files, or one that holds two");
   command.add_flag("--fourier", options.fourier, "Fourier amplitude spectrum: in pictures, --csv and --json");
   command.add_flag("--histories", options.histories, "acceleration, velocity and displacement into --csv and --json");
   command.add_flag("--plot", options.plot, "pictures on the screen, of several records too");

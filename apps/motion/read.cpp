@@ -11,6 +11,7 @@ namespace pilotis {
 
 std::vector<ReadComponent> components_of(const std::string& file, const RecordHints& hints) {
   FileOfRecords read = read_record_file(file, hints);
+  if (hints.component) read.components = {chosen_component(read, hints.component, file)};
   std::vector<ReadComponent> components;
   for (RecordComponent& one : read.components) {
     std::vector<std::string> notes = components.empty() ? read.notes : std::vector<std::string>{};

@@ -17,7 +17,7 @@ struct ReadComponent {
   Accelerogram record;             // m/s2
 };
 
-// All components of a file in its order. Throws Error.
+// All components of a file in its order, or the one that hints.component names. Throws Error.
 std::vector<ReadComponent> components_of(const std::string& file, const RecordHints& hints);
 
 // The files that paths and patterns mean, each once, in the order typed. A path without a file, and a pattern without a

@@ -1,7 +1,7 @@
 #!/bin/bash
-# Installs what the tests need from Debian 12, builds, runs every test; then those of the libraries that are not about
-# numbers alone once more, with AddressSanitizer and UndefinedBehaviorSanitizer. The last line is "N passed, N failed"; the
-# exit status is not 0 when anything failed.
+# Installs what the tests need from Debian 12, builds, runs every test. With the argument "sanitize" it builds the
+# libraries with AddressSanitizer and UndefinedBehaviorSanitizer instead, and runs those of their tests that are not about
+# numbers alone. The last line is "N passed, N failed"; the exit status is not 0 when anything failed.
 set -uo pipefail
 cd "$(dirname "${BASH_SOURCE[0]}")/.."
 source apps/packages.sh
@@ -41,12 +41,13 @@ check() {
   echo "$folder: $good passed, $lost failed, $skipped skipped"
 }
 
-if install_packages "${build_packages[@]}" "${test_packages[@]}"; then
-  check build -DCMAKE_BUILD_TYPE=Release
+if ! install_packages "${build_packages[@]}" "${test_packages[@]}"; then
+  failed=1
+elif [ "${1:-}" = sanitize ]; then
   # Debug keeps the assertions of Eigen and of the standard library's callers awake.
   check build-sanitize -DCMAKE_BUILD_TYPE=Debug -DPILOTIS_SANITIZE=ON -DPILOTIS_PROGRAM=OFF
 else
-  failed=1
+  check build -DCMAKE_BUILD_TYPE=Release
 fi
 echo "$passed passed, $failed failed"
 [ "$failed" -eq 0 ]

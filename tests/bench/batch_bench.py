@@ -32,9 +32,11 @@ def record():
     return [0.1 * draw.gauss(0, 1) for _ in range(1559)]
 
 
-def write_study(folder, factors, stories=STORIES, duration=DURATION, keep="histories = \"none\"", check="false", samples=None):
+def write_study(folder, factors, motions=1, stories=STORIES, duration=DURATION, keep="histories = \"none\"", check="false", samples=None):
     folder.mkdir(parents=True, exist_ok=True)
-    (folder / "motion.csv").write_text("\n".join(f"{a:.6f}" for a in (samples or record())) + "\n")
+    for i in range(motions):
+        text = "\n".join(f"{a * (1 + i / 1000):.6f}" for a in (samples or record())) + "\n"
+        (folder / f"motion-{i:04}.csv").write_text(text)
     tables = "".join(f"""[[story]]
 height = "3.5 m"
 mass = "400 t"
@@ -50,7 +52,7 @@ kind = "stick"
 damping = {{ kind = "rayleigh", mass_factor = 0.2, stiffness_factor = 0.002 }}
 {tables}
 [suite]
-motions = ["motion.csv"]
+motions = ["motion-*.csv"]
 units = "g"
 step = 0.02
 factors = {factors}
@@ -159,9 +161,9 @@ def scaling(folder):
 
 def memory(folder):
     peaks = {}
-    for runs in (1000, 100000):
-        study = write_study(folder / f"memory-{runs}", [round(0.1 + i / runs, 7) for i in range(runs)], duration=0.5,
-                            samples=record()[:25])
+    for runs, motions in ((1000, 10), (100000, 100)):
+        factors = [round(0.1 + i * motions / runs, 7) for i in range(runs // motions)]
+        study = write_study(folder / f"memory-{runs}", factors, motions=motions, duration=0.5, samples=record()[:25])
         done = subprocess.run(["/usr/bin/time", "-f", "%M", PROGRAM, "run", str(study), "-o",
                                str(folder / f"memory-{runs}.h5"), "-q"], capture_output=True, text=True)
         assert done.returncode in (0, 1), done.stderr

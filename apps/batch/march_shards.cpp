@@ -2,7 +2,6 @@
 
 #include <oneapi/tbb/global_control.h>
 #include <oneapi/tbb/task_arena.h>
-#include <oneapi/tbb/task_group.h>
 
 #include <chrono>
 #include <condition_variable>
@@ -140,12 +139,10 @@ bool march_shards(const BatchPlan& plan, const std::vector<std::size_t>& missing
   namespace tbb = oneapi::tbb;
   const tbb::global_control limit(tbb::global_control::max_allowed_parallelism, static_cast<std::size_t>(threads) + 1);
   tbb::task_arena arena(threads, 0);  // no place kept for the calling thread: it keeps, they march
-  tbb::task_group group;
   Crew crew(plan, missing, job, threads);
   crew.belt().workers_come(threads);
-  for (int i = 0; i < threads; ++i) arena.execute([&] { group.run([&] { crew.work(); }); });
-  crew.keep_all(calls);
-  arena.execute([&] { group.wait(); });
+  for (int i = 0; i < threads; ++i) arena.enqueue([&] { crew.work(); });  // each by a thread of its own
+  crew.keep_all(calls);                                                   // until all of them have left
   crew.rethrow();
   return !crew.stopped();
 }

@@ -15,6 +15,8 @@ namespace {
 constexpr double shard_story_steps = 4e7;
 constexpr double shard_peak_bytes = 1 << 20, shard_history_bytes = 32 << 20;
 constexpr double peak_bytes_of_a_story = 600;  // ten peaks with time and error, kept twice while the errors are told
+// Writing a shard takes some hundredths of a second whatever is in it: less work than this is not worth it.
+constexpr double least_story_steps = 5e6;
 // Enough shards that many workers end together, but none with fewer runs than the widest pack has lanes.
 constexpr std::size_t shards_wanted = 64, smallest_shard = 8;
 // Below both of these a study is over in seconds and its results fit in memory.
@@ -67,13 +69,14 @@ std::size_t run_count(const Study& study) {
 
 BatchPlan::BatchPlan(const Study& study) : study_(study) {
   for (const StudyBuilding& building : study.buildings) buildings_.push_back(prepared(study, building));
+  std::vector<Work> works;
   for (std::size_t i = 0; i < buildings_.size(); ++i) {
-    const Work work = work_of(i);
+    works.push_back(work_of(i));
     const auto factors = static_cast<double>(study.factors.size());
-    story_steps_ += factors * work.story_steps;
-    history_bytes_ += factors * work.history_bytes;
-    cut(i, work);
+    story_steps_ += factors * works.back().story_steps;
+    history_bytes_ += factors * works.back().history_bytes;
   }
+  for (std::size_t i = 0; i < buildings_.size(); ++i) cut(i, works[i]);
 }
 
 std::vector<BuildingSummary> BatchPlan::summaries() const {
@@ -122,7 +125,8 @@ void BatchPlan::cut(std::size_t building, const Work& work) {
   const double by_memory = std::min(shard_peak_bytes / (peak_bytes_of_a_story * stories),
                                     shard_history_bytes / std::max(1.0, work.history_bytes / motions));
   const double by_number = static_cast<double>(this->runs()) / static_cast<double>(shards_wanted);
-  const double wanted = std::max(std::min(by_work, by_number), static_cast<double>(smallest_shard));
+  const double least = story_steps_ > short_story_steps ? least_story_steps / per_run : 0;
+  const double wanted = std::max({std::min(by_work, by_number), least, static_cast<double>(smallest_shard)});
   auto size = static_cast<std::size_t>(std::max(1.0, std::min(wanted, by_memory)));
   if (size > smallest_shard) size -= size % smallest_shard;
   for (std::size_t first = 0; first < runs; first += size)

@@ -8,7 +8,7 @@ build_packages=(
 test_packages=(
   libgtest-dev libgmock-dev libbenchmark-dev librapidcheck-dev libsundials-dev
   python3 python3-h5py python3-xarray python3-h5netcdf python3-netcdf4 python3-scipy
-  clang-format openmpi-bin libopenmpi-dev
+  clang-format openmpi-bin libopenmpi-dev procps
 )
 
 # Prints the packages among the arguments that are not installed.
